@@ -1,0 +1,4 @@
+/** base: results, assertions and ids. Imports nothing; knows no radio, no worksheet and no page. */
+export * from './result';
+export * from './assert';
+export * from './ids';

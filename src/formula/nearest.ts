@@ -1,0 +1,33 @@
+/** The nearest known name to a mistyped one, for findings. */
+
+/** The candidate within a few keystrokes of `name`, case apart; undefined when none is close. */
+export function nearestName(name: string, candidates: Iterable<string>): string | undefined {
+  const wanted = name.toLowerCase();
+  const allowed = Math.max(1, Math.floor(name.length / 3));
+  let best: string | undefined;
+  let bestDistance = allowed + 1;
+  for (const candidate of candidates) {
+    if (Math.abs(candidate.length - name.length) > allowed) continue;
+    const distance = editDistance(wanted, candidate.toLowerCase(), bestDistance);
+    if (distance < bestDistance) {
+      best = candidate;
+      bestDistance = distance;
+    }
+  }
+  return best;
+}
+
+/** Insertions, removals and replacements that turn `a` into `b`, counted up to `limit`. */
+function editDistance(a: string, b: string, limit: number): number {
+  let previous = Array.from({ length: b.length + 1 }, (_, index) => index);
+  for (let i = 1; i <= a.length; i++) {
+    const current = [i];
+    for (let j = 1; j <= b.length; j++) {
+      const replaced = (previous[j - 1] ?? 0) + (a[i - 1] === b[j - 1] ? 0 : 1);
+      current.push(Math.min(replaced, (previous[j] ?? 0) + 1, (current[j - 1] ?? 0) + 1));
+    }
+    if (Math.min(...current) > limit) return limit + 1;
+    previous = current;
+  }
+  return previous[b.length] ?? limit + 1;
+}
