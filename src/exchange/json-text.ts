@@ -8,7 +8,7 @@ import { fail, ok, type Result } from '../base';
 
 /** Why a text is refused. `path` is the place in the document, as in `sections[1].lines[3].entry`. */
 export interface JsonFault {
-  readonly code: 'bad-json' | 'nested-too-deeply' | 'key-given-twice' | 'refused-key';
+  readonly code: 'bad-json' | 'number-too-large' | 'nested-too-deeply' | 'key-given-twice' | 'refused-key';
   readonly path: string;
   readonly sentence: string;
 }
@@ -124,7 +124,7 @@ class Checker {
     const number = NUMBER.exec(this.#text)?.[0];
     if (number === undefined) return this.#bad('a value');
     if (!Number.isFinite(Number(number)))
-      return this.#fault('bad-json', 'This number is too large to be kept; write it as text.', this.#at);
+      return this.#fault('number-too-large', 'This number is too large to be kept; write it as text.', this.#at);
     this.#at += number.length;
     return undefined;
   }
@@ -162,7 +162,10 @@ class Checker {
   }
 
   #bad(expected: string): JsonFault {
-    const found = this.#at < this.#text.length ? `“${this.#text.charAt(this.#at)}”` : 'the end of the text';
+    const found =
+      this.#at < this.#text.length
+        ? `“${String.fromCodePoint(this.#text.codePointAt(this.#at) ?? 0)}”`
+        : 'the end of the text';
     return this.#fault('bad-json', `${expected} is expected, ${found} found.`, this.#at);
   }
 

@@ -91,7 +91,7 @@ export function checkSymbol(tree: SymbolTree, context: Context): Checked {
   }
   const info = context.scope.find(tree.name);
   if (info === undefined) {
-    const nearest = nearestName(tree.name, [...context.scope.names(), ...CONSTANTS.map(({ name }) => name)]);
+    const nearest = nearestName(tree.name, [...context.allNames(), ...CONSTANTS.map(({ name }) => name)]);
     return context.stop('unknown-symbol', tree, {
       facts: { what: 'The symbol', name: tree.name, ...(nearest === undefined ? {} : { nearest }) },
       repairs: nearest === undefined ? [] : [context.rewrite(tree, nearest)],

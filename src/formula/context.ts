@@ -7,6 +7,8 @@ import type { Tree } from './tree';
 
 export class Context {
   readonly remarks: Remark[] = [];
+  /** True when findings looked at lines other than those used: they may change when any line does. */
+  looksAround = false;
   /** Symbols of lines that have no type because of their own errors. */
   readonly waitsFor: string[] = [];
 
@@ -58,8 +60,20 @@ export class Context {
     return (named ?? (lines.length === 1 ? lines[0] : undefined))?.symbol;
   }
 
+  /** Every line that has a type. */
+  allLines(): SymbolInfo[] {
+    this.looksAround = true;
+    return [...this.scope.all()];
+  }
+
+  /** Every symbol there is, for the nearest to a mistyped one. */
+  allNames(): string[] {
+    this.looksAround = true;
+    return [...this.scope.names()];
+  }
+
   private linesOf(dimension: Dimension): SymbolInfo[] {
-    return [...this.scope.all()].filter(
+    return this.allLines().filter(
       ({ unit }) => unit.form !== 'rate' && sameDimension(unit.dimension, dimension),
     );
   }

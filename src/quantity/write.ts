@@ -15,6 +15,8 @@ export interface WritingOptions {
   readonly digits?: number;
   /** Significant figures that a person typed: a linear literal shows at least these. */
   readonly typedDigits?: number;
+  /** True when nobody chose the unit: a base unit then takes an SI prefix. */
+  readonly isFitted?: boolean;
   /** How a minus sign is written; the typographic one by default. */
   readonly minus?: '-' | '−';
 }
@@ -27,6 +29,10 @@ export function writeFigure(value: number, unit: Unit, options: WritingOptions =
   const word = unit.word === '1' ? '' : unit.word;
   if (value === -Infinity) return { text: NO_POWER_TEXT, unit: '' };
   if (unit.form !== 'linear') return { text: withMinus(value.toFixed(options.digits ?? 2), options), unit: word };
+  if (options.isFitted === true && unit.form === 'linear' && unit.factor === 1 && unit.shift === 0 && word !== '') {
+    const prefixed = withPrefix(value, word, options.digits);
+    return { text: withMinus(prefixed.text, options), unit: prefixed.unit };
+  }
   const significant = Math.max(options.digits ?? 4, options.digits === undefined ? Math.min(options.typedDigits ?? 0, 15) : 0);
   return { text: withMinus(writeSignificant(value, significant), options), unit: word };
 }
@@ -119,12 +125,12 @@ export function linearFigure(value: number, unit: Unit): WrittenFigure | undefin
 }
 
 /** A value in a base unit with the SI prefix that leaves one to three digits before the point. */
-export function withPrefix(value: number, baseWord: string): WrittenFigure {
-  if (value === 0 || !Number.isFinite(value)) return { text: writeSignificant(value), unit: baseWord };
-  const rounded = Number(value.toPrecision(4));
+export function withPrefix(value: number, baseWord: string, significant = 4): WrittenFigure {
+  if (value === 0 || !Number.isFinite(value)) return { text: writeSignificant(value, significant), unit: baseWord };
+  const rounded = Number(value.toPrecision(significant));
   const exponent = Math.floor(Math.log10(Math.abs(rounded)) / 3) * 3;
   const prefix = SI_PREFIXES.find(([, power]) => power === exponent);
   const word = prefix === undefined ? undefined : prefix[0] + baseWord;
-  if (prefix === undefined || word === undefined || findUnit(word) === undefined) return { text: writeSignificant(value), unit: baseWord };
-  return { text: writeSignificant(value / Number(`1e${String(prefix[1])}`)), unit: word };
+  if (prefix === undefined || word === undefined || findUnit(word) === undefined) return { text: writeSignificant(value, significant), unit: baseWord };
+  return { text: writeSignificant(value / Number(`1e${String(prefix[1])}`), significant), unit: word };
 }

@@ -92,6 +92,14 @@ export async function openDatabase(database: Database, patienceMs: number): Prom
   }
 }
 
+/**
+ * Lets the next use open the database again after a reopening that failed, for instance on a full disk: Dexie by itself
+ * would answer with that failure until the page is reloaded.
+ */
+export function reviveConnection({ dexie }: Database): void {
+  if (dexie.hasFailed()) dexie.close({ disableAutoOpen: false });
+}
+
 // Dexie numbers the browser's database in tenths of its own versions.
 const browserVersionsPerVersion = 10;
 
@@ -101,8 +109,9 @@ export function tablesAreNewer(database: Database): boolean {
 }
 
 /**
- * Runs `work` in one transaction; resolves when it is committed. Rejects as soon as the transaction aborts: with a full
- * disk a single request inside it may never answer at all.
+ * Runs `work` in one transaction; resolves when it is committed. Rejects as soon as the transaction aborts, since a
+ * single request inside it may then never answer at all, and with the transaction's own reason where it has one: the
+ * requests that an abort takes with it only say that they were aborted.
  */
 export function transact<T>(
   database: Database,
@@ -111,18 +120,23 @@ export function transact<T>(
   work: () => Promise<T>,
 ): Promise<T> {
   return new Promise((resolve, reject) => {
+    let reason = (): Error | null => null;
     database.dexie
       .transaction(
         mode,
         tables.map((table) => table.name),
         async (transaction) => {
+          reason = () => transaction.idbtrans.error;
           transaction.on('abort', () => {
-            // Null when Dexie aborted after a request's own error, which then rejects the promise below.
-            if (transaction.idbtrans.error !== null) reject(transaction.idbtrans.error);
+            // Null when Dexie aborted after an error that then rejects the promise below.
+            const error = reason();
+            if (error !== null) reject(error);
           });
           return work();
         },
       )
-      .then(resolve, reject);
+      .then(resolve, (error: unknown) =>
+        reject(reason() ?? (error instanceof Error ? error : new Error(String(error)))),
+      );
   });
 }

@@ -55,7 +55,8 @@ export async function openStore(options: OpenOptions): Promise<Result<Store, Pla
   const opened = await openDatabase(database, options.patienceMs ?? defaultPatienceMs);
   if (!opened.ok) return fail(opened.fault);
   dexie.on('close', () => {
-    if (!store.closed) tell('closed');
+    // Not when the store closes itself, and not when there was no connection to lose.
+    if (!store.closed && dexie.isOpen()) tell('closed');
   });
   // Any other fault of this housekeeping is no reason to refuse the store: the next opening tries again.
   const purged = await store.purgeExpired();

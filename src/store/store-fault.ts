@@ -40,8 +40,8 @@ const sentences: Readonly<Record<PlainFault['code'], string>> = {
     'This browser gives the page no storage (a private window or its settings may forbid it), so nothing is kept here. ' +
     'Save your worksheet as a file, and reload the page to try again.',
   quota:
-    'There is no room left in the browser’s storage. The last saved version is whole, but your latest edits are not in it. ' +
-    'Save the worksheet as a file, then free room (empty the trash, delete worksheets) and try again.',
+    'There is no room left in the browser’s storage or on the disk. The last saved version is whole, but your latest ' +
+    'edits are not in it. Save the worksheet as a file, free room (purge worksheets in the trash, delete files) and try again.',
   blocked:
     'Another tab keeps an older version of the page open and the storage cannot be opened beside it. ' +
     'Close the other tabs of this page and try again.',
@@ -106,13 +106,19 @@ function causes(error: unknown): { readonly name: string; readonly message: stri
   return found;
 }
 
+/**
+ * What Chromium says when the disk, and not only the page's share of it, is full (seen with version 156): a large text
+ * fails with a DataError, a small one with an UnknownError that also closes the connection.
+ */
+const fullDisk = /Failed to write blobs|FILE_ERROR_NO_SPACE/;
+
 /** The fault that an error thrown by the database stands for. The outermost error often hides the reason, so all are asked. */
 export function faultFrom(error: unknown): StoreFault {
   const chain = causes(error);
   const detail =
     chain.length === 0 ? String(error) : chain.map(({ name, message }) => `${name}: ${message}`).join(' < ');
   const named = (...names: string[]): boolean => chain.some(({ name }) => names.includes(name));
-  if (named('QuotaExceededError')) return plainFault('quota', detail);
+  if (named('QuotaExceededError') || fullDisk.test(detail)) return plainFault('quota', detail);
   if (named('NotReadableError', 'DataError')) return unreadableFault(null);
   if (named('MissingAPIError', 'SecurityError', 'OpenFailedError', 'DatabaseClosedError')) {
     return plainFault('unavailable', detail);

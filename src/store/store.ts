@@ -9,7 +9,7 @@ import type { Table } from 'dexie';
 import { fail, ok } from '../base';
 import type { Result } from '../base';
 
-import { tablesAreNewer, transact } from './database';
+import { reviveConnection, tablesAreNewer, transact } from './database';
 import type { Database } from './database';
 import { copyOf, entryOf, settingOf, textOf } from './records';
 import type {
@@ -213,6 +213,7 @@ export class Store {
   /** Every operation goes through here: it counts as running until it is settled, and its errors become faults. */
   #attempt<T>(work: () => Promise<Answer<T>>): Promise<Answer<T>> {
     if (this.#refusal !== null) return Promise.resolve(fail(this.#refusal));
+    reviveConnection(this.#database);
     const running = work()
       .catch((error: unknown) => fail(faultFrom(error)))
       .finally(() => this.#running.delete(running));

@@ -7,7 +7,7 @@ import type { Case, Line, Section, Worksheet } from './document';
 import { Draft } from './draft';
 
 /** A field of a line that a change may set. */
-export type LineField = Exclude<keyof Line & string, 'id'>;
+export type LineField = Exclude<keyof Line, 'id'>;
 
 type SetLineField = {
   [Field in LineField]-?: {

@@ -26,8 +26,7 @@ export interface Tolerance {
 
 /** A bound on a line, as typed text with a unit. */
 export type Requirement =
-  | { readonly atLeast: string; readonly atMost?: never }
-  | { readonly atMost: string; readonly atLeast?: never };
+  { readonly atLeast: string; readonly atMost?: never } | { readonly atMost: string; readonly atLeast?: never };
 
 /** A finding that a person has answered with a reason; it holds while the entry stays what it was. */
 export interface AcceptedFinding {

@@ -7,34 +7,35 @@ import { assert, present, unreachable } from '../base';
 import type { Change, LineField, SetLine } from './changes';
 import { isLinesSection, type Case, type Line, type LinesSection, type Section, type Worksheet } from './document';
 import { CASE_KEYS, LINE_KEYS, WORKSHEET_KEYS, withKey } from './keys';
-import { handOnIndex, lineIndexOf, type LineIndex } from './line-index';
+import { handOnIndex, placeOfLine } from './line-index';
 
 const NEEDED: ReadonlySet<LineField> = new Set(['symbol', 'label', 'entry']);
 
 /** A worksheet to which changes are applied one after the other. Not to be used after `finish`. */
 export class Draft {
   readonly #base: Worksheet;
-  readonly #index: LineIndex;
   #worksheet: Worksheet;
   #sections: Section[] | undefined;
   /** Lists of lines that this draft may write to, by section id. */
   readonly #ownLines = new Map<string, Line[]>();
-  /** Lines that this draft put into a section other than the index says; null: taken out. */
+  /** For lines that this draft moved: the section they are in now; null: taken out. */
   readonly #whereabouts = new Map<string, string | null>();
-  /** For sections whose lines no longer stand where the index says: the place last touched, where a search begins. */
+  /** For sections whose lines no longer stand where they stood: the place last touched, where a search begins. */
   readonly #lastTouched = new Map<string, number>();
-  #areLinesPut = true;
 
   constructor(worksheet: Worksheet) {
     this.#base = worksheet;
     this.#worksheet = worksheet;
-    this.#index = lineIndexOf(worksheet);
   }
 
   /** The worksheet with all changes. */
   finish(): Worksheet {
     const done = this.#sections === undefined ? this.#worksheet : { ...this.#worksheet, sections: this.#sections };
-    if (this.#areLinesPut) handOnIndex(this.#base, done);
+    for (const section of this.#base.sections) {
+      const own = this.#ownLines.get(section.id);
+      if (own === undefined || this.#lastTouched.has(section.id)) continue;
+      if (isLinesSection(section)) handOnIndex(section.lines, own);
+    }
     return done;
   }
 
@@ -123,7 +124,6 @@ export class Draft {
   #insertLine(line: Line, sectionId: string, index: number): void {
     assert(this.#whereIs(line.id) === undefined, `the line ${line.id} is new`);
     insertAt(this.#openLines(this.#sectionIndex(sectionId)), index, line);
-    this.#areLinesPut = false;
     this.#whereabouts.set(line.id, sectionId);
     this.#lastTouched.set(sectionId, index);
   }
@@ -131,7 +131,6 @@ export class Draft {
   #removeLine(lineId: string): { line: Line; sectionId: string; at: number } {
     const { sectionIndex, sectionId, at } = this.#locate(lineId);
     const [line] = this.#openLines(sectionIndex).splice(at, 1);
-    this.#areLinesPut = false;
     this.#whereabouts.set(lineId, null);
     this.#lastTouched.set(sectionId, at);
     return { line: present(line, 'the removed line'), sectionId, at };
@@ -141,7 +140,6 @@ export class Draft {
     assert(!this.#nowSections().some((one) => one.id === section.id), `the section ${section.id} is new`);
     insertAt(this.#openSections(), index, section);
     if (!isLinesSection(section)) return;
-    this.#areLinesPut = false;
     this.#lastTouched.set(section.id, 0);
     for (const line of section.lines) {
       assert(this.#whereIs(line.id) === undefined, `the line ${line.id} is new`);
@@ -153,7 +151,6 @@ export class Draft {
     const [section] = this.#openSections().splice(index, 1);
     assert(section !== undefined, 'the removed section is there');
     if (isLinesSection(section)) {
-      this.#areLinesPut = false;
       for (const line of section.lines) this.#whereabouts.set(line.id, null);
       // Its list now belongs to the inverse change.
       this.#ownLines.delete(section.id);
@@ -203,18 +200,23 @@ export class Draft {
     return lines;
   }
 
-  /** The section in which the line now is, or undefined. */
-  #whereIs(lineId: string): string | undefined {
+  /** The section in which the line now is, or undefined; and where it stood in the section before the draft. */
+  #whereIs(lineId: string): { sectionId: string; before: number } | undefined {
     const moved = this.#whereabouts.get(lineId);
-    return moved === null ? undefined : (moved ?? this.#index.get(lineId)?.sectionId);
+    if (moved === null) return undefined;
+    if (moved !== undefined) return { sectionId: moved, before: 0 };
+    const place = placeOfLine(this.#base, lineId);
+    const section = place && this.#base.sections[place.sectionIndex];
+    return section && { sectionId: section.id, before: place.lineIndex };
   }
 
   #locate(lineId: string): { sectionIndex: number; sectionId: string; at: number } {
-    const sectionId = this.#whereIs(lineId);
-    assert(sectionId !== undefined, `the line ${lineId} is in the worksheet`);
-    const sectionIndex = this.#sectionIndex(sectionId);
-    const near = this.#lastTouched.get(sectionId) ?? this.#index.get(lineId)?.at ?? 0;
-    return { sectionIndex, sectionId, at: findNear(this.#linesSectionAt(sectionIndex).lines, lineId, near) };
+    const where = this.#whereIs(lineId);
+    assert(where !== undefined, `the line ${lineId} is in the worksheet`);
+    const sectionIndex = this.#sectionIndex(where.sectionId);
+    const near = this.#lastTouched.get(where.sectionId) ?? where.before;
+    const at = findNear(this.#linesSectionAt(sectionIndex).lines, lineId, near);
+    return { sectionIndex, sectionId: where.sectionId, at };
   }
 }
 

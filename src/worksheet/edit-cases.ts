@@ -91,12 +91,9 @@ export function moveCase(worksheet: Worksheet, caseId: string, direction: 'left'
 function freeCaseId(worksheet: Worksheet, name: string): string {
   const used = new Set(worksheet.cases.map((one) => one.id));
   for (const line of allLines(worksheet)) for (const id of Object.keys(line.byCase ?? {})) used.add(id);
-  const words = name
-    .normalize('NFKD')
-    .replace(/\p{M}/gu, '')
-    .toLowerCase()
-    .match(/[a-z0-9]+/g);
-  const stem = words === null || /^\d/.test(words[0] ?? '') ? ['case', ...(words ?? [])].join('-') : words.join('-');
+  const plain = name.normalize('NFKD').replace(/\p{M}/gu, '').toLowerCase();
+  const words = plain.match(/[a-z0-9]+/g) ?? [];
+  const stem = (/^[a-z]/.test(words[0] ?? '') ? words : ['case', ...words]).join('-');
   // A name such as “Constructor” would make an id that every object already has.
   for (const word of Object.getOwnPropertyNames(Object.prototype)) used.add(word);
   used.add('prototype');

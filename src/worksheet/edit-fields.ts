@@ -56,7 +56,8 @@ export function withOverride(worksheet: Worksheet, line: Line, caseId: string, e
 export function setEntry(worksheet: Worksheet, lineId: string, entry: string, caseId?: string): Edit {
   const { line } = locateLine(worksheet, lineId);
   const text = entry.trim();
-  if (caseId === undefined) return entryEdit(`Change the entry of ${lineName(line)}`, line, withKey(line, 'entry', text, LINE_KEYS));
+  if (caseId === undefined)
+    return entryEdit(`Change the entry of ${lineName(line)}`, line, withKey(line, 'entry', text, LINE_KEYS));
   const one = caseOf(worksheet, caseId);
   if (text === '') return removeOverride(worksheet, lineId, caseId);
   const isInherited = overrideIn(line, caseId) === undefined && text === line.entry;

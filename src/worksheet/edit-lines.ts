@@ -65,8 +65,9 @@ function copiesOf(lines: readonly Line[], taken: ReadonlySet<string>): Line[] {
   const used = new Set(taken);
   const avoided = new Set([...taken, ...lines.map((line) => line.symbol)]);
   const renamed = new Map<string, string>();
+  const counts = new Map<string, number>();
   const copies = lines.map((line) => {
-    const symbol = used.has(line.symbol) ? freeSymbol(line.symbol, avoided) : line.symbol;
+    const symbol = used.has(line.symbol) ? freeSymbol(line.symbol, avoided, counts) : line.symbol;
     if (symbol !== '') used.add(symbol);
     avoided.add(symbol);
     if (symbol !== line.symbol && !renamed.has(line.symbol)) renamed.set(line.symbol, symbol);
@@ -126,8 +127,7 @@ function withCasesOf(worksheet: Worksheet, from: readonly Case[], line: Line, lo
   const entries = new Map<string, string>();
   for (const [caseId, entry] of Object.entries(line.byCase)) {
     const name = from.find((one) => one.id === caseId)?.name ?? caseId;
-    const target =
-      worksheet.cases.find((one) => one.id === caseId) ?? worksheet.cases.find((one) => one.name === name);
+    const target = worksheet.cases.find((one) => one.id === caseId) ?? worksheet.cases.find((one) => one.name === name);
     if (target === undefined) lostCases.add(name);
     else entries.set(target.id, entry);
   }
@@ -168,7 +168,12 @@ export function moveLinesTo(worksheet: Worksheet, lineIds: readonly string[], pl
     if (now !== index) changes.push({ kind: 'move-line', lineId: id, sectionId: target.id, index });
   }
   const focus = focusOn(lines.map((line) => line.id));
-  return { label: `Move ${lineCount(lines.length)}`, changes, ...focus, ...focusBeforeOn(lines.map((line) => line.id)) };
+  return {
+    label: `Move ${lineCount(lines.length)}`,
+    changes,
+    ...focus,
+    ...focusBeforeOn(lines.map((line) => line.id)),
+  };
 }
 
 /**
@@ -180,7 +185,9 @@ export function moveLines(worksheet: Worksheet, lineIds: readonly string[], dire
   const edge = direction === 'up' ? lines[0] : lines[lines.length - 1];
   if (edge === undefined) return { label: 'Move line', changes: [] };
   const place = placeNextTo(worksheet, edge.id, new Set(lineIds), direction);
-  return place === undefined ? { label: `Move ${lineCount(lines.length)}`, changes: [] } : moveLinesTo(worksheet, lineIds, place);
+  return place === undefined
+    ? { label: `Move ${lineCount(lines.length)}`, changes: [] }
+    : moveLinesTo(worksheet, lineIds, place);
 }
 
 function placeNextTo(

@@ -7,8 +7,7 @@ import { newSection } from './new';
 
 const onSection = (sectionId: string): Focus => ({ kind: 'section', sectionId });
 
-const sectionName = (section: Section): string =>
-  section.title === '' ? 'section' : `section “${section.title}”`;
+const sectionName = (section: Section): string => (section.title === '' ? 'section' : `section “${section.title}”`);
 
 /** Inserts an empty section of lines before the section that now has this index, or at the end. */
 export function insertSection(worksheet: Worksheet, index: number, title = ''): Edit {
@@ -27,7 +26,12 @@ export function renameSection(worksheet: Worksheet, sectionId: string, title: st
   const section = linesSectionOf(worksheet, sectionId);
   const changes: Change[] =
     section.title === title ? [] : [{ kind: 'set-section', sectionId, field: 'title', value: title }];
-  return { label: `Rename ${sectionName(section)}`, changes, focus: onSection(sectionId), focusBefore: onSection(sectionId) };
+  return {
+    label: `Rename ${sectionName(section)}`,
+    changes,
+    focus: onSection(sectionId),
+    focusBefore: onSection(sectionId),
+  };
 }
 
 /** Deletes a section with its lines. */
@@ -65,15 +69,13 @@ export function moveSection(worksheet: Worksheet, sectionId: string, direction: 
 
 /** Gives the worksheet another title. */
 export function setTitle(worksheet: Worksheet, title: string): Edit {
-  const changes: Change[] =
-    worksheet.title === title ? [] : [{ kind: 'set-worksheet', field: 'title', value: title }];
+  const changes: Change[] = worksheet.title === title ? [] : [{ kind: 'set-worksheet', field: 'title', value: title }];
   return { label: 'Change the title', changes, focus: { kind: 'worksheet' }, focusBefore: { kind: 'worksheet' } };
 }
 
 /** Gives the worksheet another summary; an empty one takes it away. */
 export function setSummary(worksheet: Worksheet, summary: string): Edit {
   const value = summary === '' ? undefined : summary;
-  const changes: Change[] =
-    worksheet.summary === value ? [] : [{ kind: 'set-worksheet', field: 'summary', value }];
+  const changes: Change[] = worksheet.summary === value ? [] : [{ kind: 'set-worksheet', field: 'summary', value }];
   return { label: 'Change the summary', changes, focus: { kind: 'worksheet' }, focusBefore: { kind: 'worksheet' } };
 }

@@ -32,7 +32,9 @@ function isRewritable(worksheet: Worksheet, line: Line, to: string): boolean {
 
 function rewriting(worksheet: Worksheet, from: string, to: string): Change[] {
   const renamed = new Map([[from, to]]);
-  const changes: Change[] = allLines(worksheet).flatMap((line) => changesBetween(line, withRenamedSymbols(line, renamed)));
+  const changes: Change[] = allLines(worksheet).flatMap((line) =>
+    changesBetween(line, withRenamedSymbols(line, renamed)),
+  );
   const { recorded } = worksheet;
   if (recorded !== undefined && Object.hasOwn(recorded, from)) {
     const value = Object.fromEntries(

@@ -50,7 +50,7 @@ export function perform(history: History, edit: Edit): History {
 function stepOn(history: History, edit: Edit): History {
   const { worksheet, inverse } = applyAll(history.worksheet, edit.changes);
   const kept = history.done.length < HISTORY_LIMIT ? history.done : history.done.slice(1 - HISTORY_LIMIT);
-  return { worksheet, done: [...kept, { edit, inverse }], undone: history.undone };
+  return { worksheet, done: kept.concat({ edit, inverse }), undone: history.undone };
 }
 
 /** Takes the last edit back; undefined when there is none. */

@@ -7,6 +7,7 @@ export * from './keys';
 export * from './lookup';
 export * from './changes';
 export * from './history';
+export * from './limits';
 export * from './symbols';
 export * from './symbol-proposal';
 export * from './new';

@@ -1,34 +1,39 @@
 /**
- * The index of a worksheet's lines by id.
- * Holds: it is made at most once for each state of the document and handed on while no line moves, so that a change of one
- * line costs nothing per line of the worksheet but the copy of one list.
+ * Where lines stand, by id: an index for each list of lines.
+ * Holds: an index is made when first asked for, at most once for each state of a list, and handed on while no line of the list
+ * moves, so that a change of one line costs nothing per line but the copy of its list.
  */
 import { assert } from '../base';
-import { isLinesSection, type Worksheet } from './document';
+import { isLinesSection, type Line, type Worksheet } from './document';
 
-/** Where each line stands, by line id. */
-export type LineIndex = ReadonlyMap<string, { readonly sectionId: string; readonly at: number }>;
+type LineIndex = ReadonlyMap<string, number>;
 
-const indexes = new WeakMap<Worksheet, LineIndex>();
+const indexes = new WeakMap<readonly Line[], LineIndex>();
 
-/** The index of the worksheet's lines, made when first asked for. */
-export function lineIndexOf(worksheet: Worksheet): LineIndex {
-  const known = indexes.get(worksheet);
+function indexOf(lines: readonly Line[]): LineIndex {
+  const known = indexes.get(lines);
   if (known !== undefined) return known;
-  const index = new Map<string, { sectionId: string; at: number }>();
-  for (const section of worksheet.sections) {
-    if (!isLinesSection(section)) continue;
-    section.lines.forEach((line, at) => {
-      assert(!index.has(line.id), `two lines have the id ${line.id}`);
-      index.set(line.id, { sectionId: section.id, at });
-    });
-  }
-  indexes.set(worksheet, index);
+  const index = new Map<string, number>();
+  lines.forEach((line, at) => index.set(line.id, at));
+  assert(index.size === lines.length, 'every line has an id of its own');
+  indexes.set(lines, index);
   return index;
 }
 
-/** Tells that the lines of `to` have the ids and places of those of `from`, so that it needs no index of its own. */
-export function handOnIndex(from: Worksheet, to: Worksheet): void {
+/** Tells that the lines of `to` have the ids and places of those of `from`. */
+export function handOnIndex(from: readonly Line[], to: readonly Line[]): void {
   const known = indexes.get(from);
   if (known !== undefined) indexes.set(to, known);
+}
+
+/** Where the line stands, as indexes of its section and of the line in it, or undefined. */
+export function placeOfLine(
+  worksheet: Worksheet,
+  lineId: string,
+): { readonly sectionIndex: number; readonly lineIndex: number } | undefined {
+  for (const [sectionIndex, section] of worksheet.sections.entries()) {
+    const lineIndex = isLinesSection(section) ? indexOf(section.lines).get(lineId) : undefined;
+    if (lineIndex !== undefined) return { sectionIndex, lineIndex };
+  }
+  return undefined;
 }

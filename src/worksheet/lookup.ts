@@ -4,7 +4,7 @@
  */
 import { assert, present } from '../base';
 import { isLinesSection, type Case, type Line, type LinesSection, type Section, type Worksheet } from './document';
-import { lineIndexOf } from './line-index';
+import { placeOfLine } from './line-index';
 
 /** A line with its place. */
 export interface FoundLine {
@@ -16,12 +16,11 @@ export interface FoundLine {
 
 /** The line with this id and its place, or undefined. */
 export function findLine(worksheet: Worksheet, lineId: string): FoundLine | undefined {
-  const place = lineIndexOf(worksheet).get(lineId);
+  const place = placeOfLine(worksheet, lineId);
   if (place === undefined) return undefined;
-  const sectionIndex = worksheet.sections.findIndex((section) => section.id === place.sectionId);
-  const section = present(worksheet.sections[sectionIndex], 'an indexed section');
+  const section = present(worksheet.sections[place.sectionIndex], 'an indexed section');
   assert(isLinesSection(section), 'an indexed section has lines');
-  return { line: present(section.lines[place.at], 'an indexed line'), section, sectionIndex, lineIndex: place.at };
+  return { ...place, line: present(section.lines[place.lineIndex], 'an indexed line'), section };
 }
 
 /** As `findLine`, for an id that must be there. Throws when it is not. */

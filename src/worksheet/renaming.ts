@@ -38,12 +38,11 @@ function mapAcceptances(
 
 /** The record with the texts under these keys mapped; the same record when none changes. */
 function mapTexts<T extends object>(record: T, keys: readonly string[], map: (text: string) => string): T {
-  let isSame = true;
-  const entries = Object.entries(record).map(([key, value]: [string, unknown]) => {
-    if (typeof value !== 'string' || !keys.includes(key)) return [key, value];
-    const text = map(value);
-    if (text !== value) isSame = false;
-    return [key, text];
-  });
-  return isSame ? record : (Object.fromEntries(entries) as T);
+  const entries = Object.entries(record).map(([key, value]: [string, unknown]) => ({
+    key,
+    value,
+    mapped: typeof value === 'string' && keys.includes(key) ? map(value) : value,
+  }));
+  if (entries.every(({ value, mapped }) => value === mapped)) return record;
+  return Object.fromEntries(entries.map(({ key, mapped }) => [key, mapped])) as T;
 }

@@ -85,11 +85,11 @@ const BY_LENGTH = Object.entries(QUANTITIES).sort(([a], [b]) => b.length - a.len
 
 /**
  * A free symbol for a line with this label: `Transmit power` gives `P_tx`, `EIRP` gives `EIRP`, a label without a word of the
- * tables its first word. Empty when the label holds no letter.
+ * tables its first word. Empty when the label holds no letter. `counts` as for `freeSymbol`.
  */
-export function proposeSymbol(label: string, taken: ReadonlySet<string>): string {
+export function proposeSymbol(label: string, taken: ReadonlySet<string>, counts?: Map<string, number>): string {
   const proposal = asSymbol(label.trim()) ?? fromTables(label) ?? fromFirstWord(label);
-  return freeSymbol(symbolFault(proposal) === undefined || proposal === '' ? proposal : `${proposal}_2`, taken);
+  return freeSymbol(symbolFault(proposal) === undefined || proposal === '' ? proposal : `${proposal}_2`, taken, counts);
 }
 
 /** The label itself where it is written as a symbol already: with an underscore, in capitals, or as one letter. */
@@ -99,8 +99,13 @@ function asSymbol(label: string): string | undefined {
 }
 
 function fromTables(label: string): string | undefined {
-  const text = label.toLowerCase().replace(/[^\p{L}\p{N}-]+/gu, ' ').trim();
-  const name = BY_LENGTH.find(([words]) => text === words || text.endsWith(` ${words}`) || text.startsWith(`${words} `));
+  const text = label
+    .toLowerCase()
+    .replace(/[^\p{L}\p{N}-]+/gu, ' ')
+    .trim();
+  const name = BY_LENGTH.find(
+    ([words]) => text === words || text.endsWith(` ${words}`) || text.startsWith(`${words} `),
+  );
   if (name === undefined) return undefined;
   const [words, symbol] = name;
   const others = text.endsWith(words) ? text.slice(0, -words.length) : text.slice(words.length);

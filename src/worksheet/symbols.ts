@@ -55,7 +55,9 @@ export function symbolsIn(worksheet: Worksheet): Set<string> {
 export function symbolProblem(worksheet: Worksheet, symbol: string, lineId?: string): string | undefined {
   const fault = symbolFault(symbol);
   if (fault !== undefined) return fault;
-  return isTakenByAnother(worksheet, symbol, lineId) ? `Another line has the symbol ${symbol}; choose a free one.` : undefined;
+  return isTakenByAnother(worksheet, symbol, lineId)
+    ? `Another line has the symbol ${symbol}; choose a free one.`
+    : undefined;
 }
 
 /** True when a line or section other than the line named carries the symbol. */
@@ -69,15 +71,21 @@ export function isTakenByAnother(worksheet: Worksheet, symbol: string, lineId?: 
 
 /**
  * The symbol itself when it is free, else the first free one of `P_tx_2`, `P_tx_3`, …; `P_1` goes on with `P_2`, `N_0`, in
- * which the nought has a meaning, with `N_0_2`. An empty symbol stays empty.
+ * which the nought has a meaning, with `N_0_2`. An empty symbol stays empty. Whoever asks for many hands in `counts`, which
+ * remembers up to where the numbers are taken.
  */
-export function freeSymbol(symbol: string, taken: ReadonlySet<string>): string {
+export function freeSymbol(
+  symbol: string,
+  taken: ReadonlySet<string>,
+  counts: Map<string, number> = new Map<string, number>(),
+): string {
   const isFree = (name: string): boolean => !taken.has(name) && !RESERVED_SYMBOLS.has(name);
   if (symbol === '' || isFree(symbol)) return symbol;
   const counted = /^(.*_)([1-9]\d{0,5})$/su.exec(symbol);
   const stem = counted?.[1] ?? `${symbol}_`;
-  let number = counted === null ? 2 : Number(counted[2]) + 1;
+  let number = Math.max(counted === null ? 2 : Number(counted[2]) + 1, counts.get(stem) ?? 0);
   while (!isFree(`${stem}${String(number)}`)) number++;
+  counts.set(stem, number + 1);
   return `${stem}${String(number)}`;
 }
 

@@ -1,5 +1,5 @@
-import { forceCloseDatabase } from 'fake-indexeddb';
-import { describe, expect, it, vi } from 'vitest';
+import { forceCloseDatabase, IDBDatabase } from 'fake-indexeddb';
+import { afterEach, describe, expect, it, vi } from 'vitest';
 
 import { openStore } from '../../src/store';
 import type { StoreTrouble } from '../../src/store';
@@ -7,6 +7,16 @@ import type { StoreTrouble } from '../../src/store';
 import { createSheet, faultOf, newBrowser, openRaw, openTab, sheet, textOf, until, valueOf } from './support';
 
 const laterVersion = 20; // Dexie's version 2: the first tables are 1, and it counts in tenths.
+
+/** Has the browser close the connection that was opened first. */
+function closeByForce(opened: { mock: { results: readonly { value: unknown }[] } }): void {
+  const connection = (opened.mock.results[0]?.value as IDBOpenDBRequest).result;
+  forceCloseDatabase(connection as never); // Its declared type asks for the class, not for a connection.
+}
+
+afterEach(() => {
+  vi.restoreAllMocks();
+});
 
 describe('opening', () => {
   it('answers `unavailable` where the browser has no database', async () => {
@@ -45,6 +55,15 @@ describe('opening', () => {
     expect(fault.code).toBe('blocked');
     olderStill.close();
     await createSheet(await openTab(second), 'a', 'text');
+  });
+});
+
+describe('a save', () => {
+  it('asks the browser to have it on the disk before it is acknowledged', async () => {
+    const begun = vi.spyOn(IDBDatabase.prototype, 'transaction');
+    await createSheet(await openTab(newBrowser()), 'a', 'text');
+    const lasting = begun.mock.calls.at(-1);
+    expect(lasting).toEqual([['worksheets', 'texts', 'copies'], 'readwrite', { durability: 'strict' }]);
   });
 });
 
@@ -95,12 +114,30 @@ describe('a connection that the browser closes', () => {
     const troubles: StoreTrouble[] = [];
     const store = await openTab(browser, { onTrouble: (trouble) => troubles.push(trouble) });
     const { rev } = await createSheet(store, 'a', 'one');
-    const connection = (opened.mock.results[0]?.value as IDBOpenDBRequest).result;
-    forceCloseDatabase(connection as never); // Its declared type asks for the class, not for a connection.
+    closeByForce(opened);
     await until(() => troubles.length > 0);
     expect(troubles).toEqual(['closed']);
     valueOf(await store.save({ id: 'a', ...sheet('two'), basedOn: rev }));
     expect(await textOf(store, 'a')).toBe('two');
+  });
+
+  it('and cannot open again is tried anew at each use', async () => {
+    const browser = newBrowser();
+    const opened = vi.spyOn(browser.indexedDB, 'open');
+    const troubles: StoreTrouble[] = [];
+    const store = await openTab(browser, { onTrouble: (trouble) => troubles.push(trouble) });
+    const { rev } = await createSheet(store, 'a', 'one');
+    closeByForce(opened);
+    await until(() => troubles.length > 0);
+    opened.mockImplementation(() => {
+      throw new DOMException('full disk while opening', 'QuotaExceededError');
+    });
+    expect(faultOf(await store.save({ id: 'a', ...sheet('two'), basedOn: rev })).code).toBe('quota');
+    expect(faultOf(await store.list()).code).toBe('quota');
+    opened.mockRestore();
+    valueOf(await store.save({ id: 'a', ...sheet('two'), basedOn: rev }));
+    expect(await textOf(store, 'a')).toBe('two');
+    expect(troubles).toEqual(['closed']);
   });
 
   it('because the storage is cleared does not stand in the way, and the loss is told by the next save', async () => {

@@ -42,13 +42,13 @@ describe('thinning of recovery copies', () => {
   it('keeps the last copy of each hour for a day and of each day for thirty days', () => {
     const kept = keptAfter(workingDays(60));
     const ages = kept.map(({ savedAt }) => now - savedAt);
-    const hourly = ages.filter((age) => age <= dayMs && age > newestKept * 10 * minuteMs);
-    // Twenty copies reach back 3 h 10 min; the working day began 7 h 50 min ago.
-    expect(hourly).toHaveLength(5);
-    expect(ages.filter((age) => age > dayMs)).toHaveLength(30);
+    const hourly = ages.filter((age) => age < dayMs && age > newestKept * 10 * minuteMs);
+    // Twenty copies reach back 3 h 10 min; the working day began 7 h 50 min ago, four whole hours before.
+    expect(hourly).toHaveLength(4);
+    expect(ages.filter((age) => age >= dayMs)).toHaveLength(30);
     expect(Math.max(...ages)).toBe(30 * dayMs);
     // Of each of those days the last save, which was at noon.
-    expect(ages.filter((age) => age > dayMs).every((age) => age % dayMs === 0)).toBe(true);
+    expect(ages.filter((age) => age >= dayMs).every((age) => age % dayMs === 0)).toBe(true);
   });
 
   it('keeps every quarantined copy and does not count it among the twenty', () => {

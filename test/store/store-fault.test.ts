@@ -12,6 +12,12 @@ describe('the fault that an error stands for', () => {
     ['a full disk, two errors deep', named('BulkError', named('AbortError', named('QuotaExceededError'))), 'quota'],
     ['a full disk as the browser’s own exception', new DOMException('', 'QuotaExceededError'), 'quota'],
     ['a full disk as the cause', new Error('failed', { cause: named('QuotaExceededError') }), 'quota'],
+    ['a full disk, met with a large text', new DOMException('Failed to write blobs (IOError)', 'DataError'), 'quota'],
+    [
+      'a full disk, met with a small text',
+      new DOMException('Connection is closing because of: IO error: 000005.ldb: FILE_ERROR_NO_SPACE', 'UnknownError'),
+      'quota',
+    ],
     ['an abort for another reason', named('AbortError', named('UnknownError')), 'unexpected'],
     ['a value whose file is gone', named('NotReadableError'), 'unreadable'],
     ['a value that cannot be read back', named('UnknownError', named('DataError')), 'unreadable'],

@@ -54,9 +54,14 @@ export class TestClock {
   readonly now = (): number => this.time;
 }
 
+/** Resolves after `count` tasks of the event loop. */
+export async function tasks(count: number): Promise<void> {
+  for (let turn = 0; turn < count; turn += 1) await new Promise((resolve) => setImmediate(resolve));
+}
+
 /** Resolves when `condition` holds; the condition is asked after each task of the event loop. */
 export async function until(condition: () => boolean): Promise<void> {
-  for (let turn = 0; turn < 10_000 && !condition(); turn += 1) await new Promise((resolve) => setImmediate(resolve));
+  for (let turn = 0; turn < 10_000 && !condition(); turn += 1) await tasks(1);
   expect(condition()).toBe(true);
 }
 

@@ -1,0 +1,68 @@
+/** What the page's buttons and keys do beyond the grid: files, findings, starters, pasted tables. */
+import { linesFromPreview, type PastePreview } from '../exchange';
+import type { LineFinding } from '../engine';
+import { STARTERS } from '../starters';
+import { pasteLines } from '../worksheet';
+import { downloadText, chooseFile } from './files';
+import { isOpen } from './finding-counts';
+import type { Session } from './session.svelte';
+
+/** Saves the worksheet as a file. */
+export function saveFile(session: Session): void {
+  const { name, text } = session.exportFile();
+  downloadText(name, text);
+  session.announce(`Saved as the file ${name}.`);
+}
+
+/** Opens a file that the person chooses. */
+export async function openFile(session: Session): Promise<void> {
+  const file = await chooseFile('.json,application/json');
+  if (file !== null) await openGivenFile(session, file);
+}
+
+/** Opens a file that was chosen or dropped; what is wrong with it is said, and the open worksheet stays. */
+export async function openGivenFile(session: Session, file: File): Promise<void> {
+  const read = await session.importBytes(new Uint8Array(await file.arrayBuffer()));
+  if (!read.ok) session.notice = { text: `${file.name} was not opened. ${read.fault.sentence}` };
+}
+
+/** Begins a worksheet from a starter. */
+export async function beginFrom(session: Session, starterId: string): Promise<void> {
+  const starter = STARTERS.find((one) => one.id === starterId);
+  if (starter === undefined) return;
+  const begun = await session.newWorksheet(starter.text);
+  if (!begun.ok) session.notice = { text: begun.fault.sentence };
+}
+
+/** Makes lines of a pasted table that the person has looked at. */
+export function takePastedTable(session: Session, preview: PastePreview): void {
+  const { paste, worksheet } = session;
+  session.paste = null;
+  session.dialog = null;
+  if (paste === null) return;
+  const { edit, messages } = pasteLines(worksheet, paste.place, { cases: [], lines: linesFromPreview(worksheet, preview) });
+  if (session.perform(edit, { follow: true }) && messages.length > 0) session.notice = { text: messages.join(' ') };
+}
+
+/** Brings the cursor to the next open finding below the selected line, or the one before; round the end. */
+export function goToFinding(session: Session, direction: 1 | -1): void {
+  const lineIds = [...new Set(session.evaluation.sheetFindings().filter(isOpen).map((finding) => finding.lineId))];
+  if (lineIds.length === 0) {
+    session.announce('There are no open findings.');
+    return;
+  }
+  const order = new Map(session.lineOrder.map((id, at) => [id, at]));
+  const place = (id: string | null): number => (id === null ? -1 : (order.get(id) ?? -1));
+  const here = place(session.selectedLineId);
+  const found =
+    direction === 1 ? lineIds.find((id) => place(id) > here) : lineIds.findLast((id) => place(id) < here);
+  const target = found ?? (direction === 1 ? lineIds[0] : lineIds[lineIds.length - 1]);
+  if (target !== undefined) jumpToFinding(session, target);
+}
+
+/** Brings the cursor to a line with findings and says the first of them. */
+export function jumpToFinding(session: Session, lineId: string, finding?: LineFinding): void {
+  session.select(lineId, finding?.caseIds[0]);
+  const first = finding ?? session.evaluation.findings(lineId).find(isOpen);
+  if (first !== undefined) session.announce(first.message);
+}

@@ -1,0 +1,34 @@
+/** Searching a worksheet: which lines hold a text, and in which field. */
+import { allLines, entriesOf, type Line, type Worksheet } from '../worksheet';
+
+/** Fields that are searched. */
+export type SearchedField = 'symbol' | 'label' | 'entry' | 'source' | 'note';
+
+/** A line that holds the text, and the first of its fields that does. */
+export interface Match {
+  readonly lineId: string;
+  readonly field: SearchedField;
+}
+
+const FIELDS: readonly SearchedField[] = ['symbol', 'label', 'entry', 'source', 'note'];
+
+/** The lines that hold a text, in the order of the worksheet; capitals do not matter. None for an empty text. */
+export function matchesOf(worksheet: Worksheet, text: string): readonly Match[] {
+  const wanted = text.trim().toLowerCase();
+  if (wanted === '') return [];
+  return allLines(worksheet).flatMap((line) => {
+    const field = FIELDS.find((one) => textOf(line, one).toLowerCase().includes(wanted));
+    return field === undefined ? [] : [{ lineId: line.id, field }];
+  });
+}
+
+function textOf(line: Line, field: SearchedField): string {
+  return field === 'entry' ? entriesOf(line).join('\n') : (line[field] ?? '');
+}
+
+/** The place of the match to go to next: after (or before) the one at `from`, round the end. −1 without matches. */
+export function nextMatch(count: number, from: number, direction: 1 | -1): number {
+  if (count === 0) return -1;
+  if (from < 0) return direction === 1 ? 0 : count - 1;
+  return (from + direction + count) % count;
+}

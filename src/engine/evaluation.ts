@@ -1,0 +1,349 @@
+/**
+ * The evaluation: a worksheet in, figures and findings out, kept up to date edit by edit.
+ * Holds: after any edits everything told is what a new evaluation of the same worksheet would tell, figure for figure and
+ * finding for finding. It is pure: no page, no clock, no storage.
+ */
+import { present } from '../base';
+import { checkLine, type Scope, type SymbolInfo } from '../formula';
+import { isLinesSection, type Change, type Line, type Worksheet } from '../worksheet';
+import { buildGraph, entryOf, inputsOf, nodeIn, type Graph } from './graph';
+import { describeRemark, remarksOf } from './describe';
+import type { Node } from './node';
+import type { Pass } from './pass';
+import { Figuring, settled } from './recompute';
+import { gatherFindings } from './gather';
+import type { Figure, LineFinding, Reading } from './reading';
+import { readingOf, figureOfNode } from './state';
+import type { Finding } from '../findings';
+
+/** An entry tried out in a line's place without being committed. */
+export interface Preview {
+  readonly reading: Reading;
+  readonly findings: readonly Finding[];
+}
+
+export class Evaluation {
+  private current: Worksheet;
+  private graph: Graph;
+  private readonly figuring = new Figuring();
+  private readonly listeners = new Set<(pass: Pass) => void>();
+  private findingCache = new Map<string, readonly LineFinding[]>();
+  private sheetCache: readonly LineFinding[] | undefined;
+  private around = new Set<Node>();
+  private byId: Map<string, Line>;
+  private edits = 0;
+
+  constructor(worksheet: Worksheet) {
+    this.current = worksheet;
+    this.graph = buildGraph(worksheet, undefined, this.figuring.newSlot);
+    this.byId = new Map(this.graph.lines.map((line) => [line.id, line]));
+    this.figuring.setOrder(this.graph.order);
+    this.settleStale(this.graph.order, new Set());
+    this.figuring.run([]);
+  }
+
+  /** The document evaluated. */
+  get worksheet(): Worksheet {
+    return this.current;
+  }
+
+  /** Grows by one with each edit. */
+  get version(): number {
+    return this.edits;
+  }
+
+  /** Calls `listener` after each edit; returns what ends that. */
+  subscribe(listener: (pass: Pass) => void): () => void {
+    this.listeners.add(listener);
+    return () => this.listeners.delete(listener);
+  }
+
+  /** Takes the document after `changes`; recomputes what is downstream of them, and tells subscribers. */
+  edit(next: Worksheet, changes: readonly Change[]): Pass {
+    this.current = next;
+    this.edits++;
+    const quick = changes.length === 1 && changes[0] !== undefined ? this.editQuickly(changes[0]) : undefined;
+    const pass = quick ?? this.rebuild(next);
+    for (const listener of this.listeners) listener(pass);
+    return pass;
+  }
+
+  /** One field of one line, without a change of the graph: the common case while somebody types. Undefined when it is not that. */
+  private editQuickly(change: Change): Pass | undefined {
+    if (change.kind !== 'set-line' || change.field === 'symbol' || change.field === 'byCase') return undefined;
+    // The finding on a second line with a symbol quotes the label of the first.
+    if (change.field === 'label' && this.graph.hasDuplicates) return undefined;
+    const before = this.byId.get(change.lineId);
+    const nodes = this.graph.nodes.get(change.lineId);
+    if (before === undefined || nodes === undefined) return undefined;
+    const line: Line = { ...before, [change.field]: change.value };
+    this.byId.set(line.id, line);
+    const stale: Node[] = [];
+    for (const node of nodes.values()) {
+      node.take(line, entryOf(line, node.caseId));
+      if (!node.isStale) continue;
+      const inputs = inputsOf(this.graph, node);
+      if (inputs.length !== node.inputs.length || inputs.some((input, index) => input !== node.inputs[index])) return undefined;
+      stale.push(node);
+    }
+    const touched = new Set<string>([line.id]);
+    this.settleStale(stale, touched);
+    return this.finish(touched, false);
+  }
+
+  private rebuild(next: Worksheet): Pass {
+    const before = this.graph;
+    this.graph = buildGraph(next, before, this.figuring.newSlot);
+    this.byId = new Map(this.graph.lines.map((line) => [line.id, line]));
+    const kept = new Set(this.graph.order);
+    const dropped = before.order.filter((node) => !kept.has(node));
+    for (const node of dropped) this.around.delete(node);
+    this.figuring.release(dropped);
+    this.figuring.setOrder(this.graph.order);
+    const touched = new Set<string>();
+    this.settleStale(this.graph.order.filter(({ isStale }) => isStale), touched);
+    return this.finish(touched, true);
+  }
+
+  private finish(touched: Set<string>, structure: boolean): Pass {
+    const slots: number[] = [];
+    const computed = this.figuring.run(slots);
+    this.findingCache = new Map();
+    this.sheetCache = undefined;
+    const { graph } = this;
+    let changed: Set<string> | undefined;
+    return {
+      structure,
+      computed,
+      get changed(): ReadonlySet<string> {
+        if (changed === undefined) {
+          const bySlot = new Map(graph.order.map((node) => [node.slot, node.lineId]));
+          changed = new Set(touched);
+          for (const slot of slots) changed.add(present(bySlot.get(slot), 'line of a slot'));
+        }
+        return changed;
+      },
+    };
+  }
+
+  /** Checks stale nodes, inputs first, and those whose inputs now look different; then those that looked around. */
+  private settleStale(stale: readonly Node[], touched: Set<string>): void {
+    if (stale.length === 0) return;
+    const open = [...stale].sort((a, b) => a.rank - b.rank);
+    const queued = new Set(open);
+    let anyInfoChanged = false;
+    for (let at = 0; at < open.length; at++) {
+      const node = open[at] as Node;
+      queued.delete(node);
+      touched.add(node.lineId);
+      if (!this.checkNode(node)) continue;
+      anyInfoChanged = true;
+      for (const user of node.users) {
+        if (queued.has(user) || user.rank < node.rank) continue;
+        queued.add(user);
+        insertByRank(open, user, at + 1);
+      }
+    }
+    if (this.around.size === 0 || !(anyInfoChanged || stale.length > 0)) return;
+    for (const node of [...this.around]) {
+      this.checkNode(node);
+      touched.add(node.lineId);
+    }
+  }
+
+  private checkNode(node: Node): boolean {
+    const changed = node.check(this.scopeOf(node.caseId));
+    if (node.result.looksAround) this.around.add(node);
+    else this.around.delete(node);
+    this.figuring.setRun(node);
+    return changed;
+  }
+
+  private scopeOf(caseId: string | null): Scope {
+    const { graph } = this;
+    const infoOf = (line: Line): SymbolInfo | undefined => nodeIn(graph, line.id, caseId)?.info();
+    return {
+      find: (symbol) => {
+        const line = graph.holders.get(symbol);
+        return line === undefined ? undefined : (infoOf(line) ?? 'withheld');
+      },
+      *all() {
+        for (const line of graph.holders.values()) {
+          const info = infoOf(line);
+          if (info !== undefined) yield info;
+        }
+      },
+      names: () => graph.holders.keys(),
+    };
+  }
+
+  /** Recomputes everything; for tests and measurements. Returns how many nodes were computed. */
+  recomputeAll(): number {
+    this.figuring.markAll();
+    return this.figuring.run([]);
+  }
+
+  /** A line's figure, kind, side and requirement in a case. */
+  reading(lineId: string, caseId: string): Reading {
+    const node = nodeIn(this.graph, lineId, caseId);
+    if (node === undefined) return { figure: { state: 'empty' } };
+    return readingOf(node, present(this.byId.get(lineId), 'line'), this.figuring);
+  }
+
+  /** The figure alone. */
+  figure(lineId: string, caseId: string): Figure {
+    const node = nodeIn(this.graph, lineId, caseId);
+    return node === undefined ? { state: 'empty' } : figureOfNode(node, this.figuring);
+  }
+
+  /** The node of a line in a case, for the working. */
+  node(lineId: string, caseId: string): Node | undefined {
+    return nodeIn(this.graph, lineId, caseId);
+  }
+
+  /** The figures by slot, for the working. */
+  get figures(): Figuring {
+    return this.figuring;
+  }
+
+  /** The findings of a line in all cases, each once. */
+  findings(lineId: string): readonly LineFinding[] {
+    const known = this.findingCache.get(lineId);
+    if (known !== undefined) return known;
+    const line = this.byId.get(lineId);
+    const found = line === undefined ? [] : gatherFindings(line, this.current.cases.map(({ id }) => id), (caseId) => this.findingsIn(lineId, caseId), (caseId) => nodeIn(this.graph, lineId, caseId));
+    this.findingCache.set(lineId, found);
+    return found;
+  }
+
+  /** Every finding of the worksheet, in its order. */
+  sheetFindings(): readonly LineFinding[] {
+    this.sheetCache ??= this.graph.lines
+      .filter(({ id }) => this.mayHaveFindings(id))
+      .flatMap(({ id }) => this.findings(id));
+    return this.sheetCache;
+  }
+
+  /** A quick no for the bulk of the lines. */
+  private mayHaveFindings(lineId: string): boolean {
+    for (const node of this.graph.nodes.get(lineId)?.values() ?? []) {
+      if (node.result.remarks.length > 0 || node.barred !== undefined || Number.isNaN(this.figuring.values[node.slot]) || node.line.requirement !== undefined) return true;
+    }
+    return false;
+  }
+
+  private findingsIn(lineId: string, caseId: string): readonly Finding[] {
+    const node = nodeIn(this.graph, lineId, caseId);
+    if (node === undefined) return [];
+    const tryOut = (entry: string, unit?: string): Reading => this.tryOut(node, entry, unit).reading;
+    return remarksOf(node, this.figuring).map((remark) => describeRemark(remark, node, this.figuring, tryOut, this.scopeOf(node.caseId)));
+  }
+
+  /** An entry in a line's place in a case, without committing it. */
+  preview(lineId: string, caseId: string, entry: string): Preview {
+    const node = nodeIn(this.graph, lineId, caseId);
+    if (node === undefined) return { reading: { figure: { state: 'empty' } }, findings: [] };
+    const tried = this.tryOut(node, entry);
+    const tryOut = (other: string, unit?: string): Reading => this.tryOut(node, other, unit).reading;
+    return { reading: tried.reading, findings: remarksOf(tried.node, this.figuring, tried.value).map((remark) => describeRemark(remark, tried.node, this.figuring, tryOut, this.scopeOf(node.caseId), tried.value)) };
+  }
+
+  /** Evaluates another entry (or unit) in a node's place. It cannot see itself, so a loop of one is found here too. */
+  private tryOut(node: Node, entry: string, unit?: string): { reading: Reading; node: Node; value: number } {
+    const scope = this.scopeOf(node.caseId);
+    const line: Line = { ...node.line, entry, ...(unit === undefined ? {} : { unit }) };
+    const trial = node.trial(line, entry);
+    trial.inputs = inputsOf(this.graph, trial);
+    const usesItself = trial.inputs.includes(node) || trial.inputs.some((input) => this.restsUpon(input, node));
+    trial.barred = usesItself ? { code: 'loop', path: [line.symbol, line.symbol] } : node.barred?.code === 'loop' ? undefined : node.barred;
+    trial.result = checkLine({ symbol: line.symbol, label: line.label, entry, unit: line.unit, quantity: line.quantity, side: line.side }, scope, trial.read);
+    const value = trial.barred === undefined ? settled(trial.compile(this.figuring)(), trial.result.unit?.form === 'decibel') : NaN;
+    return { reading: readingOf(trial, line, this.figuring, value), node: trial, value };
+  }
+
+  /** True when `node` rests on `other`, directly or not. */
+  private restsUpon(node: Node, other: Node): boolean {
+    if (node.rank < other.rank && node.barred === undefined) return false;
+    const seen = new Set<Node>([node]);
+    const open = [node];
+    for (let next = open.pop(); next !== undefined; next = open.pop()) {
+      if (next === other) return true;
+      for (const input of next.inputs) {
+        if (seen.has(input)) continue;
+        seen.add(input);
+        open.push(input);
+      }
+    }
+    return false;
+  }
+
+  /** Lines that a line uses directly, in any case. */
+  restsOn(lineId: string): readonly string[] {
+    return this.neighbours(lineId, 'inputs');
+  }
+
+  /** Lines that use a line directly, in any case. */
+  usedBy(lineId: string): readonly string[] {
+    return this.neighbours(lineId, 'users');
+  }
+
+  private neighbours(lineId: string, direction: 'inputs' | 'users'): string[] {
+    const found = new Set<string>();
+    for (const node of this.graph.nodes.get(lineId)?.values() ?? []) for (const other of node[direction]) found.add(other.lineId);
+    return [...found];
+  }
+
+  /** All lines that a line rests on, itself left out. */
+  upstream(lineId: string): ReadonlySet<string> {
+    return this.reach(lineId, 'inputs');
+  }
+
+  /** All lines that rest on a line, itself left out. */
+  downstream(lineId: string): ReadonlySet<string> {
+    return this.reach(lineId, 'users');
+  }
+
+  private reach(lineId: string, direction: 'inputs' | 'users'): Set<string> {
+    const reached = new Set<string>();
+    const open = [...(this.graph.nodes.get(lineId)?.values() ?? [])];
+    const seen = new Set<Node>(open);
+    for (let node = open.pop(); node !== undefined; node = open.pop()) {
+      for (const other of node[direction]) {
+        if (seen.has(other)) continue;
+        seen.add(other);
+        reached.add(other.lineId);
+        open.push(other);
+      }
+    }
+    reached.delete(lineId);
+    return reached;
+  }
+
+  /** The line that a symbol stands for. */
+  lineOf(symbol: string): Line | undefined {
+    const holder = this.graph.holders.get(symbol);
+    return holder === undefined ? undefined : this.byId.get(holder.id);
+  }
+
+  /** The line with this id, as of the last edit. */
+  line(lineId: string): Line | undefined {
+    return this.byId.get(lineId);
+  }
+
+  /** Every evaluated line in the order of the worksheet. */
+  lines(): readonly Line[] {
+    return this.current.sections.flatMap((section) => (isLinesSection(section) ? section.lines : []));
+  }
+}
+
+/** Keeps a worklist in rank order, from `from` on. */
+function insertByRank(open: Node[], node: Node, from: number): void {
+  let low = from;
+  let high = open.length;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if ((open[middle] as Node).rank <= node.rank) low = middle + 1;
+    else high = middle;
+  }
+  open.splice(low, 0, node);
+}

@@ -1,0 +1,240 @@
+/**
+ * The graph: which nodes a worksheet has, what each rests on, and an order in which every node comes after its inputs.
+ * Holds: a case has nodes of its own only for lines that differ in it; loops are found, named and barred, and only they.
+ */
+import { present } from '../base';
+import { readEntry } from '../formula';
+import { isLinesSection, type Line, type Worksheet } from '../worksheet';
+import { Node } from './node';
+
+export interface Graph {
+  readonly lines: readonly Line[];
+  /** The line that holds each symbol: the first one, where several claim it. */
+  readonly holders: ReadonlyMap<string, Line>;
+  /** Nodes by line id; the shared one under the empty case id. */
+  readonly nodes: ReadonlyMap<string, ReadonlyMap<string, Node>>;
+  /** Every node, inputs before users. */
+  readonly order: readonly Node[];
+  /** True when several lines claim one symbol. */
+  readonly hasDuplicates: boolean;
+}
+
+const RESERVED = new Set(['pi', 'c_0', 'k_B', 'T_0']);
+
+/** The node of a line in a case: its own, or the shared one. */
+export function nodeIn(graph: Pick<Graph, 'nodes'>, lineId: string, caseId: string | null): Node | undefined {
+  const nodes = graph.nodes.get(lineId);
+  return (caseId === null ? undefined : nodes?.get(caseId)) ?? nodes?.get('');
+}
+
+/** Builds the graph, taking over nodes of the one before, so that what has not changed need not be checked again. */
+export function buildGraph(worksheet: Worksheet, before: Graph | undefined, newSlot: () => number): Graph {
+  const lines = worksheet.sections.flatMap((section) => (isLinesSection(section) ? section.lines : []));
+  const holders = new Map<string, Line>();
+  for (const line of lines) if (line.symbol !== '' && !RESERVED.has(line.symbol) && !holders.has(line.symbol)) holders.set(line.symbol, line);
+  const differing = findDiffering(worksheet, lines, holders);
+  const nodes = new Map<string, Map<string, Node>>();
+  for (const line of lines) {
+    const own = new Map<string, Node>();
+    const make = (key: string, caseId: string | null, entry: string): void => {
+      const old = before?.nodes.get(line.id)?.get(key);
+      own.set(key, old ?? new Node(newSlot(), line, caseId, entry));
+    };
+    const cases = differing.get(line.id);
+    if (cases === undefined || cases.size < worksheet.cases.length) make('', null, line.entry);
+    for (const caseId of cases ?? []) make(caseId, caseId, line.byCase?.[caseId] ?? line.entry);
+    nodes.set(line.id, own);
+  }
+  const order = connect({ lines, holders, nodes });
+  return { lines, holders, nodes, order, hasDuplicates: order.some(({ barred }) => barred?.code === 'duplicate-symbol') };
+}
+
+/** The entry of a line in a case, or its own. */
+export function entryOf(line: Line, caseId: string | null): string {
+  return (caseId === null ? undefined : line.byCase?.[caseId]) ?? line.entry;
+}
+
+/** For each line the cases in which its figure may differ: those that override it, or anything it rests on. */
+function findDiffering(worksheet: Worksheet, lines: readonly Line[], holders: ReadonlyMap<string, Line>): Map<string, Set<string>> {
+  const differing = new Map<string, Set<string>>();
+  const overridden = lines.filter(({ byCase }) => byCase !== undefined && Object.keys(byCase).length > 0);
+  if (overridden.length === 0) return differing;
+  for (const { id: caseId } of worksheet.cases) {
+    const roots = overridden.filter((line) => line.byCase !== undefined && Object.hasOwn(line.byCase, caseId));
+    if (roots.length === 0) continue;
+    const users = usersInCase(lines, holders, caseId);
+    const open = roots.map(({ id }) => id);
+    const reached = new Set(open);
+    for (let lineId = open.pop(); lineId !== undefined; lineId = open.pop()) {
+      for (const user of users.get(lineId) ?? []) {
+        if (reached.has(user)) continue;
+        reached.add(user);
+        open.push(user);
+      }
+    }
+    for (const lineId of reached) {
+      const cases = differing.get(lineId) ?? new Set<string>();
+      cases.add(caseId);
+      differing.set(lineId, cases);
+    }
+  }
+  return differing;
+}
+
+/** Who uses each line in a case, by line id. */
+function usersInCase(lines: readonly Line[], holders: ReadonlyMap<string, Line>, caseId: string): Map<string, string[]> {
+  const users = new Map<string, string[]>();
+  for (const line of lines) {
+    const read = readEntry(entryOf(line, caseId));
+    for (const symbol of read.form === 'expression' ? read.symbols : []) {
+      const used = holders.get(symbol)?.id;
+      if (used === undefined) continue;
+      const list = users.get(used);
+      if (list === undefined) users.set(used, [line.id]);
+      else list.push(line.id);
+    }
+  }
+  return users;
+}
+
+/** The nodes that a node's entry uses, each once. */
+export function inputsOf(graph: Pick<Graph, 'holders' | 'nodes'>, node: Node): Node[] {
+  const inputs: Node[] = [];
+  for (const symbol of node.symbols) {
+    const holder = graph.holders.get(symbol);
+    const input = holder === undefined ? undefined : nodeIn(graph, holder.id, node.caseId);
+    if (input !== undefined) inputs.push(input);
+  }
+  return inputs;
+}
+
+/** A barred node, and one no longer barred, looks different to those that use it. */
+function markStale(node: Node): void {
+  node.isStale = true;
+  for (const user of node.users) user.isStale = true;
+}
+
+/** Sets inputs, users, ranks and bars; returns the order. */
+function connect(graph: Pick<Graph, 'lines' | 'holders' | 'nodes'>): Node[] {
+  const all: Node[] = [];
+  for (const line of graph.lines) {
+    for (const node of present(graph.nodes.get(line.id), 'nodes of a line').values()) {
+      node.take(line, entryOf(line, node.caseId));
+      const holder = graph.holders.get(line.symbol);
+      const isTaken = line.symbol !== '' && holder?.id !== line.id;
+      const wasBarred = node.barred !== undefined;
+      node.barred = isTaken ? { code: 'duplicate-symbol', holder: holder === undefined ? 'is a constant' : `is the symbol of “${holder.label || holder.symbol}” already` } : undefined;
+      if (wasBarred || isTaken) markStale(node);
+      all.push(node);
+    }
+  }
+  for (const node of all) node.users = [];
+  for (const node of all) {
+    const inputs = inputsOf(graph, node);
+    const isSame = inputs.length === node.inputs.length && inputs.every((input, index) => input === node.inputs[index]);
+    if (!isSame) node.isStale = true;
+    node.inputs = inputs;
+    for (const input of node.inputs) input.users.push(node);
+  }
+  return sortNodes(all);
+}
+
+/** Kahn's algorithm; what is left over are loops and what rests on them. */
+function sortNodes(all: readonly Node[]): Node[] {
+  const waiting = new Map<Node, number>();
+  const order: Node[] = [];
+  const ready: Node[] = [];
+  for (const node of all) {
+    if (node.inputs.length === 0) ready.push(node);
+    else waiting.set(node, node.inputs.length);
+  }
+  const run = (): void => {
+    for (let next = 0; next < ready.length; next++) {
+      const node = ready[next] as Node;
+      node.rank = order.length;
+      order.push(node);
+      for (const user of node.users) {
+        const left = waiting.get(user);
+        if (left === undefined) continue;
+        if (left > 1) waiting.set(user, left - 1);
+        else {
+          waiting.delete(user);
+          ready.push(user);
+        }
+      }
+    }
+    ready.length = 0;
+  };
+  run();
+  if (waiting.size > 0) {
+    for (const loop of findLoops([...waiting.keys()])) {
+      const path = loop.map(({ line }) => line.symbol);
+      for (const [index, node] of loop.entries()) {
+        node.barred = { code: 'loop', path: [...path.slice(index), ...path.slice(0, index), path[index] ?? ''] };
+        markStale(node);
+        waiting.delete(node);
+        ready.push(node);
+      }
+    }
+    run();
+  }
+  return order;
+}
+
+/** Tarjan's algorithm, without recursion: the strongly connected parts that are loops, each in the order of its uses. */
+function findLoops(nodes: readonly Node[]): Node[][] {
+  const among = new Set(nodes);
+  const index = new Map<Node, number>();
+  const low = new Map<Node, number>();
+  const stack: Node[] = [];
+  const onStack = new Set<Node>();
+  const loops: Node[][] = [];
+  for (const start of nodes) {
+    if (index.has(start)) continue;
+    const frames: { node: Node; next: number }[] = [{ node: start, next: 0 }];
+    while (frames.length > 0) {
+      const frame = frames[frames.length - 1] as { node: Node; next: number };
+      const { node } = frame;
+      if (frame.next === 0) {
+        index.set(node, index.size);
+        low.set(node, index.size - 1);
+        stack.push(node);
+        onStack.add(node);
+      }
+      const input = node.inputs[frame.next++];
+      if (input !== undefined) {
+        if (!among.has(input)) continue;
+        if (!index.has(input)) frames.push({ node: input, next: 0 });
+        else if (onStack.has(input)) low.set(node, Math.min(low.get(node) ?? 0, index.get(input) ?? 0));
+        continue;
+      }
+      frames.pop();
+      const parent = frames[frames.length - 1]?.node;
+      if (parent !== undefined) low.set(parent, Math.min(low.get(parent) ?? 0, low.get(node) ?? 0));
+      if (low.get(node) !== index.get(node)) continue;
+      const part: Node[] = [];
+      for (let member = stack.pop(); member !== undefined; member = stack.pop()) {
+        onStack.delete(member);
+        part.push(member);
+        if (member === node) break;
+      }
+      if (part.length > 1 || node.inputs.includes(node)) loops.push(asPath(part));
+    }
+  }
+  return loops;
+}
+
+/** Members of a loop in the order in which one uses the next, as far as one walk reaches them all. */
+function asPath(part: readonly Node[]): Node[] {
+  const left = new Set(part);
+  const path: Node[] = [];
+  let node = part.reduce((first, member) => (member.slot < first.slot ? member : first));
+  for (;;) {
+    path.push(node);
+    left.delete(node);
+    const next = node.inputs.find((input) => left.has(input));
+    if (next === undefined) break;
+    node = next;
+  }
+  return [...path, ...left];
+}

@@ -1,0 +1,9 @@
+/**
+ * engine: worksheet in, evaluation out. The dependency graph, the recompute with cut-off, readings and findings. Pure: no
+ * page, no storage, no clock. What is shown and how belongs to those who ask.
+ */
+export * from './reading';
+export * from './pass';
+export { Evaluation, type Preview } from './evaluation';
+export type { Node } from './node';
+export { convertFigure, readBound } from './state';

@@ -1,0 +1,143 @@
+/**
+ * Nodes: one for each line, and one more for each case in which the line's entry, or anything it rests on, differs.
+ * Lines without overrides share one node among all cases.
+ */
+import { checkLine, compilePlan, readEntry, type Figures, type LineResult, type ReadEntry, type Scope, type SymbolInfo } from '../formula';
+import type { Line } from '../worksheet';
+
+/** Why a line is withheld whatever its entry says. */
+export type Barred =
+  | { readonly code: 'duplicate-symbol'; readonly holder: string }
+  | { readonly code: 'loop'; readonly path: readonly string[] };
+
+export class Node {
+  readonly slot: number;
+  readonly lineId: string;
+  /** null: the node that cases without differences share. */
+  readonly caseId: string | null;
+  line: Line;
+  entry: string;
+  read: ReadEntry;
+  result: LineResult;
+  barred: Barred | undefined;
+  /** Nodes whose figures this one uses, each once, in order of appearance in the entry. */
+  inputs: Node[] = [];
+  users: Node[] = [];
+  /** Place in the topological order. */
+  rank = 0;
+  /** True while the entry has to be checked again. */
+  isStale = true;
+
+  constructor(slot: number, line: Line, caseId: string | null, entry: string) {
+    this.slot = slot;
+    this.lineId = line.id;
+    this.caseId = caseId;
+    this.line = line;
+    this.entry = entry;
+    this.read = readEntry(entry);
+    this.result = UNCHECKED;
+  }
+
+  get symbols(): readonly string[] {
+    return this.read.form === 'expression' ? this.read.symbols : [];
+  }
+
+  /** Takes the line's present text; the node becomes stale when what the checker sees has changed. */
+  take(line: Line, entry: string): void {
+    const before = this.line;
+    const changed =
+      entry !== this.entry ||
+      line.symbol !== before.symbol ||
+      line.label !== before.label ||
+      line.unit !== before.unit ||
+      line.quantity !== before.quantity ||
+      line.side !== before.side;
+    if (entry !== this.entry) {
+      this.entry = entry;
+      this.read = readEntry(entry);
+    }
+    this.line = line;
+    if (changed) this.isStale = true;
+  }
+
+  /** Checks the entry anew; returns whether lines that use it see another type. */
+  check(scope: Scope): boolean {
+    const before = this.info();
+    const { symbol, label, unit, quantity, side } = this.line;
+    this.isStale = false;
+    this.result = checkLine({ symbol, label, entry: this.entry, unit, quantity, side }, scope, this.read);
+    return !sameInfo(before, this.info());
+  }
+
+  /** A node with another entry in this one's place, outside the graph. */
+  trial(line: Line, entry: string): Node {
+    return new Node(this.slot, line, this.caseId, entry);
+  }
+
+  /** The compiled entry. */
+  compile(figures: Figures): () => number {
+    return compilePlan(this.result.plan, figures);
+  }
+
+  /** How other lines meet this one; undefined while it has no type or is barred. */
+  info(): SymbolInfo | undefined {
+    const { unit, type, kind, side, constant } = this.result;
+    if (unit === undefined || type === undefined || this.barred !== undefined) return undefined;
+    const isDeclared = kind?.origin === 'declared' || side?.origin === 'declared';
+    return {
+      symbol: this.line.symbol,
+      label: this.line.label,
+      slot: this.slot,
+      unit,
+      type,
+      kind: kind?.kind,
+      side: isDeclared ? side?.side : undefined,
+      isDeclared,
+      constant,
+    };
+  }
+}
+
+const UNCHECKED: LineResult = {
+  isFitted: false,
+  plan: { op: 'constant', value: NaN },
+  isEmpty: true,
+  isInError: false,
+  remarks: [],
+  looksAround: false,
+  waitsFor: [],
+  symbols: [],
+};
+
+/** True when two lines look the same to the checker. Types are small plain data: they are compared by their text. */
+function sameInfo(a: SymbolInfo | undefined, b: SymbolInfo | undefined): boolean {
+  if (a === undefined || b === undefined) return a === b;
+  return (
+    a.unit.word === b.unit.word &&
+    a.kind === b.kind &&
+    a.side === b.side &&
+    a.isDeclared === b.isDeclared &&
+    a.constant === b.constant &&
+    sameType(a.type, b.type)
+  );
+}
+
+function sameType(a: SymbolInfo['type'], b: SymbolInfo['type']): boolean {
+  if (a.form === 'rate' || b.form === 'rate') return a.form === b.form && a.form === 'rate' && b.form === 'rate' && a.lengthM === b.lengthM;
+  const sameMeaning =
+    a.meaning === b.meaning ||
+    (a.meaning !== undefined &&
+      b.meaning !== undefined &&
+      a.meaning.w === b.meaning.w &&
+      a.meaning.u === b.meaning.u &&
+      a.meaning.f === b.meaning.f &&
+      a.meaning.l === b.meaning.l &&
+      a.meaning.declared === b.meaning.declared);
+  if (!sameMeaning || a.bandwidth?.key !== b.bandwidth?.key || a.noiseTemperature?.key !== b.noiseTemperature?.key) return false;
+  if (a.bandwidth?.text !== b.bandwidth?.text || a.noiseTemperature?.text !== b.noiseTemperature?.text) return false;
+  if (a.form === 'linear') return b.form === 'linear' && a.degree === b.degree && a.sort === b.sort && sameDimensionText(a, b);
+  return b.form === 'decibel' && a.offsetDb === b.offsetDb && sameDimensionText(a, b);
+}
+
+const sameDimensionText = (a: { dimension: readonly number[] }, b: { dimension: readonly number[] }): boolean =>
+  a.dimension.every((exponent, index) => exponent === b.dimension[index]);

@@ -1,0 +1,99 @@
+/**
+ * Bare numbers that stand for a unit: 32.44 in a free-space formula, −174 for a noise density, 228.6 for the Boltzmann
+ * constant. They hold only for certain units, so a sum with one does not close; the finding names what is meant.
+ */
+import { FREQUENCY, isDimensionless, LENGTH, raiseDimension, sameDimension } from '../quantity';
+import type { Context } from './context';
+import { withReplacedTerms, type Grouped } from './repairs';
+import type { Tree } from './tree';
+import type { SumTerm } from './types';
+
+interface Known {
+  readonly from: number;
+  readonly to: number;
+  readonly standsFor: string;
+  /** What to write in its place, by the sign it enters with. */
+  readonly write?: (sign: number) => { readonly text: string; readonly sign: number };
+}
+
+const literal = (figure: string, unit: string) => (sign: number) => ({ text: `${figure} ${unit}`, sign });
+
+/** Usual values, from common practice; each range takes the usual roundings. */
+const KNOWN: readonly Known[] = [
+  { from: 32.4, to: 32.46, standsFor: 'free-space loss with MHz and km (or GHz and m)' },
+  { from: 92.4, to: 92.5, standsFor: 'free-space loss with GHz and km' },
+  { from: 36.5, to: 36.6, standsFor: 'free-space loss with MHz and statute miles' },
+  { from: 96.5, to: 96.6, standsFor: 'free-space loss with GHz and statute miles' },
+  { from: 37.8, to: 37.81, standsFor: 'free-space loss with MHz and nautical miles' },
+  { from: -27.6, to: -27.5, standsFor: 'free-space loss with MHz and m' },
+  { from: -147.6, to: -147.5, standsFor: 'free-space loss with Hz and m' },
+  { from: -174.1, to: -173.8, standsFor: 'the noise density k·T₀ in dBm/Hz', write: literal('-174', 'dBm/Hz') },
+  { from: -204.1, to: -203.8, standsFor: 'the noise density k·T₀ in dBW/Hz', write: literal('-204', 'dBW/Hz') },
+  { from: -114.1, to: -113.9, standsFor: 'the noise density k·T₀ in dBm/MHz', write: literal('-114', 'dBm/MHz') },
+  { from: -144.1, to: -143.9, standsFor: 'the noise density k·T₀ in dBm/kHz or dBW/MHz', write: literal('-144', 'dBm/kHz') },
+  { from: -228.7, to: -228.5, standsFor: 'the Boltzmann constant in dBW/K/Hz', write: () => ({ text: 'db(k_B)', sign: 1 }) },
+  { from: 228.5, to: 228.7, standsFor: 'the Boltzmann constant in dBW/K/Hz, taken off', write: () => ({ text: 'db(k_B)', sign: -1 }) },
+  { from: -198.7, to: -198.5, standsFor: 'the Boltzmann constant in dBm/K/Hz', write: () => ({ text: 'db(k_B)', sign: 1 }) },
+  { from: 198.5, to: 198.7, standsFor: 'the Boltzmann constant in dBm/K/Hz, taken off', write: () => ({ text: 'db(k_B)', sign: -1 }) },
+];
+
+/** The bare number of a sum that hides a unit: a known constant, else any bare number literal. */
+export function hiddenConstant(terms: readonly SumTerm[]): { term: SumTerm; figure: number; known: Known | undefined } | undefined {
+  const numbers = terms.flatMap((term) =>
+    term.isNumber && term.plan.op === 'constant' ? [{ term, figure: term.coefficient * term.plan.value }] : [],
+  );
+  for (const number of numbers) {
+    const known = KNOWN.find(({ from, to }) => number.figure >= from && number.figure <= to);
+    if (known !== undefined) return { ...number, known };
+  }
+  const [first] = numbers;
+  return first === undefined ? undefined : { ...first, known: undefined };
+}
+
+/** Makes the finding for a number that keeps a sum from closing. */
+export function sayConstantHidesUnit(tree: Tree, terms: readonly SumTerm[], context: Context): SumTerm | undefined {
+  const hidden = hiddenConstant(terms);
+  if (hidden === undefined) return undefined;
+  const { term, known, figure } = hidden;
+  const grouped = freeSpace(terms, term) ?? written(terms, term, figure, known);
+  context.say('constant-hides-unit', term.tree, {
+    facts: { number: String(figure).replace('-', '−'), standsFor: known?.standsFor ?? 'something with a unit' },
+    repairs: grouped === undefined ? [] : [{ kind: 'entry', title: grouped.title, entry: context.replace(tree, grouped.text) }],
+  });
+  return term;
+}
+
+function written(terms: readonly SumTerm[], term: SumTerm, figure: number, known: Known | undefined): Grouped | undefined {
+  const replacement = known?.write?.(Math.sign(figure));
+  if (replacement === undefined) return undefined;
+  // The written figure carries its own sign; the term stands with the sign that keeps the value.
+  const isFigure = replacement.text.startsWith('-');
+  return withReplacedTerms(terms, [term], replacement.text, isFigure ? 1 : replacement.sign);
+}
+
+/** c + 20 log f + 20 log d is free_space_loss(d, f), whatever the constant. */
+function freeSpace(terms: readonly SumTerm[], constant: SumTerm): Grouped | undefined {
+  const squareOf = (exponent: typeof LENGTH): SumTerm | undefined =>
+    terms.find(({ coefficient, type, tree }) => coefficient === 1 && sameDimension(type.dimension, raiseDimension(exponent, 2)) && argumentOfLog(tree) !== undefined);
+  const distance = squareOf(LENGTH);
+  const frequency = squareOf(FREQUENCY);
+  if (distance === undefined || frequency === undefined) return undefined;
+  const call = `free_space_loss(${textOfLog(distance)}, ${textOfLog(frequency)})`;
+  return withReplacedTerms(terms, terms.filter((term) => term === constant || term === distance || term === frequency), call);
+}
+
+function argumentOfLog(tree: Tree): Tree | undefined {
+  if (tree.type !== 'binary' || tree.operator !== '*') return undefined;
+  const log = [tree.left, tree.right].find((side) => side.type === 'call' && side.name === 'log10');
+  return log?.type === 'call' ? log.parameters[0] : undefined;
+}
+
+function textOfLog({ tree, text }: SumTerm): string {
+  const argument = argumentOfLog(tree);
+  return argument === undefined ? text : text.slice(argument.place.start - tree.place.start, argument.place.end - tree.place.start);
+}
+
+/** True when the sum's remaining dimension comes of logarithms of quantities with units, so that a number may hide theirs. */
+export function hasDimensionedTerms(terms: readonly SumTerm[]): boolean {
+  return terms.some(({ type }) => !isDimensionless(type.dimension));
+}

@@ -1,0 +1,122 @@
+/**
+ * What is printed of a worksheet, gathered into plain data: requirements, sections, findings, endnotes, workings.
+ * Holds: endnotes are numbered in the order of their first mention, and equal texts are one endnote.
+ */
+import type { LineFinding, Reading } from '../../engine';
+import type { Working } from '../../review';
+import { isLinesSection, overrideIn, type Case, type Line, type Worksheet } from '../../worksheet';
+import { tellsRadiation } from './cautions';
+import { groupFindings, type FindingItem } from './finding-groups';
+
+/** Where the printed figures come from. */
+export interface PrintSource {
+  readonly reading: (lineId: string, caseId: string) => Reading;
+  readonly findings: () => readonly LineFinding[];
+  readonly working: (lineId: string, caseId: string) => Working;
+}
+
+/** A line as it is printed. */
+export interface PrintLine {
+  readonly line: Line;
+  /** One for each case of the worksheet, in order. */
+  readonly readings: readonly Reading[];
+  /** Entries that single cases have in place of the line's own. */
+  readonly overrides: readonly { readonly caseName: string; readonly entry: string }[];
+  /** Numbers of endnotes. */
+  readonly notes: readonly number[];
+  readonly radiates: boolean;
+}
+
+/** A section as it is printed; without lines where this version does not evaluate its kind. */
+export interface PrintSection {
+  readonly id: string;
+  readonly title: string;
+  readonly lines?: readonly PrintLine[];
+}
+
+/** The working of a required line, in the cases that share it. */
+export interface PrintWorking {
+  readonly key: string;
+  readonly caseNames: readonly string[];
+  readonly working: Working;
+}
+
+/** Everything that is printed. */
+export interface PrintDocument {
+  readonly sections: readonly PrintSection[];
+  readonly required: readonly PrintLine[];
+  readonly findings: readonly FindingItem[];
+  readonly endnotes: readonly string[];
+  readonly workings: readonly PrintWorking[];
+  readonly radiates: boolean;
+}
+
+/** Gathers what is printed. */
+export function printDocument(worksheet: Worksheet, source: PrintSource): PrintDocument {
+  const endnotes: string[] = [];
+  const noteNumber = (text: string): number => {
+    const known = endnotes.indexOf(text);
+    return known >= 0 ? known + 1 : endnotes.push(text);
+  };
+  const sections = worksheet.sections.map((section) => ({
+    id: section.id,
+    title: section.title,
+    ...(isLinesSection(section) && {
+      lines: section.lines.map((line) => printLine(worksheet, line, source, noteNumber)),
+    }),
+  }));
+  const lines = sections.flatMap((section) => section.lines ?? []);
+  const required = lines.filter(({ line }) => line.requirement !== undefined);
+  const groups = groupFindings(worksheet, source.findings());
+  return {
+    sections,
+    required,
+    findings: [...groups.error, ...groups.warning, ...groups.note, ...groups.accepted],
+    endnotes,
+    workings: required.flatMap(({ line }) => workingsOf(worksheet.cases, line, source)),
+    radiates: lines.some((line) => line.radiates),
+  };
+}
+
+function printLine(
+  worksheet: Worksheet,
+  line: Line,
+  source: PrintSource,
+  noteNumber: (text: string) => number,
+): PrintLine {
+  const readings = worksheet.cases.map((one) => source.reading(line.id, one.id));
+  const overrides = worksheet.cases.flatMap((one) => {
+    const entry = overrideIn(line, one.id);
+    return entry === undefined ? [] : [{ caseName: one.name, entry }];
+  });
+  const notes = [line.source && `Source: ${line.source}`, line.note].flatMap((text) => (text ? [noteNumber(text)] : []));
+  const radiates = readings.some(({ figure }) =>
+    tellsRadiation(line, figure.state === 'value' ? figure.unit : undefined),
+  );
+  return { line, readings, overrides, notes: [...new Set(notes)], radiates };
+}
+
+/** The working in each case, those that read the same taken together. */
+function workingsOf(cases: readonly Case[], line: Line, source: PrintSource): PrintWorking[] {
+  const found = new Map<string, { caseNames: string[]; working: Working }>();
+  for (const one of cases) {
+    const working = source.working(line.id, one.id);
+    const key = JSON.stringify([working.steps, working.terms]);
+    const same = found.get(key);
+    if (same === undefined) found.set(key, { caseNames: [one.name], working });
+    else same.caseNames.push(one.name);
+  }
+  return [...found.values()].map((one, index) => ({ key: `${line.id} ${String(index)}`, ...one }));
+}
+
+/** Most columns of cases that fit beside each other on a page. */
+const CASES_ABREAST = 5;
+
+/** The worksheet's cases in groups that fit on a page, each with its place among all cases. */
+export function casesAbreast(cases: readonly Case[]): { readonly name: string; readonly index: number }[][] {
+  const numbered = cases.map((one, index) => ({ name: one.name, index }));
+  const groups: { name: string; index: number }[][] = [];
+  for (let start = 0; start < numbered.length; start += CASES_ABREAST)
+    groups.push(numbered.slice(start, start + CASES_ABREAST));
+  return groups;
+}
