@@ -46,7 +46,7 @@ export function takePastedTable(session: Session, preview: PastePreview): void {
 
 /** Brings the cursor to the next open finding below the selected line, or the one before; round the end. */
 export function goToFinding(session: Session, direction: 1 | -1): void {
-  const lineIds = [...new Set(session.evaluation.sheetFindings().filter(isOpen).map((finding) => finding.lineId))];
+  const lineIds = [...new Set(session.sheetFindings().filter(isOpen).map((finding) => finding.lineId))];
   if (lineIds.length === 0) {
     session.announce('There are no open findings.');
     return;
@@ -63,6 +63,6 @@ export function goToFinding(session: Session, direction: 1 | -1): void {
 /** Brings the cursor to a line with findings and says the first of them. */
 export function jumpToFinding(session: Session, lineId: string, finding?: LineFinding): void {
   session.select(lineId, finding?.caseIds[0]);
-  const first = finding ?? session.evaluation.findings(lineId).find(isOpen);
+  const first = finding ?? session.findings(lineId).find(isOpen);
   if (first !== undefined) session.announce(first.message);
 }

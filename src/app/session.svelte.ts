@@ -35,6 +35,7 @@ import {
 } from '../worksheet';
 import { Announcer } from './announcer.svelte';
 import { countFindings, passSentence, type FindingCounts } from './finding-counts';
+import { joinFindings } from './joined-findings';
 import { Keeping, type KeepState, type KeptWorksheet } from './keeping.svelte';
 import { Library } from './library.svelte';
 import { Selection } from './selection.svelte';
@@ -78,6 +79,8 @@ export class Session {
   importChoice = $state.raw<ImportChoice | null>(null);
   /** A table that was pasted, for its preview, and where its lines are to go. */
   paste = $state.raw<{ readonly text: string; readonly place: Place } | null>(null);
+  /** The line whose cell was changed last: its working and its repair are at hand although the cursor has gone on. */
+  lastEditedLineId = $state<string | null>(null);
   focusRequest = $state.raw<FocusRequest | null>(null);
   /** What the last edit changed, for figures that glow. */
   lastPass = $state.raw<Pass | null>(null);
@@ -87,6 +90,7 @@ export class Session {
   #version = $state(0);
   /** Why the worksheet cannot be changed at all, or null. */
   #fileReadOnly = $state<string | null>(null);
+  #sheetFindings = $state.raw<readonly LineFinding[]>([]);
   #counts = $state.raw<FindingCounts>({ errors: 0, warnings: 0, notes: 0 });
 
   constructor(settings: Settings, opened: Result<Store, PlainFault>) {
@@ -120,16 +124,15 @@ export class Session {
     return this.#evaluation.reading(lineId, caseId);
   }
 
-  /** A line's findings, accepted ones too, kept current in components. */
+  /** A line's findings, joined over cases, accepted ones too; kept current in components. */
   findings(lineId: string): readonly LineFinding[] {
     void this.#version;
-    return this.#evaluation.findings(lineId);
+    return joinFindings(this.worksheet, this.#evaluation.findings(lineId));
   }
 
-  /** All findings in the order of the worksheet, kept current in components. */
+  /** All findings in the order of the worksheet, joined over cases; kept current in components. */
   sheetFindings(): readonly LineFinding[] {
-    void this.#version;
-    return this.#evaluation.sheetFindings();
+    return this.#sheetFindings;
   }
 
   /** How many findings are open. */
@@ -383,7 +386,8 @@ export class Session {
     this.#evaluation = new Evaluation(worksheet);
     this.#version += 1;
     this.lastPass = null;
-    this.#counts = countFindings(this.#evaluation.sheetFindings());
+    this.lastEditedLineId = null;
+    this.#findFindings();
     this.selection.put(null, worksheet.cases[0]?.id ?? '');
     this.focusRequest = { focus: { kind: 'worksheet' }, edit: false };
   }
@@ -406,11 +410,16 @@ export class Session {
     this.lastPass = pass;
     this.#version += 1;
     const before = this.#counts;
-    this.#counts = countFindings(this.#evaluation.sheetFindings());
+    this.#findFindings();
     this.announce(passSentence(pass.changed.size, before, this.#counts));
     const { cases } = this.worksheet;
     if (!cases.some((one) => one.id === this.selection.caseId)) this.selection.caseId = cases[0]?.id ?? '';
     this.#commit();
+  }
+
+  #findFindings(): void {
+    this.#sheetFindings = joinFindings(this.worksheet, this.#evaluation.sheetFindings());
+    this.#counts = countFindings(this.#sheetFindings);
   }
 
   #commit(): void {

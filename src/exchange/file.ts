@@ -66,7 +66,10 @@ function readLater(document: Readonly<Record<string, unknown>>, version: number)
   const later = `This file is of version ${String(version)} of the format; version ${String(WORKSHEET_VERSION)} is the last one known here`;
   const read = readDocument(document);
   if (read.ok)
-    return ok({ ...read.value, readOnly: `${later}. It can be looked at but not changed: a newer Levelwright can.` });
+    return ok({
+      ...read.value,
+      readOnly: `${later}. It can be looked at, not changed; a newer Levelwright can change it.`,
+    });
   const { path } = read.fault;
   return fail({
     code: 'later-version',
@@ -81,10 +84,10 @@ function messagesOn(worksheet: Worksheet): string[] {
   const unknown = new Map<string, number>();
   for (const line of allLines(worksheet))
     for (const id of Object.keys(line.byCase ?? {})) if (!known.has(id)) unknown.set(id, (unknown.get(id) ?? 0) + 1);
-  const messages = [...unknown].map(
-    ([id, count]) =>
-      `${count === 1 ? 'One line has an entry' : `${String(count)} lines have entries`} for the case “${id}”, which this worksheet does not have. They are kept and not used.`,
-  );
+  const messages = [...unknown].map(([id, count]) => {
+    const what = count === 1 ? 'One line has an entry' : `${String(count)} lines have entries`;
+    return `${what} for the case “${id}”, which this worksheet does not have; kept and not used.`;
+  });
   const others = worksheet.sections.filter((section) => !isLinesSection(section));
   if (others.length > 0) {
     const names = others.map((section) => `“${section.title === '' ? section.id : section.title}” (${section.kind})`);

@@ -16,11 +16,11 @@ interface CatalogueEntry {
 const given = (value: string | undefined, sentence: (value: string) => string): string =>
   value === undefined ? '' : sentence(value);
 
-/** “… gives X: `repair`”, as far as known. */
-const instead = (facts: Facts, verb: string): string =>
+/** “Probably meant: `repair`, which gives X.”, as far as known. */
+const instead = (facts: Facts, lead: string): string =>
   facts['repair'] === undefined
     ? ''
-    : ` ${verb}${given(facts['meant'], (meant) => `, ${meant}`)}: ${facts['repair']}`;
+    : ` ${lead}: ${facts['repair']}${given(facts['meant'], (meant) => `, which gives ${meant}`)}.`;
 
 const entry = (
   severity: Severity,
@@ -38,8 +38,8 @@ export const CATALOGUE = {
     'Adding decibel levels multiplies their powers: the result is a power squared and means nothing.',
     (x) =>
       `${f(x, 'levels')} are levels and are added. In decibels that multiplies their powers${given(x['now'], (now) => `: the sum would read ${now}`)}.` +
-      instead(x, 'Added as powers they make') +
-      given(x['inPhase'], (figure) => ` (in phase, as fields, ${figure})`),
+      instead(x, 'Added as powers') +
+      given(x['inPhase'], (figure) => ` In phase, as fields, they would make ${figure}.`),
   ),
   'unit-mismatch': entry(
     'error',
@@ -56,7 +56,7 @@ export const CATALOGUE = {
     'A linear quantity with a unit has no place in a decibel sum: its figure depends on the unit chosen.',
     (x) =>
       `${f(x, 'linear')} is linear (${f(x, 'linearUnit')}) and stands ${f(x, 'where')}${given(x['now'], (now) => `: figure by figure that would read ${now}`)}.` +
-      instead(x, 'In one form it is'),
+      instead(x, 'In one form'),
   ),
   'decibels-multiplied': entry(
     'error',
@@ -80,7 +80,7 @@ export const CATALOGUE = {
     'An attenuation per length becomes a loss only when multiplied by a length.',
     (x) =>
       `${f(x, 'rate')} is in decibels per length and stands ${f(x, 'where')}${given(x['now'], (now) => `; its bare figure would give ${now}`)}.` +
-      instead(x, 'Times a length it is'),
+      instead(x, 'Times a length'),
   ),
   'field-and-power': entry(
     'error',
@@ -88,7 +88,7 @@ export const CATALOGUE = {
     'Volts become watts only through an impedance: dBµV less dBΩ is a power level.',
     (x) =>
       `${f(x, 'what')} is a level of ${f(x, 'found')}, not of ${f(x, 'declared')}${given(x['now'], (now) => `: the figures give ${now}`)}. An impedance is missing.` +
-      instead(x, 'With 50 Ω it is'),
+      instead(x, 'With 50 Ω'),
   ),
   'density-and-level': entry(
     'error',
@@ -96,7 +96,7 @@ export const CATALOGUE = {
     'A power per hertz and a power cannot be added or compared until a bandwidth is stated.',
     (x) =>
       `${f(x, 'densities')} per hertz and ${f(x, 'levels')} as whole power stand together in ${f(x, 'where')}${given(x['now'], (now) => `; by their bare figures that would read ${now}`)}.` +
-      instead(x, 'In one bandwidth it is'),
+      instead(x, 'In one bandwidth'),
   ),
   'no-power': entry(
     'error',
@@ -159,7 +159,7 @@ export const CATALOGUE = {
     'Ratios to a common signal combine through their powers, not by adding their decibels.',
     (x) =>
       `${f(x, 'ratios')} are ratios to a signal and are added${given(x['now'], (now) => `: ${now}`)}.` +
-      instead(x, 'Combined as powers they make'),
+      instead(x, 'Combined as powers'),
   ),
   'noise-figures-summed': entry(
     'warning',
@@ -191,7 +191,7 @@ export const CATALOGUE = {
     'The mean of decibel figures is the geometric mean of the powers, not the mean power.',
     (x) =>
       `The mean of decibel figures${given(x['now'], (now) => `, ${now},`)} is not the mean power.` +
-      instead(x, 'The powers average to'),
+      instead(x, 'As powers'),
   ),
   'bandwidths-differ': entry(
     'warning',
@@ -199,7 +199,7 @@ export const CATALOGUE = {
     'Noise powers can be combined or compared only in one bandwidth.',
     (x) =>
       `${f(x, 'first')} is in ${f(x, 'firstBandwidth')} and ${f(x, 'second')} in ${f(x, 'secondBandwidth')}${given(x['now'], (now) => `; the result now is ${now}`)}.` +
-      instead(x, 'In one bandwidth it is'),
+      instead(x, 'In one bandwidth'),
   ),
   'outside-validity': entry(
     'warning',
@@ -230,7 +230,7 @@ export const CATALOGUE = {
     'A ratio of voltages or fields is 20 log10 in decibels; 10 log10 gives half of it.',
     (x) =>
       `${f(x, 'what')} takes 10 log10 of a ratio of two voltages or fields${given(x['now'], (now) => ` and gives ${now}, half the decibels`)}.` +
-      instead(x, 'In decibels it is'),
+      instead(x, 'In decibels'),
   ),
   'negative-figure': entry(
     'warning',
@@ -244,7 +244,7 @@ export const CATALOGUE = {
     'A positive loss lowers a level; adding it is right only when a requirement is referred back.',
     (x) =>
       `${f(x, 'loss')} is a loss of ${f(x, 'size')} and enters with +${given(x['now'], (now) => `: ${now}`)}. That is right only when a requirement is referred back.` +
-      instead(x, 'Taken off it makes'),
+      instead(x, 'Taken off'),
   ),
   'negative-loss': entry(
     'note',
@@ -275,7 +275,7 @@ export const CATALOGUE = {
     'A number without a unit in a decibel sum is taken as dB.',
     (x) =>
       `${f(x, 'number')} has no unit and counts as ${f(x, 'decibels')}${given(x['now'], (now) => ` (${now})`)}.` +
-      given(x['repair'], (repair) => ` Write ${repair}`),
+      given(x['repair'], (repair) => ` Write ${repair}.`),
   ),
   cancellation: entry(
     'note',

@@ -56,8 +56,9 @@ export class Context {
   /** The line that most likely states a length, for repairs. */
   lengthTerm(): string | undefined {
     const lines = this.linesOf(LENGTH).filter(({ unit }) => unit.form === 'linear');
-    const named = lines.find(({ symbol, label }) => /^(len|l|length|d)(_.*)?$/i.test(symbol) || /\blength\b/i.test(label));
-    return (named ?? (lines.length === 1 ? lines[0] : undefined))?.symbol;
+    const named = lines.find(({ symbol, label }) => /^(len|l|length)(_.*)?$/i.test(symbol) || /\blength\b/i.test(label));
+    const path = lines.find(({ symbol, label }) => /^d(_.*)?$/.test(symbol) || /\b(distance|path)\b/i.test(label));
+    return (named ?? path ?? (lines.length === 1 ? lines[0] : undefined))?.symbol;
   }
 
   /** Every line that has a type. */

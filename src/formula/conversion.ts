@@ -3,6 +3,7 @@ import {
   findUnit, isDimensionless, isRootPower, raiseDimension, sameDimension, writeQuantity, type DecibelUnit, type LinearUnit, type Unit,
 } from '../quantity';
 import { present } from '../base';
+import type { Repair } from '../findings';
 import { asFactor, type Context } from './context';
 import { decibelsOf, describeType, fittingDecibelUnit, fittingLinearUnit, linearOf, powerDimension } from './forms';
 import { sayRateAlone, sayUnitMismatch } from './mismatch';
@@ -18,8 +19,13 @@ export interface Converted {
   readonly isFitted: boolean;
 }
 
-/** The result in the declared unit, or in one that fits; undefined when it has none (the finding is made). */
-export function convertResult(checked: Checked, declared: Unit | undefined, context: Context): Converted | undefined {
+/**
+ * The result in the declared unit, or in one that fits; undefined when it has none (the finding is made).
+ * `hidden`: the repairs of a bare number that hides a unit, which then come first.
+ */
+export function convertResult(
+  checked: Checked, declared: Unit | undefined, context: Context, hidden: readonly Repair[] | undefined,
+): Converted | undefined {
   const { type, tree } = checked;
   // A quantity typed in the line's own unit is taken as typed, without a way there and back.
   if (tree.type === 'literal' && tree.unit !== null && (declared ?? tree.unit).word === tree.unit.word)
@@ -37,9 +43,9 @@ export function convertResult(checked: Checked, declared: Unit | undefined, cont
     case 'rate':
       return convertRate(checked, type.lengthM, declared, context);
     case 'decibel':
-      return declared === undefined ? ownDecibel(type, checked) : toDeclared({ ...checked, type }, declared, context);
+      return declared === undefined ? ownDecibel(type, checked) : toDeclared({ ...checked, type }, declared, context, hidden);
     case 'linear':
-      return declared === undefined ? ownLinear(type, checked) : toDeclared({ ...checked, type }, declared, context);
+      return declared === undefined ? ownLinear(type, checked) : toDeclared({ ...checked, type }, declared, context, hidden);
   }
 }
 
@@ -75,7 +81,7 @@ function convertRate(checked: Checked, lengthM: number, declared: Unit | undefin
 
 type Result = Checked & { readonly type: DecibelType | LinearType };
 
-function toDeclared(checked: Result, declared: Unit, context: Context): Converted | undefined {
+function toDeclared(checked: Result, declared: Unit, context: Context, hidden: readonly Repair[] | undefined): Converted | undefined {
   const done = (plan: Plan): Converted => ({ unit: declared, plan, isFitted: false });
   const { type } = checked;
   if (type.form === 'linear' && isDimensionless(type.dimension) && type.sort !== 'ratio') {
@@ -90,7 +96,7 @@ function toDeclared(checked: Result, declared: Unit, context: Context): Converte
     const plan = type.form === 'decibel' ? decibelToLinear(type, checked.plan, declared) : linearToLinear(type, checked.plan, declared);
     if (plan !== undefined) return done(plan);
   }
-  sayUnitMismatch(checked, declared, context);
+  sayUnitMismatch(checked, declared, context, hidden);
   return undefined;
 }
 

@@ -3,6 +3,7 @@
  * constant. They hold only for certain units, so a sum with one does not close; the finding names what is meant.
  */
 import { FREQUENCY, isDimensionless, LENGTH, raiseDimension, sameDimension } from '../quantity';
+import type { Repair } from '../findings';
 import type { Context } from './context';
 import { withReplacedTerms, type Grouped } from './repairs';
 import type { Tree } from './tree';
@@ -50,17 +51,24 @@ export function hiddenConstant(terms: readonly SumTerm[]): { term: SumTerm; figu
   return first === undefined ? undefined : { ...first, known: undefined };
 }
 
+/** A bare number that hides a unit, with the repairs that write it out. */
+export interface Hidden {
+  readonly term: SumTerm;
+  readonly repairs: readonly Repair[];
+}
+
 /** Makes the finding for a number that keeps a sum from closing. */
-export function sayConstantHidesUnit(tree: Tree, terms: readonly SumTerm[], context: Context): SumTerm | undefined {
+export function sayConstantHidesUnit(tree: Tree, terms: readonly SumTerm[], context: Context): Hidden | undefined {
   const hidden = hiddenConstant(terms);
   if (hidden === undefined) return undefined;
   const { term, known, figure } = hidden;
   const grouped = freeSpace(terms, term) ?? written(terms, term, figure, known);
+  const repairs: Repair[] = grouped === undefined ? [] : [{ kind: 'entry', title: grouped.title, entry: context.replace(tree, grouped.text) }];
   context.say('constant-hides-unit', term.tree, {
     facts: { number: String(figure).replace('-', '−'), standsFor: known?.standsFor ?? 'something with a unit' },
-    repairs: grouped === undefined ? [] : [{ kind: 'entry', title: grouped.title, entry: context.replace(tree, grouped.text) }],
+    repairs,
   });
-  return term;
+  return { term, repairs };
 }
 
 function written(terms: readonly SumTerm[], term: SumTerm, figure: number, known: Known | undefined): Grouped | undefined {

@@ -13,4 +13,5 @@ export * from './catalogue';
 export { CONSTANTS, type Constant } from './atoms';
 export { parameterAt } from './calls';
 export * from './line';
-export { describeType, linearOf, decibelsOf, termsOf, fittingDecibelUnit } from './forms';
+export * from './complete';
+export { describeType, linearOf, decibelsOf, termsOf, fittingDecibelUnit, fittingLinearUnit } from './forms';

@@ -13,7 +13,7 @@ import { check } from './check';
 import { Context } from './context';
 import { fittingDecibelUnit, isFieldLike, squared, termsOf } from './forms';
 import { parseEntry } from './grammar';
-import { sayConstantHidesUnit, hasDimensionedTerms } from './hidden-units';
+import { sayConstantHidesUnit, hasDimensionedTerms, type Hidden } from './hidden-units';
 import { consume } from './judge';
 import { convertResult } from './conversion';
 import { nearestName } from './nearest';
@@ -21,7 +21,7 @@ import { sayLineRemarks } from './line-remarks';
 import { constantPlan, type Plan } from './plan';
 import { readPlainQuantity, type EntryFault } from './scan';
 import { symbolsOf, type Tree } from './tree';
-import type { Checked, DecibelType, LinearType, RateType, Remark, Scope, SumTerm } from './types';
+import type { Checked, DecibelType, LinearType, RateType, Remark, Scope } from './types';
 
 /** What a person has said of a line. */
 export interface LineSpec {
@@ -165,7 +165,7 @@ function checkRead(spec: LineSpec, read: Exclude<ReadEntry, { form: 'empty' }>, 
 }
 
 /** The finding constant-hides-unit comes before the sum is judged, so that its number gets no second remark. */
-function findHidden(checked: Checked, declared: Unit | undefined, context: Context): SumTerm | undefined {
+function findHidden(checked: Checked, declared: Unit | undefined, context: Context): Hidden | undefined {
   const { type, terms } = checked;
   if (type.form !== 'decibel' || terms === undefined) return undefined;
   const closes =
@@ -181,8 +181,8 @@ function settle(spec: LineSpec, draft: Draft, declared: Unit | undefined, contex
   const checked =
     draft.checked === undefined
       ? undefined
-      : consume(draft.checked, context, { symbol: spec.symbol, label: spec.label, kind: spec.quantity ?? assumed?.kind ?? nameKind(spec), hidden });
-  const converted = checked === undefined || isUnitInError ? undefined : convertResult(checked, declared, context);
+      : consume(draft.checked, context, { symbol: spec.symbol, label: spec.label, kind: spec.quantity ?? assumed?.kind ?? nameKind(spec), hidden: hidden?.term });
+  const converted = checked === undefined || isUnitInError ? undefined : convertResult(checked, declared, context, hidden?.repairs);
   const unit = declared ?? converted?.unit;
   const isInError = converted === undefined || context.waitsFor.length > 0 || context.remarks.some(isErrorRemark);
   const symbols = draft.symbols ?? [];
@@ -264,8 +264,10 @@ function kindOfTerms(checked: Checked | undefined): QuantityKind | undefined {
   if (checked === undefined) return undefined;
   if (checked.terms === undefined) return checked.kind;
   const { terms } = checked;
-  const isLossLike = terms.every(({ kind, coefficient }) => (kind === 'loss' && coefficient > 0) || (kind === 'gain' && coefficient < 0));
-  return isLossLike && terms.some(({ kind }) => kind === 'loss') ? 'loss' : undefined;
+  // Terms about which nothing is known, such as a literal in dB, go with the rest.
+  const known = terms.filter(({ kind, type }) => kind !== undefined || type.meaning?.declared === true);
+  const isLossLike = known.every(({ kind, coefficient }) => (kind === 'loss' && coefficient > 0) || (kind === 'gain' && coefficient < 0));
+  return isLossLike && known.some(({ kind }) => kind === 'loss') ? 'loss' : undefined;
 }
 
 function attributeSide(spec: LineSpec, unit: Unit, kind: AttributedKind | undefined, net: Meaning | undefined): AttributedSide | undefined {

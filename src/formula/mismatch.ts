@@ -12,14 +12,15 @@ import type { Tree } from './tree';
 import type { Checked, DecibelType, LinearType } from './types';
 
 /** Makes the finding unit-mismatch (or field-and-power, or rate-without-length) for a line's result. */
-export function sayUnitMismatch(checked: Checked & { type: DecibelType | LinearType }, declared: Unit, context: Context): void {
+export function sayUnitMismatch(checked: Checked & { type: DecibelType | LinearType }, declared: Unit, context: Context, hidden: readonly Repair[] = []): void {
   const { tree, type } = checked;
   const found = type.form === 'decibel' ? type.dimension : powerDimension(type);
   const wanted = declared.form === 'rate' ? undefined : declared.dimension;
   const extra = wanted === undefined ? undefined : combineDimensions(found, squareOfRoot(wanted, declared), -1);
   const isImpedance = extra !== undefined && (sameDimension(extra, IMPEDANCE) || sameDimension(extra, raiseDimension(IMPEDANCE, -1)));
   const repairs = [
-    ...(extra === undefined || type.form !== 'decibel' ? [] : factorRepairs(tree, extra, context)),
+    ...hidden,
+    ...(extra === undefined || type.form !== 'decibel' || hidden.length > 0 ? [] : factorRepairs(tree, extra, context)),
     ...(type.form === 'decibel' ? powerSumRepairs(checked, context, wanted) : []),
     unitRepair(type),
   ].filter((repair): repair is Repair => repair !== undefined);
@@ -28,7 +29,7 @@ export function sayUnitMismatch(checked: Checked & { type: DecibelType | LinearT
       what: `The result of ${context.textOf(tree)}`,
       found: describeType(type),
       declared: declared.word === '1' ? 'a plain number' : declared.word,
-      ...missing(extra, type.form),
+      ...(hidden.length > 0 ? {} : missing(extra, type.form)),
     },
     repairs,
   });

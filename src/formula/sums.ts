@@ -3,6 +3,7 @@
  * parts alone are not. Here forms are settled, and dimensions, meanings and figures of decibel terms are added up.
  */
 import { assert } from '../base';
+import type { Repair } from '../findings';
 import {
   combineDimensions, combineMeanings, describeDimension, isDimensionless, NEUTRAL, NO_DIMENSION, POWER, POWER_DENSITY, FREQUENCY,
   sameDimension, sameMeaning, UNSAID,
@@ -72,7 +73,7 @@ function addRates(tree: Tree, parts: readonly SignedPart[], context: Context): C
 
 function addDecibels(tree: Tree, parts: readonly SignedPart[], context: Context): Checked {
   const linear = parts.filter(({ checked }) => checked.type.form === 'linear' && !isDimensionless(checked.type.dimension));
-  if (linear.length > 0) return mixedForms(linear, tree, context);
+  if (linear.length > 0) return mixedForms(linear, parts, tree, context);
   const terms = parts.flatMap(({ sign, checked }) =>
     checked.type.form === 'decibel'
       ? scaleTerms(termsOf(checked, context.textOf(checked.tree)), sign)
@@ -166,7 +167,7 @@ function bandwidthOfSum(terms: readonly SumTerm[], dimension: SumTerm['type']['d
   return onlyOrigin(terms, 'bandwidth');
 }
 
-function mixedForms(linear: readonly SignedPart[], tree: Tree, context: Context): Checked {
+function mixedForms(linear: readonly SignedPart[], all: readonly SignedPart[], tree: Tree, context: Context): Checked {
   const [first] = linear;
   assert(first !== undefined && first.checked.type.form === 'linear', 'there is a linear part');
   let repaired = context.entry;
@@ -180,9 +181,21 @@ function mixedForms(linear: readonly SignedPart[], tree: Tree, context: Context)
       linearUnit: describeType(first.checked.type),
       where: 'in a sum of decibels',
     },
-    repairs: [{ kind: 'entry', title: `db(${context.textOf(first.checked.tree)})`, entry: repaired }],
+    repairs: [
+      { kind: 'entry', title: `db(${context.textOf(first.checked.tree)})`, entry: repaired },
+      ...powerSumOfMixed(all, tree, context),
+    ],
   });
   return broken(tree);
+}
+
+/** Watts beside a level in dBm: both are powers and belong in one power sum, which takes either form. */
+function powerSumOfMixed(parts: readonly SignedPart[], tree: Tree, context: Context): Repair[] {
+  const isPower = ({ checked: { type }, sign }: SignedPart): boolean =>
+    sign === 1 && (type.form === 'linear' || type.form === 'decibel') && sameDimension(type.dimension, POWER);
+  if (!parts.every(isPower)) return [];
+  const call = `powersum(${parts.map(({ checked }) => context.textOf(checked.tree)).join(', ')})`;
+  return [{ kind: 'entry', title: call, entry: context.replace(tree, call) }];
 }
 
 function addLinear(tree: Tree, parts: readonly SignedPart[], context: Context): Checked {

@@ -26,7 +26,7 @@ export interface Database {
   readonly dexie: Dexie;
   /** WorksheetRecord by id. */
   readonly worksheets: Table<unknown, string>;
-  /** TextRecord by rev; the key is the database's own counter, so no rev is used twice. */
+  /** TextRecord by rev; the key is the database's own counter, which is never set back. */
   readonly texts: Table<unknown, number>;
   /** CopyEntry by rev: the text itself stays in `texts`, so keeping a copy writes a few bytes only. */
   readonly copies: Table<unknown, number>;
@@ -39,6 +39,8 @@ export interface DatabaseOptions {
   readonly name: string;
   readonly indexedDB?: IDBFactory;
   readonly IDBKeyRange?: typeof IDBKeyRange;
+  /** The clock, in milliseconds since 1970. */
+  readonly now: () => number;
 }
 
 /** The tables of a database that is not open yet. */
@@ -53,10 +55,14 @@ export function describeDatabase(options: DatabaseOptions): Database {
   if (options.IDBKeyRange !== undefined) dexieOptions.IDBKeyRange = options.IDBKeyRange;
   const dexie = new Dexie(options.name, dexieOptions);
   dexie.version(tablesVersion).stores({ worksheets: 'id', texts: '++', copies: 'rev, worksheetId', settings: 'key' });
+  const texts: Database['texts'] = dexie.table('texts');
+  // A browser may throw the whole database away, and the counter of the next one must not come by the same numbers while
+  // a tab still knows them: it starts at the time of its making.
+  dexie.on('populate', () => texts.add({ text: '' }, options.now()).then((key) => texts.delete(key)));
   return {
     dexie,
     worksheets: dexie.table('worksheets'),
-    texts: dexie.table('texts'),
+    texts,
     copies: dexie.table('copies'),
     settings: dexie.table('settings'),
   };

@@ -6,11 +6,11 @@
 export { openStore } from './open-store';
 export type { OpenOptions } from './open-store';
 export type { Saved, Store, WorksheetSave, WorksheetText } from './store';
-export type { CopyEntry, JsonValue, RecoveryCopy, StoredWorksheet, WorksheetEntry } from './records';
+export type { CopyEntry, JsonValue, RecoveryCopy, Standing, StoredWorksheet, WorksheetEntry } from './records';
 export type { ConflictFault, MissingFault, PlainFault, StoreFault, UnreadableFault } from './store-fault';
 export type { StoreTrouble } from './database';
 export { Saver } from './saver';
-export type { SaverOptions, SaveState } from './saver';
+export type { SaverOptions, SaveState, TextProducer } from './saver';
 export { WorksheetClaim } from './presence';
 export type { ClaimOptions, ClaimState, LockAccess, NoticeChannel } from './presence';
 export { askPersistence, estimateStorage } from './persistence';

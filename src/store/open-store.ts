@@ -17,8 +17,6 @@ export interface OpenOptions extends Partial<DatabaseOptions> {
   readonly formatVersion: number;
   /** Told of trouble with the connection, from the start of the opening on. */
   readonly onTrouble?: (trouble: StoreTrouble) => void;
-  /** The clock, in milliseconds since 1970. */
-  readonly now?: () => number;
   /** Longest wait for the opening, in milliseconds. */
   readonly patienceMs?: number;
 }
@@ -31,9 +29,10 @@ const defaultPatienceMs = 10_000;
  * `quota`; the page then works without a store and offers files alone, and may call this again.
  */
 export async function openStore(options: OpenOptions): Promise<Result<Store, PlainFault>> {
-  const database = describeDatabase({ ...options, name: options.name ?? defaultName });
+  const now = options.now ?? Date.now;
+  const database = describeDatabase({ ...options, name: options.name ?? defaultName, now });
   const { dexie } = database;
-  const store = new Store(database, options.formatVersion, options.now ?? Date.now);
+  const store = new Store(database, options.formatVersion, now);
   const tell = options.onTrouble ?? ((): void => undefined);
 
   // Answering false keeps Dexie's own handlers from running: they write to the console and close at once.

@@ -14,7 +14,7 @@ export interface WorksheetEntry {
   readonly savedAt: number;
   /** When it was moved to the trash, or null. */
   readonly deletedAt: number | null;
-  /** Names the stored text: never used twice in one database, greater for a later save. */
+  /** Names the stored text: never used twice in this browser, greater for a later save. */
   readonly rev: number;
   /** Length of the text in UTF-16 units. */
   readonly size: number;

@@ -9,8 +9,8 @@ import {
   type FileFault,
   type ReadWorksheet,
 } from '../../src/exchange';
-import { allLines, type Worksheet } from '../../src/worksheet';
-import { MANY, worksheets } from '../worksheet/arbitrary';
+import { allLines, applyAll, editProblem, type Worksheet } from '../../src/worksheet';
+import { editDraws, editOf, MANY, worksheets } from '../worksheet/arbitrary';
 import { EXAMPLE, exampleDocument } from './example';
 
 function read(text: string): ReadWorksheet {
@@ -82,7 +82,7 @@ describe('a good file', () => {
     const { worksheet, messages } = read(text);
     expect(allLines(worksheet)[1]?.byCase).toEqual({ ice: '1 dB' });
     expect(messages[0]).toBe(
-      'One line has an entry for the case “ice”, which this worksheet does not have. They are kept and not used.',
+      'One line has an entry for the case “ice”, which this worksheet does not have; kept and not used.',
     );
   });
 
@@ -121,6 +121,21 @@ describe('laws', () => {
         expect(text.endsWith('}\n')).toBe(true);
       }),
       { numRuns: 300 },
+    );
+  });
+
+  it('a worksheet that edits have changed without a problem can be read again', MANY, () => {
+    fc.assert(
+      fc.property(worksheets, fc.array(editDraws, { maxLength: 10 }), (start, draws) => {
+        let worksheet = start;
+        for (const draw of draws) {
+          const edit = editOf(worksheet, draw);
+          if (edit === undefined || editProblem(worksheet, edit) !== undefined) continue;
+          worksheet = applyAll(worksheet, edit.changes).worksheet;
+        }
+        expect(read(writeWorksheetFile(worksheet)).worksheet).toEqual(worksheet);
+      }),
+      { numRuns: 200 },
     );
   });
 

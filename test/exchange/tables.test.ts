@@ -247,6 +247,17 @@ describe('a pasted table', () => {
     expect(preview.decimalSign).toBe(sign);
   });
 
+  it.each(['10 3', "1'2", '1.2.3', '1,23,4', '1.234,56.7', '1 234 56', '3 dB or so', `${'1'.repeat(65)} dB`])(
+    'takes %s for no figure, and keeps it as it stands',
+    (cell) => {
+      const preview = previewTable(`Loss\t1 dB\nGain\t${cell}`);
+      expect(short(preview)).toMatchObject({
+        rows: [' | Loss | 1 dB | ', ` | Gain | ${cell} | `],
+        problems: ['not-a-quantity 2'],
+      });
+    },
+  );
+
   it('follows what the person decides', () => {
     const text = 'Loss\t1,234\tdB\nGain\t2\tdB';
     expect(previewTable(text, { decimalSign: 'point' }).rows[0]?.entry).toBe('1234 dB');

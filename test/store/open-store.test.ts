@@ -4,7 +4,18 @@ import { afterEach, describe, expect, it, vi } from 'vitest';
 import { openStore } from '../../src/store';
 import type { StoreTrouble } from '../../src/store';
 
-import { createSheet, faultOf, newBrowser, openRaw, openTab, sheet, textOf, until, valueOf } from './support';
+import {
+  createSheet,
+  faultOf,
+  newBrowser,
+  openRaw,
+  openTab,
+  sheet,
+  TestClock,
+  textOf,
+  until,
+  valueOf,
+} from './support';
 
 const laterVersion = 20; // Dexie's version 2: the first tables are 1, and it counts in tenths.
 
@@ -143,14 +154,18 @@ describe('a connection that the browser closes', () => {
   it('because the storage is cleared does not stand in the way, and the loss is told by the next save', async () => {
     const browser = newBrowser();
     const troubles: StoreTrouble[] = [];
-    const store = await openTab(browser, { onTrouble: (trouble) => troubles.push(trouble) });
+    const clock = new TestClock(Date.UTC(2031, 4, 6));
+    const store = await openTab(browser, { onTrouble: (trouble) => troubles.push(trouble), now: clock.now });
     const { rev } = await createSheet(store, 'a', 'one');
+    clock.time += 1000;
     await new Promise((resolve) => {
       browser.indexedDB.deleteDatabase('levelwright').onsuccess = resolve;
     });
     expect(troubles).toEqual(['closed']);
     expect(faultOf(await store.save({ id: 'a', ...sheet('two'), basedOn: rev })).code).toBe('missing');
+    // Kept anew by one tab, it is safe from another that still goes by the lost database.
     await createSheet(store, 'a', 'two');
+    expect(faultOf(await store.save({ id: 'a', ...sheet('three'), basedOn: rev })).code).toBe('conflict');
     expect(await textOf(store, 'a')).toBe('two');
   });
 

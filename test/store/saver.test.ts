@@ -177,9 +177,10 @@ async function twoTabs(): Promise<{ stores: [Store, Store]; left: Saver; right: 
 describe('a saver on a store', () => {
   it('writes soon after the commit, unasked', async () => {
     const { stores, left } = await twoTabs();
+    const { rev } = left;
     const saved = new Promise<void>((resolve) => {
       left.subscribe((state) => {
-        if (state.kind === 'saved' && left.rev > 1) resolve();
+        if (state.kind === 'saved' && left.rev > rev) resolve();
       });
     });
     left.commit(() => sheet('one'));

@@ -28,7 +28,7 @@ export function keepText(model: GridModel, text: string, move: Move): string | u
     const edit = editOf(session.worksheet, row, editing.cell, text);
     if (!edit.ok) return edit.fault;
     if (!session.perform(edit.value)) return session.readOnlyReason ?? undefined;
-    if (row.kind === 'line' && edit.value.changes.length > 0) model.lastEditedLineId = row.line.id;
+    if (row.kind === 'line' && edit.value.changes.length > 0) session.lastEditedLineId = row.line.id;
     key = keyAfter(row, edit.value.focus) ?? key;
   }
   model.editing = null;

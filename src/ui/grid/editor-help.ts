@@ -5,7 +5,8 @@
  */
 import type { Session } from '../../app/session.svelte';
 import type { Finding } from '../../findings';
-import { completionsAt, FUNCTIONS, type Completion, type FunctionEntry } from '../../formula';
+import { FUNCTIONS, type FunctionEntry } from '../../formula';
+import { completionsAt, type Completion } from '../../formula/complete';
 import type { Reading } from '../../engine';
 import { allLines, proposeSymbol, symbolsIn } from '../../worksheet';
 import { callAt } from './call-at';

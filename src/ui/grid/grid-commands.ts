@@ -213,9 +213,9 @@ function findingsAtHand(model: GridModel): readonly LineFinding[] {
   const row = model.cursorRow;
   if (row?.kind === 'finding') return [row.finding];
   const own = row?.kind === 'line' ? row.findings.filter(isOpen) : [];
-  if (own.length > 0 || model.lastEditedLineId === null) return own;
   const { session } = model;
-  return session.evaluation.findings(model.lastEditedLineId).filter(isOpen);
+  if (own.length > 0 || session.lastEditedLineId === null) return own;
+  return session.findings(session.lastEditedLineId).filter(isOpen);
 }
 
 function repair(model: GridModel): void {

@@ -59,8 +59,6 @@ export class GridModel {
   menuRow = $state<string | null>(null);
   /** The cell where a run of Tab began, or null: Enter goes back below it. */
   runStart: CellName | null = null;
-  /** The line whose cell was changed last: its repair is one key away although the cursor has gone on. */
-  lastEditedLineId: string | null = null;
 
   #collapsed = $state.raw<ReadonlySet<string>>(new Set());
   #folding = $state.raw<ReadonlyMap<string, boolean>>(new Map());
@@ -69,6 +67,7 @@ export class GridModel {
   readonly #measured = new Map<string, number>();
   /** The column that up and down keep to. */
   #wanted: CellName = 'symbol';
+  #lastIndex = 0;
   /** The row that is to stay where it is, and its distance from the top of the view. */
   #anchor = { row: '', offset: 0 };
   #scroller: HTMLElement | null = null;
@@ -166,6 +165,7 @@ export class GridModel {
   /** Puts the cursor on a cell and selects its line. With `extend`, the lines up to there are selected. */
   put(cell: Cell, options: { readonly extend?: boolean; readonly keepWanted?: boolean } = {}): void {
     this.cursor = cell;
+    this.#lastIndex = Math.max(this.indexOf(cell.row), 0);
     if (options.keepWanted !== true) this.#wanted = cell.cell;
     const row = this.rows[this.indexOf(cell.row)];
     const lineId = row?.kind === 'line' ? row.line.id : row?.kind === 'finding' ? row.line.id : null;
@@ -219,6 +219,19 @@ export class GridModel {
     const layout = this.#layout;
     const first = layout.at(this.scrollTop);
     return Math.max(layout.at(this.scrollTop + this.viewHeight - this.headerHeight) - first - 1, 1);
+  }
+
+  /**
+   * Finds a place for a cursor whose row is gone: on the line of a finding that was put right, else near where it was.
+   * Call it after the rows have changed.
+   */
+  rescueCursor(): void {
+    if (this.cursorRow !== undefined) return;
+    const { lineId } = this.session.selection;
+    const line = lineId === null ? undefined : this.rows[this.indexOf(lineKey(lineId))];
+    const near = line ?? this.rows[Math.min(this.#lastIndex, this.rows.length - 1)];
+    if (near === undefined) return;
+    this.put({ row: near.key, cell: cellNearest(near, this.columns, this.#wanted) }, { keepWanted: true });
   }
 
   /** Puts the cursor where an edit, an undo or another part of the page wants it. */

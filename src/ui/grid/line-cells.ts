@@ -48,10 +48,12 @@ const WITH_ARTICLE: Readonly<Record<QuantityKind, string>> = {
   plain: 'plain',
 };
 
-/** `assumed: a loss`, for a kind that was read from the line's name alone; else undefined. */
+/** `assumed: a loss`, for a kind that was read from the line's name and not from its unit as well; else undefined. */
 export function assumption(reading: Reading): string | undefined {
-  const { kind } = reading;
-  return kind?.origin === 'name' ? `assumed: ${WITH_ARTICLE[kind.kind]}` : undefined;
+  const { kind, figure } = reading;
+  if (kind?.origin !== 'name') return undefined;
+  const isPlain = figure.state === 'value' && figure.unit.defaultKind === kind.kind;
+  return isPlain ? undefined : `assumed: ${WITH_ARTICLE[kind.kind]}`;
 }
 
 /** The worst severity among the open findings, or null. */

@@ -5,7 +5,7 @@
 import type { LineFinding, Reading } from '../../engine';
 import type { Working } from '../../review';
 import { isLinesSection, overrideIn, type Case, type Line, type Worksheet } from '../../worksheet';
-import { tellsRadiation } from './cautions';
+import { tellsRadiation } from '../../review';
 import { groupFindings, type FindingItem } from './finding-groups';
 
 /** Where the printed figures come from. */

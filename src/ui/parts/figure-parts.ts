@@ -54,6 +54,12 @@ export function figureText(figure: Figure, digits?: number): string {
   return `${parts.whole}${parts.fraction}${parts.unit === '' ? '' : ` ${parts.unit}`}`;
 }
 
+/** The linear value of a decibel figure in one string, else undefined. */
+export function linearText(figure: Figure): string | undefined {
+  const linear = figure.state === 'value' ? linearFigure(figure.value, figure.unit) : undefined;
+  return linear === undefined ? undefined : writeLinear(linear);
+}
+
 /** A linear value in words: a ratio has its sign first. */
 export function writeLinear(linear: { readonly text: string; readonly unit: string }): string {
   if (linear.unit === '×') return `× ${linear.text}`;
@@ -61,7 +67,5 @@ export function writeLinear(linear: { readonly text: string; readonly unit: stri
 }
 
 function waitingWords(roots: readonly string[]): string {
-  const [first, ...others] = roots;
-  if (first === undefined) return 'waits';
-  return others.length === 0 ? `waits for ${first}` : `waits for ${first} + ${String(others.length)}`;
+  return roots.length === 0 ? 'waits' : `waits for ${roots.join(', ')}`;
 }

@@ -4,7 +4,7 @@ import { EDITOR_KEYS, KEY_BINDINGS, keyLabel, type KeyGroup } from '../../app/ke
 /** A group of keys in the overview. */
 export interface ShownKeyGroup {
   readonly title: string;
-  readonly keys: readonly { readonly keys: readonly string[]; readonly does: string }[];
+  readonly keys: readonly { readonly keys: readonly string[]; readonly says: string }[];
 }
 
 const GROUPS: readonly KeyGroup[] = ['Moving', 'Lines', 'Findings', 'The page'];
@@ -15,9 +15,9 @@ export function keyGroups(): readonly ShownKeyGroup[] {
     title,
     keys: KEY_BINDINGS.filter((one) => one.group === title).map((one) => ({
       keys: one.keys.map(keyLabel),
-      does: one.says,
+      says: one.says,
     })),
   }));
-  const editor = EDITOR_KEYS.map((one) => ({ keys: one.keys.map(keyLabel), does: one.says }));
+  const editor = EDITOR_KEYS.map((one) => ({ keys: one.keys.map(keyLabel), says: one.says }));
   return [...groups, { title: 'While typing in a cell', keys: editor }];
 }

@@ -1,6 +1,6 @@
 /** The cautions that stand in *About*, in print, and beside lines that tell how strongly something radiates. */
-import { FIELD, MAGNETIC_FIELD, POWER_FLUX, TIME, combineDimensions, raiseDimension, sameDimension } from '../../quantity';
-import type { Dimension, Unit } from '../../quantity';
+import { FIELD, MAGNETIC_FIELD, POWER_FLUX, TIME, combineDimensions, raiseDimension, sameDimension } from '../quantity';
+import type { Dimension, Unit } from '../quantity';
 
 /** What every account of results has to say, a sentence or two each. */
 export const CAUTIONS: readonly string[] = [

@@ -1,0 +1,139 @@
+/** `evaluate`: figures, requirements and findings of a worksheet, as text, JSON, Markdown or CSV. */
+import type { Evaluation, LineFinding, Reading } from '../engine';
+import { fittingLinearUnit } from '../formula';
+import { linearValue, type LinearUnit, type Unit } from '../quantity';
+import type { Case, Line } from '../worksheet';
+import type { Answer, ExitCode, World } from './answer';
+import { chooseCases, lineWithSymbol, nameOfLine, openFile } from './open';
+import { writeCsv, writeMarkdown, writeText } from './tables';
+
+export const FORMATS = ['text', 'json', 'markdown', 'csv'] as const;
+export type Format = (typeof FORMATS)[number];
+
+export interface EvaluateOptions {
+  readonly cases: readonly string[];
+  readonly lines: readonly string[];
+  readonly format: Format;
+  readonly linear: boolean;
+}
+
+/** What is to be written: the chosen lines and cases of an evaluation, with their findings. */
+export interface Selection {
+  readonly evaluation: Evaluation;
+  readonly cases: readonly Case[];
+  readonly lines: readonly Line[];
+  readonly findings: readonly LineFinding[];
+  readonly linear: boolean;
+}
+
+/** Evaluates a file. Findings and the exit code are those of the chosen lines and cases. */
+export function evaluateFile(file: string, options: EvaluateOptions, world: World): Answer {
+  const opened = openFile(file, world);
+  const { evaluation } = opened;
+  const cases = chooseCases(opened, options.cases);
+  const chosen = new Set(options.lines.map((symbol) => lineWithSymbol(opened, symbol).id));
+  const lines = evaluation.lines().filter(({ id }) => chosen.size === 0 || chosen.has(id));
+  const caseIds = new Set(cases.map(({ id }) => id));
+  const findings = evaluation
+    .sheetFindings()
+    .filter(({ lineId }) => chosen.size === 0 || chosen.has(lineId))
+    .map((finding) => ({ ...finding, caseIds: finding.caseIds.filter((id) => caseIds.has(id)) }))
+    .filter(({ caseIds: found }) => found.length > 0);
+  const selection = { evaluation, cases, lines, findings, linear: options.linear };
+  return { results: write(selection, options.format), messages: opened.messages, exitCode: exitCodeOf(selection) };
+}
+
+function write(selection: Selection, format: Format): string {
+  switch (format) {
+    case 'json':
+      return `${JSON.stringify(asJson(selection), null, 2)}\n`;
+    case 'text':
+      return writeText(selection);
+    case 'markdown':
+      return writeMarkdown(selection);
+    case 'csv':
+      return writeCsv(selection);
+  }
+}
+
+/** 1 when an error finding or an unmet requirement is among what was chosen. */
+export function exitCodeOf({ evaluation, cases, lines, findings }: Omit<Selection, 'linear'>): ExitCode {
+  const hasError = findings.some(({ severity }) => severity === 'error');
+  const isUnmet = lines.some(({ id, requirement }) => requirement !== undefined && cases.some((one) => evaluation.reading(id, one.id).requirement?.met === false));
+  return hasError || isUnmet ? 1 : 0;
+}
+
+/** The object of the contract. Maps are built without a prototype, since symbols are text from a file. */
+function asJson({ evaluation, cases, lines, findings }: Selection): unknown {
+  const byName = Object.create(null) as Record<string, unknown>;
+  const names = new Map(lines.map((line) => [line.id, nameOfLine(evaluation, line)]));
+  for (const line of lines) byName[names.get(line.id) ?? line.id] = lineAsJson(evaluation, line, cases);
+  return {
+    title: evaluation.worksheet.title,
+    cases: cases.map(({ id }) => id),
+    lines: byName,
+    findings: findings.flatMap((finding) =>
+      finding.caseIds.map((caseId) => ({
+        code: finding.code,
+        severity: finding.severity,
+        line: names.get(finding.lineId) ?? finding.lineId,
+        case: caseId,
+        message: finding.message,
+        repair: repairText(finding),
+        accepted: finding.accepted !== undefined,
+      })),
+    ),
+  };
+}
+
+/** The first repair in words: the new entry, the unit or the kind. */
+export function repairText({ repairs }: LineFinding): string | null {
+  const [repair] = repairs;
+  if (repair === undefined) return null;
+  return repair.kind === 'entry' ? repair.entry : repair.title;
+}
+
+function lineAsJson(evaluation: Evaluation, line: Line, cases: readonly Case[]): unknown {
+  const readings = cases.map(({ id }) => evaluation.reading(line.id, id));
+  const valued = readings.find(({ figure }) => figure.state === 'value') ?? readings[0];
+  const unit = valued?.figure.state === 'value' ? valued.figure.unit.word : (line.unit ?? null);
+  return {
+    label: line.label,
+    unit,
+    quantity: valued?.kind?.kind ?? null,
+    side: valued?.side?.side ?? null,
+    cases: Object.fromEntries(cases.map(({ id }, index) => [id, caseAsJson(readings[index], unit)])),
+  };
+}
+
+function caseAsJson(reading: Reading | undefined, unit: string | null): unknown {
+  const figure = reading?.figure;
+  if (figure?.state !== 'value') {
+    return { value: null, linear: null, linearUnit: null, ...(figure?.state === 'waiting' ? { waitsFor: figure.roots } : {}) };
+  }
+  const { value } = figure;
+  const linear = linearValue(value, figure.unit) ?? siValue(value, figure.unit);
+  const finite = (number: number): number | null => (Number.isFinite(number) ? number : null);
+  return {
+    value: finite(value),
+    ...(value === -Infinity ? { noPower: true } : {}),
+    // A line that declares no unit may have another one in another case.
+    ...(figure.unit.word === unit ? {} : { unit: figure.unit.word }),
+    linear: finite(linear.value),
+    linearUnit: linear.unit,
+    ...(reading?.requirement === undefined
+      ? {}
+      : { requirement: { met: reading.requirement.met, margin: reading.requirement.margin, unit: reading.requirement.unit } }),
+  };
+}
+
+/** A linear figure in the SI unit of its dimension; rates per metre. */
+function siValue(value: number, unit: Unit): { value: number; unit: string } {
+  if (unit.form === 'rate') return { value: value / unit.lengthM, unit: 'dB/m' };
+  if (unit.form === 'decibel') return { value, unit: unit.word };
+  return { value: value * unit.factor + unit.shift, unit: siWord(unit) };
+}
+
+function siWord(unit: LinearUnit): string {
+  return unit.factor === 1 && unit.shift === 0 ? unit.word : fittingLinearUnit(unit.dimension, []).word;
+}

@@ -1,0 +1,7 @@
+/**
+ * review: what lets other people check a worksheet: the working of a line, values recorded at the last save, and the cautions
+ * that stand beside results. Reads evaluations; changes nothing.
+ */
+export * from './working';
+export * from './recorded';
+export * from './cautions';
