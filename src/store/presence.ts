@@ -1,7 +1,8 @@
 /**
- * One writer per worksheet among the tabs of this browser. What must stay true: at most one tab is `writer` of a
- * worksheet; a tab that is asked to hand over stops first and writes its last edits after; nothing here is needed for
- * safety, since the store's compare-and-set refuses a late save of a tab that has lost the worksheet.
+ * One writer per worksheet among the tabs of this browser. What must stay true: a tab becomes `writer` only with the
+ * worksheet's lock; one that is asked to hand over stops first and writes its last edits after. A tab that does not answer
+ * learns a moment late that it was robbed, so nothing here is needed for safety: the store's compare-and-set refuses the
+ * late save.
  */
 
 /**

@@ -127,8 +127,7 @@ export class Store {
   /** Deletes a worksheet and its recovery copies for good. Only what is in the trash can be purged. */
   purge(id: string): Promise<Answer<void>> {
     return this.#change(id, async (stored) => {
-      if (stored.deletedAt === null)
-        return fail(plainFault('unexpected', 'only a worksheet in the trash can be purged'));
+      if (stored.deletedAt === null) return fail(plainFault('unexpected', 'not in the trash'));
       await this.#deleteForGood(stored);
       return ok(undefined);
     });

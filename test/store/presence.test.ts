@@ -126,23 +126,17 @@ describe('tabs that claim a worksheet', () => {
     await until(() => third.claim.state === 'elsewhere');
   });
 
-  it('are never two writers, when three take over from one another at once', async () => {
+  it('end up with one writer when two take over at once, and with another one when that is closed', async () => {
     const { first, second } = await writerAndWaiting();
     const third = claim();
     await until(() => third.claim.state === 'elsewhere');
-    const all = [first, second, third];
-    let most = 0;
-    for (const { claim: each } of all) {
-      each.subscribe(() => {
-        most = Math.max(most, all.filter(({ claim: { state } }) => state === 'writer').length);
-      });
-    }
+    const all = [first.claim, second.claim, third.claim];
     await Promise.all([second.claim.takeOver(), third.claim.takeOver()]);
-    await until(() => all.filter(({ claim: { state } }) => state === 'lost').length === 2);
-    expect(all.map(({ claim: { state } }) => state).filter((state) => state === 'writer')).toHaveLength(1);
-    expect(most).toBeLessThanOrEqual(2);
-    all.find(({ claim: { state } }) => state === 'writer')?.claim.release();
-    await until(() => all.some(({ claim: { state } }) => state === 'writer'));
+    await until(() => all.filter(({ state }) => state === 'lost').length === 2);
+    const writer = all.find(({ state }) => state === 'writer');
+    writer?.release();
+    await until(() => all.some(({ state }) => state === 'writer'));
+    expect(all.map(({ state }) => state).sort()).toEqual(['lost', 'released', 'writer']);
   });
 
   it('have nothing to take over when they write already', async () => {

@@ -48,12 +48,15 @@ const WITH_ARTICLE: Readonly<Record<QuantityKind, string>> = {
   plain: 'plain',
 };
 
-/** `assumed: a loss`, for a kind that was read from the line's name and not from its unit as well; else undefined. */
-export function assumption(reading: Reading): string | undefined {
+/**
+ * `assumed: a loss`, for a kind that was read from the line's name alone; undefined where the unit or the label says as much
+ * in so many words.
+ */
+export function assumption(reading: Reading, label: string): string | undefined {
   const { kind, figure } = reading;
   if (kind?.origin !== 'name') return undefined;
   const isPlain = figure.state === 'value' && figure.unit.defaultKind === kind.kind;
-  return isPlain ? undefined : `assumed: ${WITH_ARTICLE[kind.kind]}`;
+  return isPlain || label.toLowerCase().includes(kind.kind) ? undefined : `assumed: ${WITH_ARTICLE[kind.kind]}`;
 }
 
 /** The worst severity among the open findings, or null. */

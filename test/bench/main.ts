@@ -1,0 +1,113 @@
+/**
+ * `npm run bench`: load, full recompute, and one edit to settled values, for each sheet, in milliseconds (medians), with ratios
+ * to hand-written closures in the same process. Prints one JSON object and nothing else.
+ */
+import { Evaluation } from '../../src/engine';
+import { applyChange, type Worksheet } from '../../src/worksheet';
+import { handChain, handFanOut, handLattice, handTens, type Baseline } from './closures';
+import { budget, chain, fanOut, lattice, tens } from './sheets';
+
+const COUNT = 10_000;
+
+function median(figures: readonly number[]): number {
+  const sorted = [...figures].sort((a, b) => a - b);
+  return sorted[Math.floor(sorted.length / 2)] ?? NaN;
+}
+
+/** Median time of one call, ms, after a warm-up. */
+function time(run: (round: number) => void, rounds: number): number {
+  for (let round = 0; round < Math.max(3, Math.ceil(rounds / 5)); round++) run(round);
+  return median(
+    Array.from({ length: rounds }, (_, round) => {
+      const start = performance.now();
+      run(round);
+      return performance.now() - start;
+    }),
+  );
+}
+
+interface Case {
+  readonly name: string;
+  readonly sheet: Worksheet;
+  readonly hand: Baseline;
+  /** The line edited, by index, and its figures in turn. */
+  readonly edited: number;
+  readonly entries: readonly [string, string];
+  readonly figures: readonly [number, number];
+}
+
+function measure({ name, sheet, hand, edited, entries, figures }: Case): Record<string, unknown> {
+  const loadMs = time(() => new Evaluation(sheet), 7);
+  const evaluation = new Evaluation(sheet);
+  hand.full();
+  const fullMs = time(() => evaluation.recomputeAll(), 60);
+  const handFullMs = time(() => {
+    hand.full();
+  }, 60);
+  const lineId = `l${String(edited)}`;
+  let worksheet = sheet;
+  let computed = 0;
+  const editMs = time((round) => {
+    const change = { kind: 'set-line', lineId, field: 'entry', value: entries[round % 2] ?? '' } as const;
+    worksheet = applyChange(worksheet, change).worksheet;
+    const start = performance.now();
+    computed = evaluation.edit(worksheet, [change]).computed;
+    settling.push(performance.now() - start);
+  }, 60);
+  const settleMs = median(settling.splice(0));
+  const handEditMs = time((round) => {
+    hand.edit(edited, figures[round % 2] ?? 0);
+  }, 60);
+  return {
+    name,
+    lines: evaluation.lines().length,
+    loadMs,
+    fullRecomputeMs: fullMs,
+    handFullRecomputeMs: handFullMs,
+    fullRatio: fullMs / handFullMs,
+    editWithDocumentMs: editMs,
+    editToSettledMs: settleMs,
+    handEditMs,
+    editRatio: settleMs / handEditMs,
+    computedByEdit: computed,
+  };
+}
+
+const settling: number[] = [];
+
+const rows = 100;
+const width = COUNT / rows;
+const results = [
+  measure({ name: 'chain', sheet: chain(COUNT), hand: handChain(COUNT), edited: 0, entries: ['11 dBm', '12 dBm'], figures: [11, 12] }),
+  measure({ name: 'fan-out', sheet: fanOut(COUNT), hand: handFanOut(COUNT), edited: 0, entries: ['11 dBm', '12 dBm'], figures: [11, 12] }),
+  measure({ name: 'lattice', sheet: lattice(rows, width), hand: handLattice(rows, width), edited: 0, entries: ['-90 dBm', '-91 dBm'], figures: [-90, -91] }),
+  measure({ name: 'ten of 10,000', sheet: tens(COUNT), hand: handTens(COUNT), edited: 5000, entries: ['11 dBm', '12 dBm'], figures: [11, 12] }),
+];
+
+const sixty = budget();
+const evaluation = new Evaluation(sixty);
+let current = sixty;
+const sixtyEdit = time((round) => {
+  const change = { kind: 'set-line', lineId: 'l3', field: 'entry', value: round % 2 === 0 ? '15 dBm' : '16 dBm' } as const;
+  current = applyChange(current, change).worksheet;
+  evaluation.edit(current, [change]);
+}, 200);
+const withheld = evaluation.sheetFindings().filter(({ severity }) => severity === 'error').length;
+
+process.stdout.write(
+  `${JSON.stringify(
+    {
+      node: process.version,
+      sheets: results,
+      budget: {
+        lines: evaluation.lines().length,
+        errors: withheld,
+        loadMs: time(() => new Evaluation(sixty), 60),
+        fullRecomputeMs: time(() => evaluation.recomputeAll(), 200),
+        editMs: sixtyEdit,
+      },
+    },
+    null,
+    2,
+  )}\n`,
+);
