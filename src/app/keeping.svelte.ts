@@ -3,7 +3,16 @@
  * Holds: the state says *saved* only when the last edit is in the database; without a store, edits are said to be kept nowhere.
  */
 import { askPersistence, Saver, WorksheetClaim, type PersistenceAnswer } from '../store';
-import type { ClaimState, ConflictFault, PlainFault, SaveState, Saved, Store, StoreFault, StoredWorksheet } from '../store';
+import type {
+  ClaimState,
+  ConflictFault,
+  PlainFault,
+  SaveState,
+  Saved,
+  Store,
+  StoreFault,
+  StoredWorksheet,
+} from '../store';
 import type { WorksheetSave, WorksheetText } from '../store';
 import type { Result } from '../base';
 
@@ -165,8 +174,7 @@ export class Keeping {
     if (state.kind === 'saved') {
       this.state = state.at === 0 ? { kind: 'new' } : state;
       if (this.#hasEdits && !this.#hasAsked) void this.#askPersistence();
-    }
-    else if (state.kind === 'saving') this.state = { kind: 'saving' };
+    } else if (state.kind === 'saving') this.state = { kind: 'saving' };
     else this.state = state;
   }
 

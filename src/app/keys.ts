@@ -6,11 +6,43 @@
 
 /** What a key can do. */
 export type Action =
-  | 'up' | 'down' | 'left' | 'right' | 'row-start' | 'row-end' | 'sheet-start' | 'sheet-end' | 'page-up' | 'page-down'
-  | 'extend-up' | 'extend-down' | 'select-all' | 'collapse-selection'
-  | 'edit' | 'clear' | 'insert-below' | 'insert-above' | 'duplicate' | 'delete-lines' | 'move-up' | 'move-down'
-  | 'new-section' | 'fold' | 'menu' | 'repair' | 'accept' | 'next-finding' | 'previous-finding'
-  | 'undo' | 'redo' | 'search' | 'linear' | 'save-file' | 'open-file' | 'other-pane' | 'keys';
+  | 'up'
+  | 'down'
+  | 'left'
+  | 'right'
+  | 'row-start'
+  | 'row-end'
+  | 'sheet-start'
+  | 'sheet-end'
+  | 'page-up'
+  | 'page-down'
+  | 'extend-up'
+  | 'extend-down'
+  | 'select-all'
+  | 'collapse-selection'
+  | 'edit'
+  | 'clear'
+  | 'insert-below'
+  | 'insert-above'
+  | 'duplicate'
+  | 'delete-lines'
+  | 'move-up'
+  | 'move-down'
+  | 'new-section'
+  | 'fold'
+  | 'menu'
+  | 'repair'
+  | 'accept'
+  | 'next-finding'
+  | 'previous-finding'
+  | 'undo'
+  | 'redo'
+  | 'search'
+  | 'linear'
+  | 'save-file'
+  | 'open-file'
+  | 'other-pane'
+  | 'keys';
 
 /** Where a key works: in the grid outside an editor, or anywhere on the page. */
 export type KeyPlace = 'grid' | 'page';
@@ -56,7 +88,14 @@ export const KEY_BINDINGS: readonly KeyBinding[] = [
   binding('grid', 'Lines', 'insert-above', 'New line above', 'Ctrl+Shift+Enter', 'Shift+Insert'),
   binding('grid', 'Lines', 'new-section', 'New section below this one', 'Ctrl+Alt+Enter'),
   binding('grid', 'Lines', 'duplicate', 'Duplicate the selected lines', 'Ctrl+D'),
-  binding('grid', 'Lines', 'delete-lines', 'Delete the selected lines, or the section', 'Ctrl+Delete', 'Ctrl+Backspace'),
+  binding(
+    'grid',
+    'Lines',
+    'delete-lines',
+    'Delete the selected lines, or the section',
+    'Ctrl+Delete',
+    'Ctrl+Backspace',
+  ),
   binding('grid', 'Lines', 'move-up', 'Move the selected lines, or the section, up', 'Alt+ArrowUp'),
   binding('grid', 'Lines', 'move-down', 'Move the selected lines, or the section, down', 'Alt+ArrowDown'),
   binding('grid', 'Lines', 'extend-up', 'Select one more line upwards', 'Shift+ArrowUp'),
@@ -82,11 +121,17 @@ export const KEY_BINDINGS: readonly KeyBinding[] = [
 /** Keys inside the editor, and the clipboard's, which the browser itself tells the page of: for the overview. */
 export const EDITOR_KEYS: readonly { readonly keys: readonly string[]; readonly says: string }[] = [
   { keys: ['Enter'], says: 'Keep what was typed and go down; from the last line to a new one' },
-  { keys: ['Tab', 'Shift+Tab'], says: 'Keep it and go to the next, or the previous, cell. Outside the editor Tab leaves the account' },
+  {
+    keys: ['Tab', 'Shift+Tab'],
+    says: 'Keep it and go to the next, or the previous, cell. Outside the editor Tab leaves the account',
+  },
   { keys: ['Escape'], says: 'Close the suggestions; again: put back what stood there' },
   { keys: ['ArrowUp', 'ArrowDown'], says: 'Choose a suggestion; Enter or Tab takes it' },
   { keys: ['F2'], says: 'Stop editing, keep what was typed' },
-  { keys: ['Ctrl+C', 'Ctrl+X', 'Ctrl+V'], says: 'Copy, cut, paste lines; a table from elsewhere is shown before it is taken' },
+  {
+    keys: ['Ctrl+C', 'Ctrl+X', 'Ctrl+V'],
+    says: 'Copy, cut, paste lines; a table from elsewhere is shown before it is taken',
+  },
 ];
 
 /** What a key handler needs to know of a keyboard event. */

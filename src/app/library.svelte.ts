@@ -69,7 +69,9 @@ export class Library {
 
   /** Gives a worksheet that is not open another title. */
   rename(id: string, title: string): Promise<Outcome> {
-    return this.#withWorksheet(id, (store, worksheet, rev) => store.save({ ...asText({ ...worksheet, title }), basedOn: rev }));
+    return this.#withWorksheet(id, (store, worksheet, rev) =>
+      store.save({ ...asText({ ...worksheet, title }), basedOn: rev }),
+    );
   }
 
   /** The recovery copies of a worksheet, the newest first. */

@@ -1,8 +1,6 @@
 /** What the page's buttons and keys do beyond the grid: files, findings, starters, pasted tables. */
-import { linesFromPreview, type PastePreview } from '../exchange';
 import type { LineFinding } from '../engine';
-import { STARTERS } from '../starters';
-import { pasteLines } from '../worksheet';
+import { pasteLines, type Line } from '../worksheet';
 import { downloadText, chooseFile } from './files';
 import { isOpen } from './finding-counts';
 import type { Session } from './session.svelte';
@@ -22,40 +20,47 @@ export async function openFile(session: Session): Promise<void> {
 
 /** Opens a file that was chosen or dropped; what is wrong with it is said, and the open worksheet stays. */
 export async function openGivenFile(session: Session, file: File): Promise<void> {
-  const read = await session.importBytes(new Uint8Array(await file.arrayBuffer()));
+  const read = await session.opening.importBytes(new Uint8Array(await file.arrayBuffer()));
   if (!read.ok) session.notice = { text: `${file.name} was not opened. ${read.fault.sentence}` };
 }
 
 /** Begins a worksheet from a starter. */
 export async function beginFrom(session: Session, starterId: string): Promise<void> {
+  const { STARTERS } = await import('../starters');
   const starter = STARTERS.find((one) => one.id === starterId);
   if (starter === undefined) return;
-  const begun = await session.newWorksheet(starter.text);
+  const begun = await session.opening.newWorksheet(starter.text);
   if (!begun.ok) session.notice = { text: begun.fault.sentence };
 }
 
 /** Makes lines of a pasted table that the person has looked at. */
-export function takePastedTable(session: Session, preview: PastePreview): void {
+export function takePastedTable(session: Session, lines: readonly Line[]): void {
   const { paste, worksheet } = session;
   session.paste = null;
   session.dialog = null;
   if (paste === null) return;
-  const { edit, messages } = pasteLines(worksheet, paste.place, { cases: [], lines: linesFromPreview(worksheet, preview) });
+  const { edit, messages } = pasteLines(worksheet, paste.place, { cases: [], lines });
   if (session.perform(edit, { follow: true }) && messages.length > 0) session.notice = { text: messages.join(' ') };
 }
 
 /** Brings the cursor to the next open finding below the selected line, or the one before; round the end. */
 export function goToFinding(session: Session, direction: 1 | -1): void {
-  const lineIds = [...new Set(session.sheetFindings().filter(isOpen).map((finding) => finding.lineId))];
+  const lineIds = [
+    ...new Set(
+      session
+        .sheetFindings()
+        .filter(isOpen)
+        .map((finding) => finding.lineId),
+    ),
+  ];
   if (lineIds.length === 0) {
     session.announce('There are no open findings.');
     return;
   }
-  const order = new Map(session.lineOrder.map((id, at) => [id, at]));
+  const order = new Map(session.sheet.lineOrder.map((id, at) => [id, at]));
   const place = (id: string | null): number => (id === null ? -1 : (order.get(id) ?? -1));
   const here = place(session.selectedLineId);
-  const found =
-    direction === 1 ? lineIds.find((id) => place(id) > here) : lineIds.findLast((id) => place(id) < here);
+  const found = direction === 1 ? lineIds.find((id) => place(id) > here) : lineIds.findLast((id) => place(id) < here);
   const target = found ?? (direction === 1 ? lineIds[0] : lineIds[lineIds.length - 1]);
   if (target !== undefined) jumpToFinding(session, target);
 }

@@ -19,8 +19,8 @@ export async function startSession(): Promise<Session> {
   const lastId = worksheetOfThisTab() ?? settings.lastWorksheetId;
   session = new Session(settings, opened);
   if (opened.ok) {
-    const last = lastId === null ? undefined : await session.openWorksheet(lastId);
-    if (last?.ok !== true) await session.newWorksheet();
+    const last = lastId === null ? undefined : await session.opening.openWorksheet(lastId);
+    if (last?.ok !== true) await session.opening.newWorksheet();
     if (last?.ok === false && last.fault.code !== 'missing') session.notice = { text: last.fault.sentence };
   }
   return session;

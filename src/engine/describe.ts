@@ -105,8 +105,8 @@ const written = (figure: Figure): string | undefined =>
 function nowFigure(node: Node, figures: Figures, scope: Scope, value: number | undefined): string | undefined {
   const shown = written(figureOfNode(node, figures, value));
   if (shown !== undefined) return shown;
-  const { tree, unit } = node.result;
-  const bare = tree === undefined ? undefined : rawFigure(tree, scope, figures);
+  const { unit } = node.result;
+  const bare = node.read.form === 'expression' ? rawFigure(node.read.tree, scope, figures) : node.read.form === 'quantity' ? node.read.figure : undefined;
   if (bare === undefined) return undefined;
   const text = unit?.form === 'decibel' || unit?.form === 'rate' ? bare.toFixed(2).replace('-', '−') : writeSignificant(bare).replace('-', '−');
   return unit === undefined || unit.word === '1' ? text : `${text} “${unit.word}”`;

@@ -4,7 +4,7 @@
  * finding for finding. It is pure: no page, no clock, no storage.
  */
 import { present } from '../base';
-import { checkLine, type Scope, type SymbolInfo } from '../formula';
+import { checkLine, type Checked, type Scope, type SymbolInfo } from '../formula';
 import { isLinesSection, type Change, type Line, type Worksheet } from '../worksheet';
 import { buildGraph, entryOf, inputsOf, nodeIn, type Graph } from './graph';
 import { describeRemark, remarksOf } from './describe';
@@ -201,6 +201,12 @@ export class Evaluation {
     return nodeIn(this.graph, lineId, caseId);
   }
 
+  /** The checked expression of a line in a case, for the working; undefined when its entry cannot be read. */
+  inspect(lineId: string, caseId: string): Checked | undefined {
+    const node = nodeIn(this.graph, lineId, caseId);
+    return node?.inspect(this.scopeOf(node.caseId));
+  }
+
   /** The figures by slot, for the working. */
   get figures(): Figuring {
     return this.figuring;
@@ -251,12 +257,12 @@ export class Evaluation {
   /** Evaluates another entry (or unit) in a node's place. It cannot see itself, so a loop of one is found here too. */
   private tryOut(node: Node, entry: string, unit?: string): { reading: Reading; node: Node; value: number } {
     const scope = this.scopeOf(node.caseId);
-    const line: Line = { ...node.line, entry, ...(unit === undefined ? {} : { unit }) };
+    const line: Line = { ...node.line, ...(node.caseId === null ? { entry } : {}), ...(unit === undefined ? {} : { unit }) };
     const trial = node.trial(line, entry);
     trial.inputs = inputsOf(this.graph, trial);
     const usesItself = trial.inputs.includes(node) || trial.inputs.some((input) => this.restsUpon(input, node));
     trial.barred = usesItself ? { code: 'loop', path: [line.symbol, line.symbol] } : node.barred?.code === 'loop' ? undefined : node.barred;
-    trial.result = checkLine({ symbol: line.symbol, label: line.label, entry, unit: line.unit, quantity: line.quantity, side: line.side }, scope, trial.read);
+    trial.result = checkLine(trial.spec(), scope, trial.read);
     const value = trial.barred === undefined ? settled(trial.compile(this.figuring)(), trial.result.unit?.form === 'decibel') : NaN;
     return { reading: readingOf(trial, line, this.figuring, value), node: trial, value };
   }

@@ -4,7 +4,7 @@
  */
 import { present } from '../base';
 import { readEntry } from '../formula';
-import { isLinesSection, type Line, type Worksheet } from '../worksheet';
+import { entryIn, isLinesSection, type Line, type Worksheet } from '../worksheet';
 import { Node } from './node';
 
 export interface Graph {
@@ -42,7 +42,7 @@ export function buildGraph(worksheet: Worksheet, before: Graph | undefined, newS
     };
     const cases = differing.get(line.id);
     if (cases === undefined || cases.size < worksheet.cases.length) make('', null, line.entry);
-    for (const caseId of cases ?? []) make(caseId, caseId, line.byCase?.[caseId] ?? line.entry);
+    for (const caseId of cases ?? []) make(caseId, caseId, entryOf(line, caseId));
     nodes.set(line.id, own);
   }
   const order = connect({ lines, holders, nodes });
@@ -51,7 +51,7 @@ export function buildGraph(worksheet: Worksheet, before: Graph | undefined, newS
 
 /** The entry of a line in a case, or its own. */
 export function entryOf(line: Line, caseId: string | null): string {
-  return (caseId === null ? undefined : line.byCase?.[caseId]) ?? line.entry;
+  return entryIn(line, caseId ?? undefined);
 }
 
 /** For each line the cases in which its figure may differ: those that override it, or anything it rests on. */

@@ -2,7 +2,7 @@
  * Nodes: one for each line, and one more for each case in which the line's entry, or anything it rests on, differs.
  * Lines without overrides share one node among all cases.
  */
-import { checkLine, compilePlan, readEntry, type Figures, type LineResult, type ReadEntry, type Scope, type SymbolInfo } from '../formula';
+import { checkLine, compilePlan, inspectLine, readEntry, readPlainQuantity, type Figures, type LineResult, type LineSpec, type ReadEntry, type Scope, type SymbolInfo, type Checked } from '../formula';
 import type { Line } from '../worksheet';
 
 /** Why a line is withheld whatever its entry says. */
@@ -47,6 +47,7 @@ export class Node {
     const before = this.line;
     const changed =
       entry !== this.entry ||
+      (this.caseId !== null && line.entry !== before.entry) ||
       line.symbol !== before.symbol ||
       line.label !== before.label ||
       line.unit !== before.unit ||
@@ -63,15 +64,26 @@ export class Node {
   /** Checks the entry anew; returns whether lines that use it see another type. */
   check(scope: Scope): boolean {
     const before = this.info();
-    const { symbol, label, unit, quantity, side } = this.line;
     this.isStale = false;
-    this.result = checkLine({ symbol, label, entry: this.entry, unit, quantity, side }, scope, this.read);
+    this.result = checkLine(this.spec(), scope, this.read);
     return !sameInfo(before, this.info());
+  }
+
+  /** What the checker is told of the line. An override follows the unit typed in the line's own entry. */
+  spec(): LineSpec {
+    const { symbol, label, unit, quantity, side } = this.line;
+    const typed = unit === undefined && this.caseId !== null && this.entry !== this.line.entry ? readPlainQuantity(this.line.entry)?.unit?.word : undefined;
+    return { symbol, label, entry: this.entry, unit: unit ?? typed, quantity, side };
   }
 
   /** A node with another entry in this one's place, outside the graph. */
   trial(line: Line, entry: string): Node {
     return new Node(this.slot, line, this.caseId, entry);
+  }
+
+  /** The checked expression, which is not kept, for the working. */
+  inspect(scope: Scope): Checked | undefined {
+    return inspectLine(this.spec(), scope, this.read);
   }
 
   /** The compiled entry. */

@@ -16,8 +16,10 @@ export class Figuring implements Figures {
   values = new Float64Array(64).fill(NaN);
   private readonly runs: (() => number)[] = [];
   private readonly allowsNoPower: boolean[] = [];
-  private userSlots: Int32Array[] = [];
   private rankOf = new Int32Array(64);
+  /** Ranks of the users of the node of rank r: userRanks from usersFrom[r] up to usersFrom[r + 1]. */
+  private usersFrom = new Int32Array(1);
+  private userRanks = new Int32Array(0);
   private slotAt = new Int32Array(0);
   private marked = new Uint8Array(0);
   private firstMarked = Infinity;
@@ -49,17 +51,23 @@ export class Figuring implements Figures {
 
   /** Takes over a new order of nodes; marks are lost. */
   setOrder(order: readonly Node[]): void {
-    this.slotAt = Int32Array.from(order, ({ slot }) => slot);
-    this.marked = new Uint8Array(order.length);
+    const { length } = order;
+    this.slotAt = new Int32Array(length);
+    this.usersFrom = new Int32Array(length + 1);
+    this.marked = new Uint8Array(length);
     this.firstMarked = Infinity;
     this.lastMarked = -1;
-    for (const node of order) this.setEdges(node);
-  }
-
-  /** Takes over a node's rank and users. */
-  setEdges(node: Node): void {
-    this.rankOf[node.slot] = node.rank;
-    this.userSlots[node.slot] = Int32Array.from(node.users, ({ slot }) => slot);
+    let edges = 0;
+    for (const { slot, rank, users } of order) {
+      this.slotAt[rank] = slot;
+      this.rankOf[slot] = rank;
+      this.usersFrom[rank] = edges;
+      edges += users.length;
+    }
+    this.usersFrom[length] = edges;
+    this.userRanks = new Int32Array(edges);
+    let at = 0;
+    for (const { users } of order) for (const user of users) this.userRanks[at++] = user.rank;
   }
 
   /** Takes over a node's compiled entry and marks it. */
@@ -86,7 +94,7 @@ export class Figuring implements Figures {
 
   /** One pass. Returns how many nodes were computed; adds the slots whose figure changed to `changed`. */
   run(changed: number[]): number {
-    const { marked, slotAt, runs, userSlots, rankOf } = this;
+    const { marked, slotAt, runs, usersFrom, userRanks } = this;
     let computed = 0;
     let last = this.lastMarked;
     const { values } = this;
@@ -100,11 +108,13 @@ export class Figuring implements Figures {
       if (Object.is(value, values[slot])) continue;
       values[slot] = value;
       changed.push(slot);
-      const users = userSlots[slot] as Int32Array;
-      for (let i = 0; i < users.length; i++) {
-        const userRank = rankOf[users[i] as number] as number;
-        marked[userRank] = 1;
-        if (userRank > last) last = userRank;
+      const end = usersFrom[rank + 1] as number;
+      for (let at = usersFrom[rank] as number; at < end; at++) {
+        const user = userRanks[at] as number;
+        // In a loop users can come first; its members are withheld whatever their inputs.
+        if (user <= rank) continue;
+        marked[user] = 1;
+        if (user > last) last = user;
       }
     }
     this.firstMarked = Infinity;

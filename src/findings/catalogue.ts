@@ -37,7 +37,7 @@ export const CATALOGUE = {
     'Levels are added as decibels',
     'Adding decibel levels multiplies their powers: the result is a power squared and means nothing.',
     (x) =>
-      `${f(x, 'levels')} are levels and are added. In decibels that multiplies their powers${given(x['now'], (now) => `: the sum would read ${now}`)}.` +
+      `${f(x, 'levels')} ${x['single'] === undefined ? 'are levels and are added' : 'is a level and is counted more than once'}. In decibels that multiplies their powers${given(x['now'], (now) => `: the sum would read ${now}`)}.` +
       instead(x, 'Added as powers') +
       given(x['inPhase'], (figure) => ` In phase, as fields, they would make ${figure}.`),
   ),
@@ -46,7 +46,7 @@ export const CATALOGUE = {
     'The result does not have the unit declared',
     'A figure is only shown in a unit of its own dimension.',
     (x) =>
-      `${f(x, 'what')} has the dimension of ${f(x, 'found')}, not of ${f(x, 'declared')}${given(x['now'], (now) => `: the figures add up to ${now}, which is no ${f(x, 'declared')}`)}.` +
+      `${f(x, 'what')} has the dimension of ${f(x, 'found')}, not of ${f(x, 'declared')}${given(x['now'], (now) => `: its bare figure would read ${now}`)}.` +
       given(x['missing'], (missing) => ` ${missing}`) +
       instead(x, 'Probably meant'),
   ),
@@ -182,7 +182,7 @@ export const CATALOGUE = {
     'The line says it is something else',
     'The kind a line declares steers the checks of all lines that use it.',
     (x) =>
-      `The line is declared ${f(x, 'declared')}, but ${f(x, 'what')} makes ${f(x, 'found')}${given(x['now'], (now) => ` (${now})`)}.` +
+      `${x['asked'] ?? `The line is declared ${f(x, 'declared')}`}, but ${f(x, 'what')} ${x['asked'] === undefined ? 'makes' : 'is'} ${f(x, 'found')}${given(x['now'], (now) => ` (${now})`)}.` +
       instead(x, 'Probably meant'),
   ),
   'decibels-averaged': entry(
@@ -221,7 +221,7 @@ export const CATALOGUE = {
     'A bare number hides a unit',
     'Constants such as 32.44 or −174 hold only for certain units; written with their unit, or as the named function, they can be checked.',
     (x) =>
-      `The number ${f(x, 'number')} stands for ${f(x, 'standsFor')}, so the sum does not close${given(x['now'], (now) => `: the figures read ${now}`)}.` +
+      `The number ${f(x, 'number')} stands for ${f(x, 'standsFor')}${x['closes'] === undefined ? ', so the sum does not close' : ''}${given(x['now'], (now) => `: ${x['closes'] === undefined ? 'the figures read' : 'the line gives'} ${now}`)}.` +
       instead(x, 'Probably meant'),
   ),
   'field-ratio-in-power-log': entry(

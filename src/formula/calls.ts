@@ -171,7 +171,7 @@ function sayGainGivenLoss(operand: Checked, parameter: Parameter, context: Conte
   if (parameter.takes !== 'gain' || operand.kind !== 'loss') return;
   const text = context.textOf(operand.tree);
   context.say('kind-mismatch', operand.tree, {
-    facts: { declared: `with ${text} as the gain ${parameter.name}`, what: text, found: 'a loss' },
+    facts: { asked: `${parameter.name} is to be a gain`, what: text, found: 'a loss' },
     repairs: [context.rewrite(operand.tree, `-${text}`)],
   });
 }

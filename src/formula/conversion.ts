@@ -5,9 +5,10 @@ import {
 import { present } from '../base';
 import type { Repair } from '../findings';
 import { asFactor, type Context } from './context';
-import { decibelsOf, describeType, fittingDecibelUnit, fittingLinearUnit, linearOf, powerDimension } from './forms';
+import { decibelsOf, describeType, fittingDecibelUnit, fittingLinearUnit, linearOf, powerDimension, termsOf } from './forms';
 import { sayRateAlone, sayUnitMismatch } from './mismatch';
 import { constantPlan, scalePlan, shiftPlan, type Plan } from './plan';
+import { decibelSum } from './sums';
 import type { Tree } from './tree';
 import type { Checked, DecibelType, LinearType } from './types';
 
@@ -43,7 +44,8 @@ export function convertResult(
     case 'rate':
       return convertRate(checked, type.lengthM, declared, context);
     case 'decibel':
-      return declared === undefined ? ownDecibel(type, checked) : toDeclared({ ...checked, type }, declared, context, hidden);
+      if (declared === undefined) return ownDecibel(type, checked);
+      return toDeclared(declared.form === 'decibel' ? readOverReference({ ...checked, type }, declared) : { ...checked, type }, declared, context, hidden);
     case 'linear':
       return declared === undefined ? ownLinear(type, checked) : toDeclared({ ...checked, type }, declared, context, hidden);
   }
@@ -80,6 +82,22 @@ function convertRate(checked: Checked, lengthM: number, declared: Unit | undefin
 }
 
 type Result = Checked & { readonly type: DecibelType | LinearType };
+
+/**
+ * Logarithms over a written reference, 10*log10(x/1 mW), are ratios by their dimension; where the line's unit asks for it
+ * they are read as decibels of x over that reference: all of them, or the one that makes the sum close.
+ */
+export function readOverReference(checked: Result, declared: DecibelUnit): Result {
+  const terms = termsOf(checked, '');
+  const written = terms.filter(({ overReference }) => overReference !== undefined);
+  if (written.length === 0 || (checked.type.form === 'decibel' && sameDimension(checked.type.dimension, declared.dimension))) return checked;
+  for (const chosen of [written, ...written.map((one) => [one])]) {
+    const read = terms.map((term) => (term.overReference !== undefined && chosen.includes(term) ? { ...term, type: term.overReference } : term));
+    const sum = decibelSum(checked.tree, read, checked.parts);
+    if (sum.type.form === 'decibel' && sameDimension(sum.type.dimension, declared.dimension)) return { ...sum, type: sum.type };
+  }
+  return checked;
+}
 
 function toDeclared(checked: Result, declared: Unit, context: Context, hidden: readonly Repair[] | undefined): Converted | undefined {
   const done = (plan: Plan): Converted => ({ unit: declared, plan, isFitted: false });

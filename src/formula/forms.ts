@@ -74,9 +74,13 @@ export function termsOf(checked: Checked, text: string): readonly SumTerm[] {
       isDeclared: checked.isDeclared ?? false,
       isNumber: false,
       symbol: checked.tree.type === 'symbol' ? checked.tree.name : undefined,
+      overReference: checked.overReference,
     },
   ];
 }
+
+/** Words that a person may type but that no result is put in unasked. */
+const RARE_WORDS: ReadonlySet<string> = new Set(['dBkW', 'dBµW', 'dBpW', 'dBkHz', 'dBMHz']);
 
 /**
  * The unit in which a decibel result of this dimension is shown when its line declares none: the first of `hints` that fits,
@@ -88,7 +92,7 @@ export function fittingDecibelUnit(dimension: Dimension, offsetDb: number, hints
   const hinted = hints.find(fits);
   if (hinted !== undefined) return hinted;
   const candidates = UNIT_WORDS.map(findUnit).filter(fits);
-  const same = candidates.find((unit) => unit.form === 'decibel' && unit.offsetDb === offsetDb);
+  const same = candidates.find((unit) => unit.form === 'decibel' && unit.offsetDb === offsetDb && !RARE_WORDS.has(unit.word));
   const found = same ?? candidates[0];
   if (found !== undefined) return found;
   const word = `dB(${describeDimension(dimension)})`;

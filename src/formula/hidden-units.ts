@@ -2,7 +2,7 @@
  * Bare numbers that stand for a unit: 32.44 in a free-space formula, −174 for a noise density, 228.6 for the Boltzmann
  * constant. They hold only for certain units, so a sum with one does not close; the finding names what is meant.
  */
-import { FREQUENCY, isDimensionless, LENGTH, raiseDimension, sameDimension } from '../quantity';
+import { FREQUENCY, isDimensionless, LENGTH, raiseDimension, sameDimension, type Unit } from '../quantity';
 import type { Repair } from '../findings';
 import type { Context } from './context';
 import { withReplacedTerms, type Grouped } from './repairs';
@@ -34,6 +34,12 @@ const KNOWN: readonly Known[] = [
   { from: -144.1, to: -143.9, standsFor: 'the noise density k·T₀ in dBm/kHz or dBW/MHz', write: literal('-144', 'dBm/kHz') },
   { from: -228.7, to: -228.5, standsFor: 'the Boltzmann constant in dBW/K/Hz', write: () => ({ text: 'db(k_B)', sign: 1 }) },
   { from: 228.5, to: 228.7, standsFor: 'the Boltzmann constant in dBW/K/Hz, taken off', write: () => ({ text: 'db(k_B)', sign: -1 }) },
+  { from: -107.1, to: -106.9, standsFor: 'the step from dBµV to dBm in 50 Ω', write: () => ({ text: 'db(50 ohm)', sign: -1 }) },
+  { from: 106.9, to: 107.1, standsFor: 'the step from dBm to dBµV in 50 Ω', write: () => ({ text: 'db(50 ohm)', sign: 1 }) },
+  { from: -108.85, to: -108.7, standsFor: 'the step from dBµV to dBm in 75 Ω', write: () => ({ text: 'db(75 ohm)', sign: -1 }) },
+  { from: 108.7, to: 108.85, standsFor: 'the step from dBm to dBµV in 75 Ω', write: () => ({ text: 'db(75 ohm)', sign: 1 }) },
+  { from: -48.85, to: -48.7, standsFor: 'the step from dBmV to dBm in 75 Ω', write: () => ({ text: 'db(75 ohm)', sign: -1 }) },
+  { from: 48.7, to: 48.85, standsFor: 'the step from dBm to dBmV in 75 Ω', write: () => ({ text: 'db(75 ohm)', sign: 1 }) },
   { from: -198.7, to: -198.5, standsFor: 'the Boltzmann constant in dBm/K/Hz', write: () => ({ text: 'db(k_B)', sign: 1 }) },
   { from: 198.5, to: 198.7, standsFor: 'the Boltzmann constant in dBm/K/Hz, taken off', write: () => ({ text: 'db(k_B)', sign: -1 }) },
 ];
@@ -41,13 +47,13 @@ const KNOWN: readonly Known[] = [
 /** The bare number of a sum that hides a unit: a known constant, else any bare number literal. */
 export function hiddenConstant(terms: readonly SumTerm[]): { term: SumTerm; figure: number; known: Known | undefined } | undefined {
   const numbers = terms.flatMap((term) =>
-    term.isNumber && term.plan.op === 'constant' ? [{ term, figure: term.coefficient * term.plan.value }] : [],
+    isFigure(term) && term.plan.op === 'constant' ? [{ term, figure: term.coefficient * term.plan.value }] : [],
   );
   for (const number of numbers) {
     const known = KNOWN.find(({ from, to }) => number.figure >= from && number.figure <= to);
     if (known !== undefined) return { ...number, known };
   }
-  const [first] = numbers;
+  const first = numbers.find(({ term }) => term.isNumber);
   return first === undefined ? undefined : { ...first, known: undefined };
 }
 
@@ -58,11 +64,11 @@ export interface Hidden {
 }
 
 /** Makes the finding for a number that keeps a sum from closing. */
-export function sayConstantHidesUnit(tree: Tree, terms: readonly SumTerm[], context: Context): Hidden | undefined {
+export function sayConstantHidesUnit(tree: Tree, terms: readonly SumTerm[], declared: Unit | undefined, context: Context): Hidden | undefined {
   const hidden = hiddenConstant(terms);
   if (hidden === undefined) return undefined;
   const { term, known, figure } = hidden;
-  const grouped = freeSpace(terms, term) ?? written(terms, term, figure, known);
+  const grouped = freeSpace(terms, term) ?? written(terms, term, figure, known, declared);
   const repairs: Repair[] = grouped === undefined ? [] : [{ kind: 'entry', title: grouped.title, entry: context.replace(tree, grouped.text) }];
   context.say('constant-hides-unit', term.tree, {
     facts: { number: String(figure).replace('-', '−'), standsFor: known?.standsFor ?? 'something with a unit' },
@@ -71,12 +77,29 @@ export function sayConstantHidesUnit(tree: Tree, terms: readonly SumTerm[], cont
   return { term, repairs };
 }
 
-function written(terms: readonly SumTerm[], term: SumTerm, figure: number, known: Known | undefined): Grouped | undefined {
+function written(
+  terms: readonly SumTerm[], term: SumTerm, figure: number, known: Known | undefined, declared: Unit | undefined,
+): Grouped | undefined {
   const replacement = known?.write?.(Math.sign(figure));
   if (replacement === undefined) return undefined;
   // The written figure carries its own sign; the term stands with the sign that keeps the value.
   const isFigure = replacement.text.startsWith('-');
-  return withReplacedTerms(terms, [term], replacement.text, isFigure ? 1 : replacement.sign);
+  const step = declared?.form === 'decibel' ? handStep(terms, term, declared.offsetDb) : undefined;
+  return withReplacedTerms(terms.filter((other) => other !== step), [term], replacement.text, isFigure ? 1 : replacement.sign);
+}
+
+/** The 30 by which dBW was made dBm by hand, which the written unit takes by itself. */
+function handStep(terms: readonly SumTerm[], constant: SumTerm, offsetDb: number): SumTerm | undefined {
+  return terms.find((term) => term !== constant && isFigure(term) && term.plan.op === 'constant' && Math.abs(term.coefficient * term.plan.value + offsetDb) < 0.05 && offsetDb !== 0);
+}
+
+/** A bare number, or a literal in dB. */
+const isFigure = ({ isNumber, plan, tree }: SumTerm): boolean =>
+  plan.op === 'constant' && (isNumber || (tree.type === 'literal' && tree.unit?.word === 'dB'));
+
+/** True when one of the numbers is a noise density's or the Boltzmann constant's: it hides a unit whatever the result. */
+export function hidesBoltzmann(terms: readonly SumTerm[]): boolean {
+  return hiddenConstant(terms)?.known?.write !== undefined;
 }
 
 /** c + 20 log f + 20 log d is free_space_loss(d, f), whatever the constant. */

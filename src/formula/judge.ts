@@ -55,7 +55,7 @@ function sayLevelsSummed(tree: Tree, terms: readonly SumTerm[], context: Context
   const grouped = groupedAsPowers(terms, levels, 'powersum', context);
   const inPhase = groupedAsPowers(terms, levels, 'fieldsum', context);
   context.say('levels-summed', tree, {
-    facts: { levels: levels.map(({ text }) => text).join(' and ') },
+    facts: { levels: levels.map(({ text }) => text).join(' and '), ...(levels.length === 1 ? { single: 'yes' } : {}) },
     repairs: repairsOf(grouped, tree, context),
     ...(inPhase === undefined ? {} : { figures: { inPhase: context.replace(tree, inPhase.text) } }),
   });

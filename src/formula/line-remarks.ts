@@ -1,5 +1,8 @@
 /** What the checker says of a line as a whole: its declared kind against what it rests on, and figures below their floor. */
-import { isDimensionless, kindOfNet, meaningOf, sameDimension, TEMPERATURE, type Meaning, type Unit } from '../quantity';
+import {
+  FREQUENCY, isDimensionless, kindOfNet, meaningOf, raiseDimension, sameDimension, TEMPERATURE, TIME,
+  type Dimension, type Meaning, type QuantityKind, type Unit,
+} from '../quantity';
 import type { Repair } from '../findings';
 import type { Context } from './context';
 import type { AttributedKind, LineSpec } from './line';
@@ -36,7 +39,10 @@ function sayLevelWithoutReference({ spec, unit, tree, context }: LineFacts): voi
       ? { kind: 'unit', title: `unit ${word}`, unit: word }
       : context.rewrite(own, `${context.textOf(own).replace(/ ?dB$/, '')} ${word}`),
   );
-  context.say('level-without-reference', undefined, { facts: {}, repairs });
+  context.say('level-without-reference', undefined, {
+    facts: {},
+    repairs: [...repairs, { kind: 'quantity', title: 'declare it a gain', quantity: 'gain' }],
+  });
 }
 
 const near = (a: number, b: number): boolean => Math.abs(a - b) < 1e-9;
@@ -44,6 +50,13 @@ const near = (a: number, b: number): boolean => Math.abs(a - b) < 1e-9;
 /** The declared kind or side against the net, when the net is wholly known from what was declared. */
 function sayKindMismatch({ spec, net, unit, tree, context }: LineFacts): void {
   const isDeclared = spec.quantity !== undefined || spec.side !== undefined;
+  if (spec.quantity !== undefined && !fitsUnit(spec.quantity, unit)) {
+    context.say('kind-mismatch', tree, {
+      facts: { declared: spec.quantity, what: `its unit ${unit.word}`, found: 'something else' },
+      repairs: unit.defaultKind === undefined ? [] : [{ kind: 'quantity', title: `declare it ${unit.defaultKind}`, quantity: unit.defaultKind }],
+    });
+    return;
+  }
   if (!isDeclared || spec.quantity === 'plain' || net === undefined || !net.declared || tree === undefined || tree.type === 'literal') return;
   const declared = meaningOf(spec.quantity ?? 'level', spec.side, true);
   const isSideFree = near(declared.l, 1);
@@ -62,6 +75,31 @@ function sayKindMismatch({ spec, net, unit, tree, context }: LineFacts): void {
         ? []
         : [{ kind: 'quantity', title: `declare it ${words}`, quantity: found.kind, ...(found.side === undefined ? {} : { side: found.side }) }],
   });
+}
+
+/** True when a quantity of this kind can be in this unit. */
+function fitsUnit(kind: QuantityKind, unit: Unit): boolean {
+  if (unit.form === 'rate') return kind === 'loss' || kind === 'gain' || kind === 'plain';
+  const is = (dimension: Dimension): boolean => sameDimension(unit.dimension, dimension);
+  switch (kind) {
+    case 'gain':
+    case 'loss':
+    case 'noise figure':
+      return isDimensionless(unit.dimension);
+    case 'signal ratio':
+      return isDimensionless(unit.dimension) || is(FREQUENCY);
+    case 'impairment ratio':
+      return isDimensionless(unit.dimension) || is(TIME);
+    case 'temperature':
+      return is(TEMPERATURE);
+    case 'bandwidth':
+      return is(FREQUENCY);
+    case 'figure of merit':
+      return is(raiseDimension(TEMPERATURE, -1));
+    case 'level':
+    case 'plain':
+      return true;
+  }
 }
 
 const isNegative = (value: number): boolean => value < 0;

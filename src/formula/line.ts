@@ -5,7 +5,7 @@
 import { fail, ok, present, type Result } from '../base';
 import { CATALOGUE } from '../findings';
 import {
-  assumeFromName, findUnit, isDimensionless, kindOfNet, meaningOf, sameDimension, UNIT_WORDS, UNSAID,
+  assumeFromName, findUnit, isDimensionless, kindOfNet, meaningOf, resolveMeaning, sameDimension, UNIT_WORDS, UNSAID,
   type Meaning, type QuantityKind, type Side, type Unit,
 } from '../quantity';
 import { meaningOfUnit, typeOfUnit } from './atoms';
@@ -13,9 +13,10 @@ import { check } from './check';
 import { Context } from './context';
 import { fittingDecibelUnit, isFieldLike, squared, termsOf } from './forms';
 import { parseEntry } from './grammar';
-import { sayConstantHidesUnit, hasDimensionedTerms, type Hidden } from './hidden-units';
+import { sayFactorInLogarithm, sayHandConversion } from './hand-conversion';
+import { sayConstantHidesUnit, hasDimensionedTerms, hidesBoltzmann, type Hidden } from './hidden-units';
 import { consume } from './judge';
-import { convertResult } from './conversion';
+import { convertResult, readOverReference } from './conversion';
 import { nearestName } from './nearest';
 import { sayLineRemarks } from './line-remarks';
 import { constantPlan, type Plan } from './plan';
@@ -70,8 +71,6 @@ export interface LineResult {
   readonly waitsFor: readonly string[];
   /** Every symbol in the entry. */
   readonly symbols: readonly string[];
-  readonly checked?: Checked | undefined;
-  readonly tree?: Tree | undefined;
 }
 
 /** An entry as read, before anything is known of the symbols in it. */
@@ -166,13 +165,22 @@ function checkRead(spec: LineSpec, read: Exclude<ReadEntry, { form: 'empty' }>, 
 
 /** The finding constant-hides-unit comes before the sum is judged, so that its number gets no second remark. */
 function findHidden(checked: Checked, declared: Unit | undefined, context: Context): Hidden | undefined {
-  const { type, terms } = checked;
-  if (type.form !== 'decibel' || terms === undefined) return undefined;
-  const closes =
-    declared === undefined
-      ? isDimensionless(type.dimension) || !hasDimensionedTerms(terms) || fittingDecibelUnit(type.dimension, 0, []).word.startsWith('dB(') === false
-      : declared.form !== 'rate' && sameDimension(type.dimension, declared.dimension);
-  return closes ? undefined : sayConstantHidesUnit(checked.tree, terms, context);
+  const { type } = checked;
+  if (type.form !== 'decibel') return undefined;
+  const terms = termsOf(checked, context.textOf(checked.tree));
+  if (declared?.form === 'decibel') {
+    const read = readOverReference({ ...checked, type }, declared).type;
+    if (read.form === 'decibel' && sameDimension(read.dimension, declared.dimension)) {
+      // It closes; but a step between references may have been taken twice.
+      if (!sayHandConversion(checked.tree, terms, declared.offsetDb, context)) sayFactorInLogarithm(terms, declared, context);
+      return undefined;
+    }
+    return sayConstantHidesUnit(checked.tree, terms, declared, context);
+  }
+  if (declared !== undefined) return undefined;
+  const isPlain = isDimensionless(type.dimension) || !hasDimensionedTerms(terms);
+  const hasWord = !fittingDecibelUnit(type.dimension, 0, []).word.startsWith('dB(');
+  return isPlain || (hasWord && !hidesBoltzmann(terms)) ? undefined : sayConstantHidesUnit(checked.tree, terms, undefined, context);
 }
 
 function settle(spec: LineSpec, draft: Draft, declared: Unit | undefined, context: Context, isUnitInError: boolean): LineResult {
@@ -186,36 +194,33 @@ function settle(spec: LineSpec, draft: Draft, declared: Unit | undefined, contex
   const unit = declared ?? converted?.unit;
   const isInError = converted === undefined || context.waitsFor.length > 0 || context.remarks.some(isErrorRemark);
   const symbols = draft.symbols ?? [];
-  const base = {
-    unit,
-    isFitted: declared === undefined && draft.ownUnit === undefined && converted?.isFitted === true,
-    plan: isInError ? constantPlan(NaN) : converted.plan,
-    typedDigits: draft.typedDigits,
-    isEmpty: false,
-    isInError,
-    looksAround: context.looksAround,
-    waitsFor: context.waitsFor,
-    symbols,
-    checked,
-    tree: draft.tree,
-  };
-  if (unit === undefined) return { ...base, remarks: context.remarks };
+  const isFitted = declared === undefined && draft.ownUnit === undefined && converted?.isFitted === true;
+  const plan = isInError ? NO_FIGURE : converted.plan;
+  const { remarks, waitsFor } = context;
+  const typedDigits = draft.typedDigits;
+  if (unit === undefined)
+    return { unit, isFitted, plan, typedDigits, isEmpty: false, isInError, looksAround: context.looksAround, waitsFor, symbols, remarks };
   const net = checked === undefined ? undefined : powerMeaning(checked);
   const kind = attributeKind(spec, unit, draft.tree?.type === 'literal' ? undefined : net, checked);
   const side = attributeSide(spec, unit, kind, net);
   const isBareNumber = isDimensionless(unit.form === 'rate' ? [0, 1, 0, 0, 0] : unit.dimension) && unit.word === '1' && declared === undefined;
   const sortIsPure = isBareNumber && (checked?.type.form === 'linear' ? checked.type.sort !== 'ratio' : true);
   const type = exportedType(spec, unit, kind, net, checked, sortIsPure);
-  sayLineRemarks({ spec, unit, kind, net, type, plan: base.plan, isInError, tree: draft.tree, checked, context });
-  return {
-    ...base,
-    isInError: base.isInError,
-    remarks: context.remarks,
-    kind,
-    side,
-    type,
-    constant: sortIsPure && draft.bareFigure !== undefined ? draft.bareFigure : undefined,
-  };
+  sayLineRemarks({ spec, unit, kind, net, type, plan, isInError, tree: draft.tree, checked, context });
+  const constant = sortIsPure && draft.bareFigure !== undefined ? draft.bareFigure : undefined;
+  const { looksAround } = context;
+  return { unit, isFitted, plan, type, kind, side, constant, typedDigits, isEmpty: false, isInError, remarks, looksAround, waitsFor, symbols };
+}
+
+const NO_FIGURE = constantPlan(NaN);
+
+/** The checked expression of a line, for its working; undefined when it is empty or cannot be read. */
+export function inspectLine(spec: LineSpec, scope: Scope, read: ReadEntry = readEntry(spec.entry)): Checked | undefined {
+  if (read.form === 'empty') return undefined;
+  const context = new Context(spec.entry, scope);
+  const declared = spec.unit === undefined ? undefined : findUnit(spec.unit);
+  const { checked } = checkRead(spec, read, context, declared);
+  return checked === undefined ? undefined : consume(checked, context);
 }
 
 const isErrorRemark = ({ code, applies }: Remark): boolean => applies === undefined && CATALOGUE[code].severity === 'error';
@@ -286,8 +291,9 @@ function exportedType(
   const type = typeOfUnit(unit, exportedMeaning(spec, unit, kind, net), isPure);
   if (type.form === 'rate' || checked === undefined || (checked.type.form !== 'decibel' && checked.type.form !== 'linear')) return type;
   const { bandwidth, noiseTemperature } = checked.type;
-  const degree = type.form === 'linear' && checked.type.form === 'linear' ? { degree: checked.type.degree } : {};
-  return { ...type, bandwidth, noiseTemperature, ...degree };
+  const degree = type.form === 'linear' && checked.type.form === 'linear' ? checked.type.degree : 0;
+  if (bandwidth === undefined && noiseTemperature === undefined && degree === 0) return type;
+  return type.form === 'linear' ? { ...type, bandwidth, noiseTemperature, degree } : { ...type, bandwidth, noiseTemperature };
 }
 
 function exportedMeaning(spec: LineSpec, unit: Unit, kind: AttributedKind | undefined, net: Meaning | undefined): Meaning {
@@ -298,7 +304,7 @@ function exportedMeaning(spec: LineSpec, unit: Unit, kind: AttributedKind | unde
   if (kind?.kind === 'level' && spec.side !== undefined) return meaningOf('level', spec.side, true);
   if (kind?.origin === 'name' && kind.kind !== 'level') return meaningOf(kind.kind, undefined, false);
   const isLevel = net !== undefined && Math.abs(net.w + net.u + net.l - 1) < 1e-9;
-  if (kind?.kind === 'level') return isLevel ? { ...net, declared: net.declared } : meaningOf('level', undefined, false);
-  if (net !== undefined) return net;
+  if (kind?.kind === 'level') return isLevel ? resolveMeaning(net) : meaningOf('level', undefined, false);
+  if (net !== undefined) return resolveMeaning(net);
   return kind === undefined ? (unit.word === 'dB' ? UNSAID : meaningOfUnit(unit)) : meaningOf(kind.kind, undefined, false);
 }

@@ -20,6 +20,8 @@ export function sayUnitMismatch(checked: Checked & { type: DecibelType | LinearT
   const isImpedance = extra !== undefined && (sameDimension(extra, IMPEDANCE) || sameDimension(extra, raiseDimension(IMPEDANCE, -1)));
   const repairs = [
     ...hidden,
+    ...(extra !== undefined && sameDimension(extra, raiseDimension(FREQUENCY, -1)) && hidden.length === 0 ? bandwidthLiteral(checked, context) : []),
+    ...(isImpedance && type.form === 'linear' && tree.type === 'literal' ? [context.rewrite(tree, `(${context.textOf(tree)})^2 / (50 ohm)`)] : []),
     ...(extra === undefined || type.form !== 'decibel' || hidden.length > 0 ? [] : factorRepairs(tree, extra, context)),
     ...(type.form === 'decibel' ? powerSumRepairs(checked, context, wanted) : []),
     unitRepair(type),
@@ -33,6 +35,15 @@ export function sayUnitMismatch(checked: Checked & { type: DecibelType | LinearT
     },
     repairs,
   });
+}
+
+/** A bandwidth written in dB where dBHz is meant: the largest literal in dB of the sum. */
+function bandwidthLiteral(checked: Checked, context: Context): Repair[] {
+  const literals = (checked.terms ?? []).flatMap(({ tree, coefficient }) =>
+    coefficient === 1 && tree.type === 'literal' && tree.unit?.word === 'dB' && tree.figure >= 20 ? [tree] : [],
+  );
+  const largest = literals.sort((a, b) => b.figure - a.figure)[0];
+  return largest === undefined ? [] : [context.rewrite(largest, `${String(largest.figure)} dBHz`)];
 }
 
 const squareOfRoot = (dimension: Dimension, unit: Unit): Dimension =>

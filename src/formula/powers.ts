@@ -4,8 +4,11 @@ import {
 } from '../quantity';
 import type { Check } from './check';
 import { broken, type Context } from './context';
-import { describeType } from './forms';
+import { describeType, termsOf } from './forms';
+import { sayHandConversion } from './hand-conversion';
+import { consume } from './judge';
 import { scalePlan, shiftPlan } from './plan';
+import { decibelSum, scaleTerms } from './sums';
 import type { BinaryTree } from './tree';
 import type { Checked, DecibelType, LinearType } from './types';
 
@@ -78,6 +81,11 @@ function powerOfTen(tree: BinaryTree, base: Checked, exponent: Checked & { type:
       repairs: [context.rewrite(tree, base.constant === 10 ? `lin(${text})` : `${context.textOf(base.tree)} ^ lin(${text})`)],
     });
   }
+  const terms = scaleTerms(termsOf(exponent, text), 10);
+  const whole = consume({ ...decibelSum(exponent.tree, terms, []), tree: exponent.tree }, context);
+  if (whole.type.form === 'broken') return broken(tree);
+  const divisor = type.scale < 0.075 ? 20 : 10;
+  sayHandConversion(exponent.tree, scaleTerms(terms, divisor / 10), 0, context, (quantity) => `(${quantity}/${String(divisor)})`);
   const meaning = type.meaning === undefined ? undefined : combineMeanings(NEUTRAL, type.meaning, 10);
   const result: LinearType = {
     form: 'linear',
@@ -88,7 +96,7 @@ function powerOfTen(tree: BinaryTree, base: Checked, exponent: Checked & { type:
     bandwidth: type.bandwidth,
     noiseTemperature: type.noiseTemperature,
   };
-  return { tree, type: result, plan: { op: 'linear', of: scalePlan(shiftPlan(exponent.plan, type.offsetDb), 10) }, parts: [exponent] };
+  return { tree, type: result, plan: { op: 'linear', of: scalePlan(shiftPlan(exponent.plan, type.offsetDb), 10) }, reference: 10 ** type.offsetDb, parts: [exponent] };
 }
 
 /** Exponents that rounding has moved off whole and half numbers, put back. */

@@ -59,6 +59,8 @@ type Linear = Checked & { readonly type: LinearType };
 type Decibel = Checked & { readonly type: DecibelType };
 
 function multiplyLinear(tree: BinaryTree, left: Linear, right: Linear, exponent: 1 | -1, context: Context): Checked {
+  const written = exponent === 1 ? (timesItsReference(left, right) ?? timesItsReference(right, left)) : undefined;
+  if (written !== undefined) return { ...written, tree, parts: [left, right] };
   const dimension = combineDimensions(left.type.dimension, right.type.dimension, exponent);
   const type: LinearType = {
     form: 'linear',
@@ -77,6 +79,13 @@ function multiplyLinear(tree: BinaryTree, left: Linear, right: Linear, exponent:
     left.constant === undefined || right.constant === undefined ? undefined : left.constant * right.constant ** exponent;
   const plan: Plan = { op: exponent === 1 ? 'product' : 'quotient', left: left.plan, right: right.plan };
   return { tree, type, plan, constant, parts: [left, right] };
+}
+
+/** `1 mW * 10^(P/10)`, with P in dBm, as textbooks write it: the power itself, for P carries its reference already. */
+function timesItsReference(literal: Linear, power: Linear): Checked | undefined {
+  if (literal.tree.type !== 'literal' || power.reference === undefined || literal.plan.op !== 'constant') return undefined;
+  const isSame = sameDimension(literal.type.dimension, power.type.dimension) && !isDimensionless(power.type.dimension);
+  return isSame && Math.abs(literal.plan.value / power.reference - 1) < 1e-9 ? power : undefined;
 }
 
 /** Whether a dimensionless result is a ratio of fields (1), of powers (2) or neither. */
@@ -218,6 +227,27 @@ function refuse(tree: BinaryTree, left: Checked, right: Checked, context: Contex
 const wholeOf = (context: Context, tree: Tree): Tree | undefined =>
   context.textOf(tree).length === context.entry.trim().length ? tree : undefined;
 
+/** x/(1 u) inside a logarithm: the type of decibels of x over u, as ISO 80000-1 writes levels. */
+export function overWrittenReference(argument: Checked, size: number): DecibelType | undefined {
+  const { tree, type, parts } = argument;
+  const [above, below] = parts;
+  if (tree.type !== 'binary' || tree.operator !== '/' || above?.type.form !== 'linear' || below?.tree.type !== 'literal') return undefined;
+  if (type.form !== 'linear' || !isDimensionless(type.dimension) || below.tree.figure !== 1 || below.plan.op !== 'constant') return undefined;
+  const field = isFieldLike(above.type);
+  if (isDimensionless(above.type.dimension) || (size === 10 && field)) return undefined;
+  // 20 log10 of a quantity that is no field stands for its square.
+  const dimension = size === 20 ? raiseDimension(above.type.dimension, 2) : above.type.dimension;
+  return {
+    form: 'decibel',
+    dimension,
+    offsetDb: size * Math.log10(below.plan.value),
+    scale: 1,
+    meaning: size === 20 ? squared(above.type.meaning) : above.type.meaning,
+    bandwidth: above.type.bandwidth,
+    noiseTemperature: above.type.noiseTemperature,
+  };
+}
+
 /** A literal number with its sign, or undefined. */
 function literalFactor(tree: Tree): number | undefined {
   if (tree.type === 'literal' && tree.unit === null) return tree.figure;
@@ -283,6 +313,6 @@ function logarithmIdiom(tree: BinaryTree, context: Context, check: Check): Check
         },
         plan: isHalf ? decibels : scalePlan(decibels, 2),
       };
-  const decibel: Checked = { tree, ...result, parts: [argument] };
+  const decibel: Checked = { tree, ...result, overReference: overWrittenReference(argument, size), parts: [argument] };
   return factor < 0 ? decibelSum(tree, scaleTerms(termsOf(decibel, context.textOf(tree)), -1), [argument]) : decibel;
 }

@@ -71,7 +71,11 @@ export function groupedAsRatios(terms: readonly SumTerm[], ratios: readonly SumT
 /** Noise figures as a cascade: the gain ahead of each later stage is the one named like its predecessor, else the first gain. */
 export function cascadeOfFigures(terms: readonly SumTerm[], figures: readonly SumTerm[], context: Context): Grouped | undefined {
   const gains = context.allLines().filter(
-    ({ kind, unit }) => kind === 'gain' && unit.form === 'decibel' && isDimensionless(unit.dimension),
+    ({ kind, unit, symbol, label, isDeclared }) =>
+      kind === 'gain' &&
+      unit.form === 'decibel' &&
+      isDimensionless(unit.dimension) &&
+      (isDeclared || unit.defaultKind === 'gain' || /^G/.test(symbol) || /\bgain\b/i.test(label)),
   );
   const gainAfter = (figure: SumTerm): string | undefined => {
     const suffix = (figure.symbol ?? '').replace(/^NF_?/, '');

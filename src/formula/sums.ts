@@ -154,6 +154,7 @@ function onlyOrigin(terms: readonly SumTerm[], attribute: 'bandwidth' | 'noiseTe
 
 /** A density plus a bandwidth is a power in that bandwidth; otherwise the bandwidth is that of the one power in the sum. */
 function bandwidthOfSum(terms: readonly SumTerm[], dimension: SumTerm['type']['dimension']): Origin | undefined {
+  if (isDimensionless(dimension)) return bandwidthOfRatio(terms);
   if (!sameDimension(dimension, POWER)) return undefined;
   const density = terms.some(({ coefficient, type }) => coefficient === 1 && sameDimension(type.dimension, POWER_DENSITY));
   const widths = terms.filter(({ coefficient, type }) => coefficient === 1 && sameDimension(type.dimension, FREQUENCY));
@@ -165,6 +166,13 @@ function bandwidthOfSum(terms: readonly SumTerm[], dimension: SumTerm['type']['d
       plan: { op: 'linear', of: { op: 'sum', terms: [{ coefficient: 1, plan: width.plan }], constant: width.type.offsetDb } },
     };
   return onlyOrigin(terms, 'bandwidth');
+}
+
+/** A ratio of levels is in the bandwidth of the one whose bandwidth is known. */
+function bandwidthOfRatio(terms: readonly SumTerm[]): Origin | undefined {
+  const origins = terms.flatMap(({ type }) => (type.bandwidth === undefined ? [] : [type.bandwidth]));
+  const [first] = origins;
+  return first !== undefined && origins.every(({ key }) => key === first.key) ? first : undefined;
 }
 
 function mixedForms(linear: readonly SignedPart[], all: readonly SignedPart[], tree: Tree, context: Context): Checked {
@@ -191,10 +199,12 @@ function mixedForms(linear: readonly SignedPart[], all: readonly SignedPart[], t
 
 /** Watts beside a level in dBm: both are powers and belong in one power sum, which takes either form. */
 function powerSumOfMixed(parts: readonly SignedPart[], tree: Tree, context: Context): Repair[] {
-  const isPower = ({ checked: { type }, sign }: SignedPart): boolean =>
-    sign === 1 && (type.form === 'linear' || type.form === 'decibel') && sameDimension(type.dimension, POWER);
+  const isPower = ({ checked: { type } }: SignedPart): boolean =>
+    (type.form === 'linear' || type.form === 'decibel') && sameDimension(type.dimension, POWER);
   if (!parts.every(isPower)) return [];
-  const call = `powersum(${parts.map(({ checked }) => context.textOf(checked.tree)).join(', ')})`;
+  const isDifference = parts.length === 2 && parts[0]?.sign === 1 && parts[1]?.sign === -1;
+  if (!isDifference && parts.some(({ sign }) => sign < 0)) return [];
+  const call = `${isDifference ? 'powerdiff' : 'powersum'}(${parts.map(({ checked }) => context.textOf(checked.tree)).join(', ')})`;
   return [{ kind: 'entry', title: call, entry: context.replace(tree, call) }];
 }
 

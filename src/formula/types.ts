@@ -78,6 +78,8 @@ export interface SumTerm {
   /** True for a bare number that counts as decibels. */
   readonly isNumber: boolean;
   readonly symbol?: string | undefined;
+  /** For logarithms over a written reference, 10*log10(x/1 mW): the type when read as decibels of x over that reference. */
+  readonly overReference?: DecibelType | undefined;
 }
 
 /** A checked expression. */
@@ -92,6 +94,10 @@ export interface Checked {
   readonly kind?: QuantityKind | undefined;
   readonly side?: Side | undefined;
   readonly isDeclared?: boolean | undefined;
+  /** See SumTerm. */
+  readonly overReference?: DecibelType | undefined;
+  /** For 10^(X/10): the SI value of X's reference, 0.001 for dBm. */
+  readonly reference?: number | undefined;
   /** Checked operands or arguments, for the working. */
   readonly parts: readonly Checked[];
 }

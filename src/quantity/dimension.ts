@@ -46,6 +46,7 @@ export function isDimensionless(a: Dimension): boolean {
 /** The dimension of a·bⁿ. */
 export function combineDimensions(a: Dimension, b: Dimension, exponent = 1): Dimension {
   if (isDimensionless(b)) return a;
+  if (a === NO_DIMENSION && exponent === 1) return b;
   return [
     a[0] + exponent * b[0],
     a[1] + exponent * b[1],

@@ -25,7 +25,8 @@ export function meaningOf(kind: QuantityKind, side: Side | undefined, declared: 
     case 'level':
       if (side === 'wanted') return { w: 1, u: 0, f: 0, l: 0, declared };
       if (side === 'unwanted') return { w: 0, u: 1, f: 0, l: 0, declared };
-      return { w: 0, u: 0, f: 0, l: 1, declared };
+      // A level whose side is not said is not wholly known.
+      return { w: 0, u: 0, f: 0, l: 1, declared: false };
     case 'temperature':
       return { w: 0, u: 1, f: 0, l: 0, declared };
     case 'signal ratio':
@@ -46,6 +47,8 @@ export function meaningOf(kind: QuantityKind, side: Side | undefined, declared: 
 
 /** The exponents of a·bⁿ. */
 export function combineMeanings(a: Meaning, b: Meaning, exponent = 1): Meaning {
+  if (b === NEUTRAL) return a;
+  if (a === NEUTRAL && exponent === 1) return b;
   return {
     w: a.w + exponent * b.w,
     u: a.u + exponent * b.u,
@@ -76,12 +79,23 @@ function resolutions({ w, u, l }: Meaning): (readonly [number, number])[] {
 
 /** True when the net is one that budgets have, for some choice of the sides not said. */
 export function hasAllowedNet(meaning: Meaning): boolean {
+  // Most sums have none or one level whose side is not said; they need no list of choices.
+  if (meaning.l === 0) return isAllowed(meaning.w, meaning.u);
+  if (meaning.l === 1) return isAllowed(meaning.w + 1, meaning.u) || isAllowed(meaning.w, meaning.u + 1);
   return resolutions(meaning).some(([w, u]) => isAllowed(w, u));
+}
+
+/** The meaning with its open sides settled, where only one choice of them gives a net that budgets have. */
+export function resolveMeaning(meaning: Meaning): Meaning {
+  if (near(meaning.l, 0)) return meaning;
+  const allowed = resolutions(meaning).filter(([w, u]) => isAllowed(w, u));
+  const [only] = allowed;
+  return allowed.length === 1 && only !== undefined ? { ...meaning, w: only[0], u: only[1], l: 0 } : meaning;
 }
 
 /** What the net makes of a result: its kind and side, as far as it tells. */
 export function kindOfNet(meaning: Meaning, dimensionless: boolean): { kind: QuantityKind; side?: Side } | undefined {
-  const { w, u, f, l } = meaning;
+  const { w, u, f, l } = resolveMeaning(meaning);
   const is = (ww: number, uu: number, ll: number): boolean => near(w, ww) && near(u, uu) && near(l, ll);
   if (is(1, 0, 0)) return { kind: 'level', side: 'wanted' };
   if (is(0, 1, 0)) return { kind: 'level', side: 'unwanted' };
@@ -89,7 +103,8 @@ export function kindOfNet(meaning: Meaning, dimensionless: boolean): { kind: Qua
   if (is(1, -1, 0) || is(0, -1, 1)) return { kind: 'signal ratio' };
   if (is(-1, 1, 0)) return { kind: 'impairment ratio' };
   if (is(0, -1, 0)) return { kind: 'figure of merit' };
-  if (is(0, 0, 0) && dimensionless) return { kind: near(f, 1) ? 'noise figure' : 'gain' };
+  if (is(0, 0, 0) && dimensionless && near(f, 1)) return { kind: 'noise figure' };
+  if (is(0, 0, 0) && dimensionless && near(f, 0)) return { kind: 'gain' };
   return undefined;
 }
 

@@ -6,7 +6,7 @@
  */
 import {
   AREA, CURRENT, ENTROPY, FIELD, FREQUENCY, IMPEDANCE, LENGTH, MAGNETIC_FIELD, NO_DIMENSION, POWER, POWER_DENSITY,
-  POWER_FLUX, TEMPERATURE, TIME, VOLTAGE, combineDimensions, raiseDimension, isRootPower,
+  POWER_FLUX, TEMPERATURE, TIME, VOLTAGE, combineDimensions, raiseDimension, isRootPower, sameDimension,
   type Dimension,
 } from './dimension';
 import type { QuantityKind } from './kinds';
@@ -275,7 +275,8 @@ function referenceUnit(text: string): DecibelUnit | undefined {
   if (match === null) return undefined;
   const reference = product(match[1] ?? '');
   if (reference === undefined) return undefined;
-  const root = isRootPower(reference.dimension);
+  // Antenna factors, field over voltage, are ratios of root-power quantities: dB(1/m) is 20 log10, of 1/m².
+  const root = isRootPower(reference.dimension) || sameDimension(reference.dimension, raiseDimension(LENGTH, -1));
   const dimension = root ? raiseDimension(reference.dimension, 2) : reference.dimension;
   const offsetDb = (root ? 20 : 10) * Math.log10(reference.factor);
   for (const unit of table.values()) {

@@ -51,17 +51,18 @@ export function workingOf(evaluation: Evaluation, lineId: string, caseId: string
   if (line === undefined || node === undefined) return undefined;
   const reading = evaluation.reading(lineId, caseId);
   const writer = new Writer(evaluation, caseId);
-  const contributions = writer.contributions(node);
+  const checked = evaluation.inspect(lineId, caseId);
+  const contributions = writer.contributions(node, checked);
   return {
     lineId,
     caseId,
     symbol: line.symbol,
     label: line.label,
     reading,
-    steps: writer.steps(node, reading),
+    steps: writer.steps(node, checked, reading),
     terms: contributions ?? writer.uses(node),
     shares: contributions !== undefined,
-    remarks: remarks(node),
+    remarks: remarks(node, checked),
   };
 }
 
@@ -87,9 +88,8 @@ class Writer {
     private readonly caseId: string,
   ) {}
 
-  steps(node: Node, reading: Reading): WorkingStep[] {
+  steps(node: Node, checked: Checked | undefined, reading: Reading): WorkingStep[] {
     const steps: WorkingStep[] = [];
-    const { checked } = node.result;
     const isExpression = node.read.form === 'expression';
     if (node.read.form !== 'empty') steps.push({ title: 'in symbols', pieces: this.entryPieces(node, false) });
     if (isExpression && node.symbols.length > 0) steps.push({ title: 'with values', pieces: this.entryPieces(node, true) });
@@ -208,8 +208,7 @@ class Writer {
   }
 
   /** The contributions to a power sum with their shares; undefined when the line is none. */
-  contributions(node: Node): WorkingTerm[] | undefined {
-    const { checked } = node.result;
+  contributions(node: Node, checked: Checked | undefined): WorkingTerm[] | undefined {
     const sum = checked?.tree.type === 'call' ? POWER_SUMS[checked.tree.name] : undefined;
     if (checked === undefined || sum === undefined) return undefined;
     const figures = checked.parts.map((part) => {
@@ -267,11 +266,10 @@ function resultPieces(value: number, unit: Unit, isFitted: boolean, typedDigits:
 }
 
 /** What a reviewer should know of the arithmetic: the formula and source of each model used, and which logarithm db took. */
-function remarks({ result }: Node): string[] {
-  const { tree, checked } = result;
+function remarks({ read }: Node, checked: Checked | undefined): string[] {
   const found = new Set<string>();
-  if (tree === undefined) return [];
-  walkTree(tree, (node) => {
+  if (read.form !== 'expression') return [];
+  walkTree(read.tree, (node) => {
     if (node.type !== 'call') return;
     const entry = findFunction(node.name);
     if (entry?.form === 'ordinary') found.add(`${entry.name}: ${entry.formula} (${entry.source})`);

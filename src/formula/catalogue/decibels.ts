@@ -6,9 +6,9 @@ import {
 import { align } from '../alignment';
 import { sayBandwidthsDiffer } from '../bandwidths';
 import { broken, type Context } from '../context';
-import { decibelsOf, describeType, linearOf } from '../forms';
+import { decibelsOf, describeType, isFieldLike, linearOf } from '../forms';
 import { shiftPlan, type Plan } from '../plan';
-import { originOf } from '../products';
+import { originOf, overWrittenReference } from '../products';
 import type { CallTree } from '../tree';
 import type { Checked, DecibelType } from '../types';
 import { quantityParameter, type FunctionEntry, type StructuralFunction } from './entry';
@@ -36,7 +36,8 @@ const toDecibels: StructuralFunction = {
         repairs: [context.rewrite(tree, text)],
       });
     if (operand.type.form !== 'linear') return refuse(tree, operand, 'a linear quantity', context);
-    return { tree, ...decibelsOf({ type: operand.type, plan: operand.plan }, false), parts: [operand] };
+    const overReference = overWrittenReference(operand, isFieldLike(operand.type) ? 20 : 10);
+    return { tree, ...decibelsOf({ type: operand.type, plan: operand.plan }, false), overReference, parts: [operand] };
   },
 };
 

@@ -29,13 +29,19 @@ export function callAt(entry: string, caret: number): CallAtCaret | undefined {
 }
 
 /** A signature cut into what stands before, in and after the argument that the caret is in. */
-export function signatureParts(signature: string, argument: number): readonly [before: string, at: string, after: string] {
+export function signatureParts(
+  signature: string,
+  argument: number,
+): readonly [before: string, at: string, after: string] {
   const open = signature.indexOf('(');
   const close = signature.lastIndexOf(')');
   if (open < 0 || close < open) return [signature, '', ''];
   const parameters = signature.slice(open + 1, close).split(',');
   const index = Math.min(argument, parameters.length - 1);
-  const before = parameters.slice(0, index).map((one) => `${one},`).join('');
+  const before = parameters
+    .slice(0, index)
+    .map((one) => `${one},`)
+    .join('');
   const at = parameters[index] ?? '';
   const lead = at.length - at.trimStart().length;
   const start = open + 1 + before.length + lead;

@@ -53,7 +53,9 @@ export class GridClipboard implements ClipboardDeeds {
       this.#take(text === this.#last.text ? this.#last.lines : '', text);
     } catch {
       // Refused, or not offered by this browser: the key works without asking.
-      session.notice = { text: 'The browser does not let the page read the clipboard from a menu. Press Ctrl+V instead.' };
+      session.notice = {
+        text: 'The browser does not let the page read the clipboard from a menu. Press Ctrl+V instead.',
+      };
     }
   }
 

@@ -21,7 +21,7 @@ export function caseOfColumn(column: string): string | undefined {
 }
 
 /** Least widths in CSS px; text columns share what is left. */
-const WIDTHS = { margin: 66, symbol: 92, label: 140, entry: 180, value: 122, requirement: 124, source: 130, note: 130 };
+const WIDTHS = { margin: 66, symbol: 92, label: 140, entry: 180, value: 122, requirement: 136, source: 130, note: 130 };
 
 /** Below this width of the whole page, a line is set in two rows. */
 export const NARROW_WIDTH = 700;

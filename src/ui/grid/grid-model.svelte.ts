@@ -190,7 +190,10 @@ export class GridModel {
       const row = this.rows[index];
       if (row === undefined) return;
       if (row.kind !== 'line') continue;
-      this.put({ row: row.key, cell: cellNearest(row, this.columns, this.#wanted) }, { extend: true, keepWanted: true });
+      this.put(
+        { row: row.key, cell: cellNearest(row, this.columns, this.#wanted) },
+        { extend: true, keepWanted: true },
+      );
       return;
     }
   }

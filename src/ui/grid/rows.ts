@@ -43,7 +43,8 @@ export const lineKey = (lineId: string): string => `line ${lineId}`;
 export const sectionKey = (sectionId: string): string => `section ${sectionId}`;
 export const addKey = (sectionId: string): string => `add ${sectionId}`;
 /** Also the id of the element that holds the finding's words: without blanks. */
-export const findingKey = (lineId: string, index: number): string => `finding-${lineId.replace(/\s/g, '_')}-${String(index)}`;
+export const findingKey = (lineId: string, index: number): string =>
+  `finding-${lineId.replace(/\s/g, '_')}-${String(index)}`;
 export const NEW_SECTION_KEY = 'new-section';
 
 /** Whether a line's findings stand open unless somebody says otherwise: errors and warnings do, notes and accepted ones not. */

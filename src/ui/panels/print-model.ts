@@ -12,7 +12,8 @@ import { groupFindings, type FindingItem } from './finding-groups';
 export interface PrintSource {
   readonly reading: (lineId: string, caseId: string) => Reading;
   readonly findings: () => readonly LineFinding[];
-  readonly working: (lineId: string, caseId: string) => Working;
+  /** Undefined for a line that is not there. */
+  readonly working: (lineId: string, caseId: string) => Working | undefined;
 }
 
 /** A line as it is printed. */
@@ -101,6 +102,7 @@ function workingsOf(cases: readonly Case[], line: Line, source: PrintSource): Pr
   const found = new Map<string, { caseNames: string[]; working: Working }>();
   for (const one of cases) {
     const working = source.working(line.id, one.id);
+    if (working === undefined) continue;
     const key = JSON.stringify([working.steps, working.terms]);
     const same = found.get(key);
     if (same === undefined) found.set(key, { caseNames: [one.name], working });

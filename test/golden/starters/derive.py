@@ -9,7 +9,7 @@ their definitions, and each line's arithmetic is put down in notes.md as it was 
 
 import json
 import sys
-from math import cos, inf, isinf, log10, pi, radians, sin, sqrt
+from math import asin, cos, inf, isinf, log10, pi, radians, sin, sqrt
 from pathlib import Path
 
 HERE = Path(__file__).parent
@@ -163,7 +163,7 @@ def harbour_buoy_uplink(case):
     p_crane = a.given("P_crane", -inf if storm else -58.0, "dBm")
     acs = a.given("ACS", 52.0, "dB")
     i_crane = a.line(
-        "I_crane", p_crane - acs, "dBm", "no power, whatever is lost of it" if storm else f"{w(p_crane)} − {w(acs)}"
+        "I_crane", p_crane - acs, "dBm", "nothing less 52 dB is nothing" if storm else f"{w(p_crane)} − {w(acs)}"
     )
     i_pump = a.given("I_pump", -112.5 if storm else -inf, "dBm")
     n_tot, text = power_sum([n, i_ferry, i_crane, i_pump])
@@ -276,7 +276,7 @@ def small_satellite_downlink(case):
     )
     # The same range by another way: the law of cosines with the angle at the centre of the Earth.
     nadir = r_e * cos(radians(el)) / (r_e + h)
-    centre = pi / 2 - radians(el) - asin_of(nadir)
+    centre = pi / 2 - radians(el) - asin(nadir)
     other = sqrt(r_e**2 + (r_e + h) ** 2 - 2 * r_e * (r_e + h) * cos(centre))
     assert abs(d - other) < 1e-6, "the two ways to the slant range differ"
     f = a.given("f", 2.245, "GHz")
@@ -354,17 +354,6 @@ def small_satellite_downlink(case):
     a.line("M", ebn0 - l_impl - ebn0_req, "dB", f"{w(ebn0)} − {w(l_impl)} − {w(ebn0_req)}")
     a.require("M", "at least", 3.0)
     return a
-
-
-def asin_of(sine):
-    """Arc sine by Newton's method, so that the second way to the slant range shares nothing with the first."""
-    angle = 0.0
-    for _ in range(60):
-        slope = cos(angle)
-        if slope == 0:
-            break
-        angle -= (sin(angle) - sine) / slope
-    return angle
 
 
 STARTERS = {
