@@ -146,11 +146,16 @@ export interface KeyStroke {
 
 const byKey = new Map(KEY_BINDINGS.flatMap((one) => one.keys.map((key) => [key, one] as const)));
 
+/** True for the name of a key that types a character, and not, for instance, `Enter`. */
+export function isOneCharacter(key: string): boolean {
+  return /^.$/su.test(key);
+}
+
 /** A key stroke as the table writes it: `Ctrl+Shift+Z`. Shift is left out where it only makes the character. */
 export function strokeName(stroke: KeyStroke): string {
   const { key, code, altKey, shiftKey } = stroke;
   const ctrl = stroke.ctrlKey || stroke.metaKey;
-  const isCharacter = [...key].length === 1;
+  const isCharacter = isOneCharacter(key);
   let name = key === ' ' ? 'Space' : isCharacter ? key.toUpperCase() : key;
   if (altKey && /^Key[A-Z]$/.test(code)) name = code.slice(3);
   const makesCharacter = isCharacter && key !== ' ' && !ctrl && !altKey;
@@ -170,7 +175,7 @@ export function actionFor(stroke: KeyStroke, place: KeyPlace): Action | undefine
  */
 export function typesText(stroke: KeyStroke): boolean {
   if (stroke.key === 'Process' || stroke.key === 'Dead' || stroke.key === 'Unidentified') return true;
-  if ([...stroke.key].length !== 1 || stroke.metaKey) return false;
+  if (!isOneCharacter(stroke.key) || stroke.metaKey) return false;
   return stroke.ctrlKey === stroke.altKey;
 }
 

@@ -4,7 +4,13 @@
  * worksheet in the store is never replaced by a file without the person having said so.
  */
 import { fail, ok, type Result } from '../base';
-import { readWorksheetBytes, readWorksheetFile, writeWorksheetFile, type FileFault, type ReadWorksheet } from '../exchange';
+import {
+  readWorksheetBytes,
+  readWorksheetFile,
+  writeWorksheetFile,
+  type FileFault,
+  type ReadWorksheet,
+} from '../exchange';
 import type { StoreFault, StoredWorksheet } from '../store';
 import { duplicateWorksheet, newWorksheet, type Worksheet } from '../worksheet';
 import type { Keeping, KeptWorksheet } from './keeping.svelte';

@@ -95,7 +95,9 @@ export class Sheet {
   }
 
   /** Undoes or redoes; undefined when there is nothing to. `said` says what it changed. */
-  travel(step: (history: History) => Travel | undefined): { readonly travel: Travel; readonly said: string } | undefined {
+  travel(
+    step: (history: History) => Travel | undefined,
+  ): { readonly travel: Travel; readonly said: string } | undefined {
     const travel = step(this.#history);
     if (travel === undefined) return undefined;
     this.#history = travel.history;

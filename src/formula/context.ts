@@ -46,7 +46,7 @@ export class Context {
 
   /** The line that most likely states the bandwidth, for repairs. */
   bandwidthTerm(): string | undefined {
-    const lines = this.linesOf(FREQUENCY);
+    const lines = this.linesOf(FREQUENCY).filter(({ kind, unit }) => kind !== 'signal ratio' && !/bit|Bd/.test(unit.word));
     const named = lines.find(({ symbol, label }) => /^(B|BW|B_.*|W_.*)$/.test(symbol) || /\bbandwidth\b/i.test(label));
     const only = lines.filter(({ symbol }) => !/^[fFR]/.test(symbol));
     const line = named ?? (only.length === 1 ? only[0] : undefined);

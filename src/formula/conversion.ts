@@ -59,7 +59,7 @@ function ownDecibel(type: DecibelType, { plan }: Checked): Converted {
 
 function ownLinear(type: LinearType, { plan }: Checked): Converted {
   const unit = fittingLinearUnit(type.dimension, [type.unitHint]);
-  return { unit, plan: unit.form === 'linear' ? inLinearUnit(plan, unit) : plan, isFitted: type.unitHint === undefined };
+  return { unit, plan: unit.form === 'linear' ? inLinearUnit(plan, unit) : plan, isFitted: type.unitHint?.form !== 'linear' };
 }
 
 /** An SI value as a figure in the unit; literals come back as typed. */

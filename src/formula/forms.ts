@@ -30,6 +30,8 @@ export function decibelsOf(linear: { type: LinearType; plan: Plan }, zeroIsNoPow
       meaning: fieldLike ? squared(meaning) : meaning,
       bandwidth,
       noiseTemperature,
+      // A power that came out of dBm goes back into dBm.
+      unitHint: linear.type.unitHint?.form === 'decibel' ? linear.type.unitHint : undefined,
     },
     plan: fieldLike ? scalePlan(decibels, 2) : decibels,
   };
@@ -53,6 +55,7 @@ export function linearOf(decibel: { type: DecibelType; plan: Plan }): { type: Li
       meaning: root && type.meaning !== undefined ? combineMeanings(NEUTRAL, type.meaning, 0.5) : type.meaning,
       bandwidth: type.bandwidth,
       noiseTemperature: type.noiseTemperature,
+      unitHint: type.unitHint,
     },
     plan: { op: 'linear', of: root ? scalePlan(full, 0.5) : full },
   };

@@ -2,9 +2,11 @@
  * Judging decibel sums as wholes: levels that were added, ratios and noise figures that were added, nets that no budget has,
  * and the notes. A sum is judged where it ends: as a line's result, as an argument, in a comparison.
  */
-import { describeNet, hasAllowedNet, type Meaning, type QuantityKind } from '../quantity';
+import { describeNet, hasAllowedNet, POWER, sameDimension, type Meaning, type QuantityKind } from '../quantity';
 import { broken, type Context } from './context';
+import { differByImpedance } from './alignment';
 import { findAveraged } from './averages';
+import { describeType } from './forms';
 import { isLevel, judgedNet } from './net';
 import { sayNotes } from './notes';
 import {
@@ -52,6 +54,7 @@ function judge(checked: Checked, terms: readonly SumTerm[], context: Context, li
 
 function sayLevelsSummed(tree: Tree, terms: readonly SumTerm[], context: Context): void {
   const levels = terms.filter((term) => isLevel(term) && term.coefficient > 0);
+  if (sayVoltageAmongPowers(tree, terms, levels, context)) return;
   const grouped = groupedAsPowers(terms, levels, 'powersum', context);
   const inPhase = groupedAsPowers(terms, levels, 'fieldsum', context);
   context.say('levels-summed', tree, {
@@ -59,6 +62,20 @@ function sayLevelsSummed(tree: Tree, terms: readonly SumTerm[], context: Context
     repairs: repairsOf(grouped, tree, context),
     ...(inPhase === undefined ? {} : { figures: { inPhase: context.replace(tree, inPhase.text) } }),
   });
+}
+
+/** A level of voltage added to one of power: what is missing first is the impedance. */
+function sayVoltageAmongPowers(tree: Tree, terms: readonly SumTerm[], levels: readonly SumTerm[], context: Context): boolean {
+  const power = levels.find(({ type }) => sameDimension(type.dimension, POWER));
+  const voltage = levels.find((term) => power !== undefined && differByImpedance(term.type.dimension, power.type.dimension));
+  if (power === undefined || voltage === undefined) return false;
+  const inPower = levels.map((term) => (differByImpedance(term.type.dimension, power.type.dimension) ? { ...term, text: `${term.text} - db(50 ohm)` } : term));
+  const all = terms.map((term) => inPower[levels.indexOf(term)] ?? term);
+  context.say('field-and-power', voltage.tree, {
+    facts: { what: voltage.text, found: describeType(voltage.type), declared: `${describeType(power.type)}, as ${power.text} is` },
+    repairs: repairsOf(groupedAsPowers(all, inPower, 'powersum', context), tree, context),
+  });
+  return true;
 }
 
 function repairsOf(grouped: Grouped | undefined, tree: Tree, context: Context): ReturnType<Context['rewrite']>[] {

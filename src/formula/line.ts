@@ -18,6 +18,7 @@ import { sayConstantHidesUnit, hasDimensionedTerms, hidesBoltzmann, type Hidden 
 import { consume } from './judge';
 import { convertResult, readOverReference } from './conversion';
 import { nearestName } from './nearest';
+import { judgedNet } from './net';
 import { sayLineRemarks } from './line-remarks';
 import { constantPlan, type Plan } from './plan';
 import { readPlainQuantity, type EntryFault } from './scan';
@@ -168,6 +169,9 @@ function findHidden(checked: Checked, declared: Unit | undefined, context: Conte
   const { type } = checked;
   if (type.form !== 'decibel') return undefined;
   const terms = termsOf(checked, context.textOf(checked.tree));
+  const net = judgedNet(terms);
+  // Of levels added the finding is another; no number in such a sum stands for a unit.
+  if (net.w + net.u + net.l > 2 - 1e-9) return undefined;
   if (declared?.form === 'decibel') {
     const read = readOverReference({ ...checked, type }, declared).type;
     if (read.form === 'decibel' && sameDimension(read.dimension, declared.dimension)) {

@@ -6,13 +6,17 @@ export function nearestName(name: string, candidates: Iterable<string>): string 
   const allowed = Math.max(1, Math.floor(name.length / 3));
   let best: string | undefined;
   let bestDistance = allowed + 1;
+  let bestExact = Infinity;
   for (const candidate of candidates) {
     if (Math.abs(candidate.length - name.length) > allowed) continue;
     const distance = editDistance(wanted, candidate.toLowerCase(), bestDistance);
-    if (distance < bestDistance) {
-      best = candidate;
-      bestDistance = distance;
-    }
+    if (distance > bestDistance || distance > allowed) continue;
+    // Of equally near ones the nearest in case as well: Mhz is MHz and not mHz.
+    const exact = editDistance(name, candidate, name.length + candidate.length);
+    if (distance === bestDistance && exact >= bestExact) continue;
+    best = candidate;
+    bestDistance = distance;
+    bestExact = exact;
   }
   return best;
 }

@@ -24,6 +24,11 @@ export function checkPower(tree: BinaryTree, context: Context, check: Check): Ch
       repairs:
         base.type.form === 'decibel' ? [context.rewrite(tree, `lin(${context.textOf(base.tree)}) ^ ${context.textOf(exponent.tree)}`)] : [],
     });
+  if (base.constant === 10 && tree.right.type === 'literal' && tree.right.unit !== null)
+    return context.stop('unit-mismatch', exponent.tree, {
+      facts: { what: `The exponent ${context.textOf(exponent.tree)}`, found: describeType(exponent.type), declared: 'a plain number' },
+      repairs: [context.rewrite(tree, `1e${context.textOf(exponent.tree)}`)],
+    });
   if (base.type.form !== 'linear' || exponent.type.form !== 'linear' || !isDimensionless(exponent.type.dimension))
     return context.stop(exponent.type.form === 'linear' && base.type.form === 'linear' ? 'unit-mismatch' : 'wrong-arguments', exponent.tree, {
       facts: {
@@ -81,11 +86,12 @@ function powerOfTen(tree: BinaryTree, base: Checked, exponent: Checked & { type:
       repairs: [context.rewrite(tree, base.constant === 10 ? `lin(${text})` : `${context.textOf(base.tree)} ^ lin(${text})`)],
     });
   }
-  const terms = scaleTerms(termsOf(exponent, text), 10);
+  // The sum counts once, whether it was divided by 10 or by 20.
+  const terms = scaleTerms(termsOf(exponent, text), 1 / type.scale);
   const whole = consume({ ...decibelSum(exponent.tree, terms, []), tree: exponent.tree }, context);
   if (whole.type.form === 'broken') return broken(tree);
-  const divisor = type.scale < 0.075 ? 20 : 10;
-  sayHandConversion(exponent.tree, scaleTerms(terms, divisor / 10), 0, context, (quantity) => `(${quantity}/${String(divisor)})`);
+  const divisor = Math.round(1 / type.scale);
+  sayHandConversion(exponent.tree, terms, 0, context, (quantity) => `(${quantity}/${String(divisor)})`);
   const meaning = type.meaning === undefined ? undefined : combineMeanings(NEUTRAL, type.meaning, 10);
   const result: LinearType = {
     form: 'linear',
@@ -95,6 +101,7 @@ function powerOfTen(tree: BinaryTree, base: Checked, exponent: Checked & { type:
     meaning,
     bandwidth: type.bandwidth,
     noiseTemperature: type.noiseTemperature,
+    unitHint: termsOf(exponent, text).find(({ type: { unitHint } }) => unitHint !== undefined)?.type.unitHint,
   };
   return { tree, type: result, plan: { op: 'linear', of: scalePlan(shiftPlan(exponent.plan, type.offsetDb), 10) }, reference: 10 ** type.offsetDb, parts: [exponent] };
 }

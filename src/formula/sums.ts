@@ -122,10 +122,16 @@ export function decibelSum(tree: Tree, terms: readonly SumTerm[], parts: readonl
     meaning,
     bandwidth: bandwidthOfSum(terms, dimension),
     noiseTemperature: onlyOrigin(terms, 'noiseTemperature'),
-    unitHint: isDimensionless(dimension) && terms.length > 1 ? undefined : sameUnit?.type.unitHint,
+    unitHint: isDimensionless(dimension) && terms.length > 1 ? fullScaleHint(terms) : sameUnit?.type.unitHint,
   };
   const plan: Plan = foldSum(terms);
   return { tree, type, plan, terms, parts };
+}
+
+/** A level over full scale less ratios stays one. */
+function fullScaleHint(terms: readonly SumTerm[]): DecibelType['unitHint'] {
+  const levels = terms.filter(({ type }) => type.unitHint?.word === 'dBFS');
+  return levels.length === 1 && levels[0]?.coefficient === 1 ? levels[0].type.unitHint : undefined;
 }
 
 /** The sum as a plan, constants folded in the order written. */

@@ -19,6 +19,8 @@ const IMPAIRMENT = /^(EVM|SPUR|spur|IMR|IM3R)(_.*|\d*)$/;
 const UNWANTED = /^(N|I)(_.*|\d*)$/;
 const WANTED = /^(S|C)(_.*|\d*)$/;
 const MARGIN = /margin|headroom|reserve|backoff|back-off|degradation|improvement|rise|delta|difference/i;
+/** What a signal ratio's name goes on with when it is a difference of such ratios and no ratio itself. */
+const DIFFERENCE = /_(loss|gap|penalty|offset|allowance|step|change|correction|corr|impl|implementation|gain|deg)(_.*)?$/i;
 const INSIDE_ONE_SIDE = /^(I_N|I_over_N|INR|IoverN)(_.*|\d*)$/i;
 
 const LABEL_LOSS = /\b(loss|losses|attenuation|aclr|acs|rejection|isolation)\b/i;
@@ -83,6 +85,7 @@ const BY_LABEL: readonly (readonly [RegExp, QuantityKind])[] = [
 
 function assumeRatio(symbol: string, label: string): Assumption | undefined {
   if (MARGIN.test(symbol) || MARGIN.test(label) || INSIDE_ONE_SIDE.test(symbol)) return undefined;
+  if (SIGNAL_RATIO.test(symbol) && DIFFERENCE.test(symbol)) return undefined;
   for (const [pattern, kind] of BY_SYMBOL) if (pattern.test(symbol)) return { kind };
   const kinds = BY_LABEL.filter(([pattern]) => pattern.test(label)).map(([, kind]) => kind);
   // Two words of different kinds in one label say nothing for certain.

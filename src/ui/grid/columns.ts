@@ -106,7 +106,7 @@ export function cellNearest(row: Row, columns: readonly Column[], wanted: CellNa
   if (row.kind === 'line') return 'symbol';
   if (row.kind === 'section') return 'title';
   if (row.kind === 'add') {
-    const at = columns.indexOf(wanted as Column);
+    const at = columns.findIndex((one) => one === wanted);
     return at >= 0 && at > columns.indexOf('entry') ? 'entry' : 'symbol';
   }
   return cells[0] ?? 'title';

@@ -44,7 +44,7 @@ export function runAction(model: GridModel, action: Action): boolean {
       return true;
     case 'page-up':
     case 'page-down':
-      model.moveRows(action === 'page-up' ? -model.rowsPerView : model.rowsPerView);
+      model.moveRows(action === 'page-up' ? -model.view.rowsPerView : model.view.rowsPerView);
       return true;
     case 'extend-up':
     case 'extend-down':

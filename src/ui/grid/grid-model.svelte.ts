@@ -1,7 +1,6 @@
 /**
- * The state of the grid: its rows and columns, what of it is in view, where the cursor is, and what is being edited.
- * Holds: the row with the cursor is always among the rendered ones; when rows above change, the view moves along so that
- * the row that a person looks at stays where it is.
+ * The state of the grid: its rows and columns, where the cursor is, what is folded, and what is being edited.
+ * Holds: the cursor is on a cell of a row that is there, as long as `rescueCursor` is called after rows have gone.
  */
 import { tick } from 'svelte';
 import type { Session } from '../../app/session.svelte';
@@ -18,7 +17,8 @@ import {
   type CellName,
   type Column,
 } from './columns';
-import { RowLayout } from './row-layout';
+import { NO_ENTRIES, NO_MEMBERS, placesByKey, withEntry, withMember } from './collections';
+import { GridView } from './grid-view.svelte';
 import { addKey, expectedHeight, lineKey, NEW_SECTION_KEY, rowsOf, sectionKey, type Row } from './rows';
 
 /** A cell of the grid. */
@@ -32,26 +32,11 @@ export interface Editing extends Cell {
   readonly typed: boolean;
 }
 
-/** A row to be rendered, and where. */
-export interface PlacedRow {
-  readonly row: Row;
-  readonly index: number;
-  readonly top: number;
-}
-
-/** How far beyond the view rows are rendered, in CSS px. */
-const OVERSCAN = 240;
-
 /** The grid's state. One per grid. */
 export class GridModel {
   readonly session: Session;
 
-  // What the page's layout tells
-  scrollTop = $state(0);
-  viewHeight = $state(600);
-  viewWidth = $state(1000);
-  pageWidth = $state(1280);
-  headerHeight = $state(34);
+  readonly view: GridView;
 
   cursor = $state.raw<Cell>({ row: '', cell: 'symbol' });
   editing = $state.raw<Editing | null>(null);
@@ -60,31 +45,39 @@ export class GridModel {
   /** The cell where a run of Tab began, or null: Enter goes back below it. */
   runStart: CellName | null = null;
 
-  #collapsed = $state.raw<ReadonlySet<string>>(new Set());
-  #folding = $state.raw<ReadonlyMap<string, boolean>>(new Map());
-  #layoutVersion = $state(0);
-  /** Heights that were measured, by row key; kept while rows come and go. */
-  readonly #measured = new Map<string, number>();
+  #collapsed = $state.raw(NO_MEMBERS);
+  #folding = $state.raw<ReadonlyMap<string, boolean>>(NO_ENTRIES);
   /** The column that up and down keep to. */
   #wanted: CellName = 'symbol';
   #lastIndex = 0;
-  /** The row that is to stay where it is, and its distance from the top of the view. */
-  #anchor = { row: '', offset: 0 };
-  #scroller: HTMLElement | null = null;
 
   constructor(session: Session) {
     this.session = session;
+    const rows = (): readonly Row[] => this.rows;
+    const linear = (): boolean => session.showLinear;
+    const narrow = (): boolean => this.narrow;
+    this.view = new GridView({
+      get rows() {
+        return rows();
+      },
+      indexOf: (key) => this.indexOf(key),
+      cursorKey: () => this.cursor.row,
+      expectedHeight: (row) => expectedHeight(row, linear()),
+      get setting() {
+        return `${String(linear())} ${String(narrow())}`;
+      },
+    });
   }
 
   // Rows and columns
 
-  readonly narrow = $derived.by(() => this.pageWidth <= NARROW_WIDTH);
+  readonly narrow = $derived.by(() => this.view.pageWidth <= NARROW_WIDTH);
 
   readonly columns: readonly Column[] = $derived.by(() =>
     columnsOf({
       worksheet: this.session.worksheet,
       choices: this.session.settings.columns,
-      width: this.viewWidth,
+      width: this.view.width,
       narrow: this.narrow,
       caseId: this.session.selectedCaseId,
     }),
@@ -102,58 +95,18 @@ export class GridModel {
     }),
   );
 
-  readonly #indexes: ReadonlyMap<string, number> = $derived.by(
-    () => new Map(this.rows.map((row, index) => [row.key, index])),
-  );
-
-  readonly #layout: RowLayout = $derived.by(() => {
-    const linear = this.session.showLinear;
-    const { rows } = this;
-    return new RowLayout(rows.length, (index) => {
-      const row = rows[index];
-      return row === undefined ? 0 : (this.#measured.get(row.key) ?? expectedHeight(row, linear));
-    });
-  });
-
-  /** The height of all rows, in CSS px. */
-  readonly contentHeight = $derived.by(() => {
-    void this.#layoutVersion;
-    return this.#layout.total;
-  });
-
-  /** The rows to render, from top to bottom. */
-  readonly placed: readonly PlacedRow[] = $derived.by(() => {
-    void this.#layoutVersion;
-    const layout = this.#layout;
-    const first = layout.at(this.scrollTop - OVERSCAN);
-    const last = layout.at(this.scrollTop + this.viewHeight + OVERSCAN);
-    const indexes: number[] = [];
-    const cursorIndex = this.indexOf(this.cursor.row);
-    if (cursorIndex >= 0 && cursorIndex < first) indexes.push(cursorIndex);
-    for (let index = Math.max(first, 0); index <= last; index++) indexes.push(index);
-    if (cursorIndex > last) indexes.push(cursorIndex);
-    return indexes.flatMap((index) => {
-      const row = this.rows[index];
-      return row === undefined ? [] : [{ row, index, top: layout.top(index) }];
-    });
-  });
+  readonly #indexes: ReadonlyMap<string, number> = $derived.by(() => placesByKey(this.rows));
 
   /** The place of a row, or −1. */
   indexOf(key: string): number {
     return this.#indexes.get(key) ?? -1;
   }
 
-  /** The middle of a row from the top of all rows, in CSS px. */
-  middleOf(index: number): number {
-    void this.#layoutVersion;
-    return this.#layout.top(index) + Math.min(this.#layout.height(index), 32) / 2;
-  }
-
   get cursorRow(): Row | undefined {
     return this.rows[this.indexOf(this.cursor.row)];
   }
 
-  /** The lines that are selected, from top to bottom; also those of folded sections between. */
+  /** The lines that are selected, from top to bottom; those of folded sections are not among them. */
   get selectedLineIds(): readonly string[] {
     const { selection } = this.session;
     if (selection.anchorId === null) return selection.lineId === null ? [] : [selection.lineId];
@@ -217,13 +170,6 @@ export class GridModel {
     if (cell !== undefined) this.put({ row: row.key, cell });
   }
 
-  /** Rows that make up one view. */
-  get rowsPerView(): number {
-    const layout = this.#layout;
-    const first = layout.at(this.scrollTop);
-    return Math.max(layout.at(this.scrollTop + this.viewHeight - this.headerHeight) - first - 1, 1);
-  }
-
   /**
    * Finds a place for a cursor whose row is gone: on the line of a finding that was put right, else near where it was.
    * Call it after the rows have changed.
@@ -285,16 +231,12 @@ export class GridModel {
 
   /** Puts the lines of a section away, or shows them. */
   setCollapsed(sectionId: string, collapsed: boolean): void {
-    if (this.#collapsed.has(sectionId) === collapsed) return;
-    const next = new Set(this.#collapsed);
-    if (collapsed) next.add(sectionId);
-    else next.delete(sectionId);
-    this.#collapsed = next;
+    this.#collapsed = withMember(this.#collapsed, sectionId, collapsed);
   }
 
   /** Folds the findings of a line, or opens them. */
   setUnfolded(lineId: string, unfolded: boolean): void {
-    this.#folding = new Map(this.#folding).set(lineId, unfolded);
+    this.#folding = withEntry(this.#folding, lineId, unfolded);
   }
 
   // Editing
@@ -304,84 +246,13 @@ export class GridModel {
     this.editing = { ...this.cursor, typed };
   }
 
-  // The view
-
-  /** Tells which element scrolls. Returns the function that ends it. */
-  attach(scroller: HTMLElement): () => void {
-    this.#scroller = scroller;
-    return () => {
-      this.#scroller = null;
-    };
-  }
-
-  /** Takes the new scroll position from the element. */
-  scrolled(): void {
-    if (this.#scroller === null) return;
-    this.scrollTop = this.#scroller.scrollTop;
-    this.#dropAnchor();
-  }
-
-  /** Takes measured heights; rows above the anchor move the view along. */
-  measured(heights: readonly (readonly [key: string, height: number])[]): void {
-    let changed = false;
-    for (const [key, height] of heights) {
-      if (this.#measured.get(key) === height) continue;
-      this.#measured.set(key, height);
-      this.#layout.set(this.indexOf(key), height);
-      changed = true;
-    }
-    if (!changed) return;
-    this.#layoutVersion += 1;
-    this.holdAnchor();
-  }
-
-  /** Forgets all measured heights: the setting of all rows has changed. */
-  forgetHeights(): void {
-    this.#measured.clear();
-  }
-
-  /** Scrolls so that the anchor's row is where it was, after rows or heights have changed. */
-  holdAnchor(): void {
-    const index = this.indexOf(this.#anchor.row);
-    if (index < 0 || this.#scroller === null) return;
-    const wanted = Math.max(this.#layout.top(index) - this.#anchor.offset, 0);
-    if (Math.abs(wanted - this.#scroller.scrollTop) < 1) return;
-    this.scrollTo(wanted);
-  }
-
-  /** Scrolls to a position. */
-  scrollTo(top: number): void {
-    if (this.#scroller === null) return;
-    this.#scroller.scrollTop = top;
-    this.scrollTop = this.#scroller.scrollTop;
-  }
-
-  /** Scrolls as little as needed for the cursor's row to be in view, and makes it the row that stays where it is. */
-  reveal(): void {
-    const index = this.indexOf(this.cursor.row);
-    if (index < 0) return;
-    const top = this.#layout.top(index);
-    const bottom = top + this.#layout.height(index);
-    const room = this.viewHeight - this.headerHeight;
-    if (top < this.scrollTop) this.scrollTo(top);
-    else if (bottom > this.scrollTop + room) this.scrollTo(bottom - room + 8);
-    this.#anchor = { row: this.cursor.row, offset: top - this.scrollTop };
-  }
-
-  /** The cursor's row, if in view, else the first row in view, is to stay where it is. */
-  #dropAnchor(): void {
-    const cursorIndex = this.indexOf(this.cursor.row);
-    const top = this.#layout.top(cursorIndex);
-    const isSeen = cursorIndex >= 0 && top >= this.scrollTop && top < this.scrollTop + this.viewHeight;
-    const index = isSeen ? cursorIndex : this.#layout.at(this.scrollTop);
-    this.#anchor = { row: this.rows[index]?.key ?? '', offset: this.#layout.top(index) - this.scrollTop };
-  }
+  // The browser's focus
 
   /** Brings the browser's focus to the cursor's cell once it is rendered. */
   async focusCursor(): Promise<void> {
-    this.reveal();
+    this.view.reveal(this.cursor.row);
     await tick();
-    const cell = this.#scroller?.querySelector<HTMLElement>('[data-cursor]');
+    const cell = this.view.scroller?.querySelector<HTMLElement>('[data-cursor]');
     const target = cell?.querySelector<HTMLElement>('[data-focus]') ?? cell;
     target?.focus({ preventScroll: true });
     cell?.scrollIntoView({ block: 'nearest', inline: 'nearest' });
@@ -389,13 +260,6 @@ export class GridModel {
 
   /** True when the browser's focus is in the grid. */
   get hasFocus(): boolean {
-    return this.#scroller?.contains(document.activeElement) ?? false;
-  }
-
-  /** The key of the place for a new line below the section of a row. */
-  addKeyFor(row: Row): string {
-    if (row.kind === 'section' || row.kind === 'add') return addKey(row.section.id);
-    if (row.kind === 'line') return addKey(row.sectionId);
-    return NEW_SECTION_KEY;
+    return this.view.scroller?.contains(document.activeElement) ?? false;
   }
 }

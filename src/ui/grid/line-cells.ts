@@ -13,15 +13,12 @@ export interface Verdict {
 
 /** The verdict for the worst case, which is named when cases differ. Undefined while no case has a figure. */
 export function verdictOf(readings: readonly Reading[], cases: readonly Case[]): Verdict | undefined {
-  let worst: { readonly reading: RequirementReading; readonly at: number } | undefined;
-  let differ = false;
-  readings.forEach(({ requirement }, at) => {
-    if (requirement === undefined) return;
-    if (worst !== undefined && requirement.margin !== worst.reading.margin) differ = true;
-    if (worst === undefined || requirement.margin < worst.reading.margin) worst = { reading: requirement, at };
-  });
-  if (worst === undefined) return undefined;
-  const { reading, at } = worst as { readonly reading: RequirementReading; readonly at: number };
+  const judged = readings.flatMap(({ requirement }, at) => (requirement === undefined ? [] : [{ requirement, at }]));
+  const [first, ...others] = judged;
+  if (first === undefined) return undefined;
+  const worst = others.reduce((a, b) => (b.requirement.margin < a.requirement.margin ? b : a), first);
+  const differ = others.some(({ requirement }) => requirement.margin !== first.requirement.margin);
+  const { requirement: reading, at } = worst;
   const name = differ ? `, ${cases[at]?.name ?? ''}` : '';
   const margin = marginText(reading);
   return { met: reading.met, text: `${reading.met ? 'met by' : 'missed by'} ${margin}${name}` };
