@@ -11,6 +11,8 @@ const path = (relative: string): string => fileURLToPath(new URL(relative, impor
 
 // The package's export map hides its grammar from imports; the grammar alone is wanted, not the function library.
 const alias = {
+  // The same library without the helpers for browsers that cannot run this page anyway.
+  dexie: path('./node_modules/dexie/dist/modern/dexie.mjs'),
   'hot-formula-parser/grammar': path('./node_modules/hot-formula-parser/grammar-parser/grammar-parser.mjs'),
 };
 

@@ -1,7 +1,9 @@
 /**
  * What the page says aloud: one sentence at a time in a polite live region.
- * Holds: what is said within a short while is said together, once; saying the same sentence again is heard again.
+ * Holds: what is said within a short while is said together, once, the last three sentences of it; saying the same sentence again is heard again.
  */
+
+const MOST_TOGETHER = 3;
 
 /** Collects sentences and lets them be heard after a short silence. */
 export class Announcer {
@@ -19,6 +21,8 @@ export class Announcer {
   say(sentence: string): void {
     if (sentence === '' || this.#waiting.includes(sentence)) return;
     this.#waiting.push(sentence);
+    // A key held down does many things; what came last is what counts.
+    this.#waiting = this.#waiting.slice(-MOST_TOGETHER);
     clearTimeout(this.#timer);
     this.#timer = setTimeout(() => this.flush(), this.#silenceMs);
   }

@@ -5,6 +5,7 @@
 import { isDimensionless, type DecibelUnit } from '../quantity';
 import type { Context } from './context';
 import { isLevel } from './net';
+import { withoutTerm } from './repairs';
 import type { Tree } from './tree';
 import type { SumTerm } from './types';
 
@@ -17,7 +18,7 @@ const near = (a: number, b: number): boolean => Math.abs(a - b) < 0.06;
 export function sayHandConversion(
   tree: Tree, terms: readonly SumTerm[], resultOffsetDb: number, context: Context, write: (quantity: string) => string = (quantity) => quantity,
 ): boolean {
-  if (terms.length !== 2) return false;
+  if (terms.length !== 2) return sayBareStep(tree, terms, resultOffsetDb, context, write);
   const [quantity, ...rest] = [...terms].sort((a, b) => Number(isFigure(a)) - Number(isFigure(b)));
   const [figure] = rest;
   if (quantity === undefined || figure === undefined || rest.length !== 1 || !isFigure(figure) || isFigure(quantity)) return false;
@@ -26,6 +27,17 @@ export function sayHandConversion(
   const added = figure.coefficient * figure.plan.value;
   if (near(step, 0) || !near(added, step)) return false;
   say(tree, String(Math.abs(added)), write(quantity.text), context);
+  return true;
+}
+
+/** In longer sums only a number without any unit is taken for a step: 30 dB may be an amplifier's gain. */
+function sayBareStep(tree: Tree, terms: readonly SumTerm[], resultOffsetDb: number, context: Context, write: (quantity: string) => string): boolean {
+  const rest = terms.filter(({ isNumber }) => !isNumber);
+  const offsetDb = rest.reduce((sum, { coefficient, type }) => sum + coefficient * type.offsetDb, 0);
+  const step = offsetDb - resultOffsetDb;
+  const number = terms.find(({ isNumber, plan, coefficient }) => isNumber && plan.op === 'constant' && near(coefficient * plan.value, step));
+  if (number === undefined || near(step, 0)) return false;
+  say(tree, number.text, write(withoutTerm(terms, number).text), context);
   return true;
 }
 

@@ -23,6 +23,8 @@ const literal = (figure: string, unit: string) => (sign: number) => ({ text: `${
 const KNOWN: readonly Known[] = [
   { from: 32.4, to: 32.46, standsFor: 'free-space loss with MHz and km (or GHz and m)' },
   { from: 92.4, to: 92.5, standsFor: 'free-space loss with GHz and km' },
+  { from: -77.3, to: -77.1, standsFor: 'the step from a field in dBµV/m to the power of an isotropic antenna in dBm, with MHz' },
+  { from: 77.1, to: 77.3, standsFor: 'the step from the power of an isotropic antenna in dBm to a field in dBµV/m, with MHz' },
   { from: 36.5, to: 36.6, standsFor: 'free-space loss with MHz and statute miles' },
   { from: 96.5, to: 96.6, standsFor: 'free-space loss with GHz and statute miles' },
   { from: 37.8, to: 37.81, standsFor: 'free-space loss with MHz and nautical miles' },

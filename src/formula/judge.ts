@@ -39,7 +39,13 @@ function judge(checked: Checked, terms: readonly SumTerm[], context: Context, li
   const net = judgedNet(terms);
   const levels = net.w + net.u + net.l;
   if (levels > 2 - 1e-9) {
-    sayLevelsSummed(checked.tree, terms, context);
+    sayLevelsSummed(checked.tree, terms, terms.filter((term) => isLevel(term) && term.coefficient > 0), context);
+    return false;
+  }
+  // S − N − I: the levels taken off are added as well, and what is left is the inverse of a level, which no line is.
+  const takenOff = terms.filter((term) => isLevel(term) && term.coefficient < 0);
+  if (levels < -1 + 1e-9 && takenOff.length > 1 && line !== undefined) {
+    sayLevelsSummed(checked.tree, terms, takenOff, context);
     return false;
   }
   const averaged = findAveraged(checked.tree, terms, context);
@@ -52,8 +58,7 @@ function judge(checked: Checked, terms: readonly SumTerm[], context: Context, li
   return true;
 }
 
-function sayLevelsSummed(tree: Tree, terms: readonly SumTerm[], context: Context): void {
-  const levels = terms.filter((term) => isLevel(term) && term.coefficient > 0);
+function sayLevelsSummed(tree: Tree, terms: readonly SumTerm[], levels: readonly SumTerm[], context: Context): void {
   if (sayVoltageAmongPowers(tree, terms, levels, context)) return;
   const grouped = groupedAsPowers(terms, levels, 'powersum', context);
   const inPhase = groupedAsPowers(terms, levels, 'fieldsum', context);

@@ -17,6 +17,7 @@ import { sayFactorInLogarithm, sayHandConversion } from './hand-conversion';
 import { sayConstantHidesUnit, hasDimensionedTerms, hidesBoltzmann, type Hidden } from './hidden-units';
 import { consume } from './judge';
 import { convertResult, readOverReference } from './conversion';
+import { sayUnitMismatch } from './mismatch';
 import { nearestName } from './nearest';
 import { judgedNet } from './net';
 import { sayLineRemarks } from './line-remarks';
@@ -194,6 +195,8 @@ function settle(spec: LineSpec, draft: Draft, declared: Unit | undefined, contex
     draft.checked === undefined
       ? undefined
       : consume(draft.checked, context, { symbol: spec.symbol, label: spec.label, kind: spec.quantity ?? assumed?.kind ?? nameKind(spec), hidden: hidden?.term });
+  if (draft.checked?.type.form === 'decibel' && checked?.type.form === 'broken' && declared !== undefined)
+    sayInverseLevel({ ...draft.checked, type: draft.checked.type }, declared, context);
   const converted = checked === undefined || isUnitInError ? undefined : convertResult(checked, declared, context, hidden?.repairs);
   const unit = declared ?? converted?.unit;
   const isInError = converted === undefined || context.waitsFor.length > 0 || context.remarks.some(isErrorRemark);
@@ -214,6 +217,14 @@ function settle(spec: LineSpec, draft: Draft, declared: Unit | undefined, contex
   const constant = sortIsPure && draft.bareFigure !== undefined ? draft.bareFigure : undefined;
   const { looksAround } = context;
   return { unit, isFitted, plan, type, kind, side, constant, typedDigits, isEmpty: false, isInError, remarks, looksAround, waitsFor, symbols };
+}
+
+/** S − N − I in a line in dB: beside the levels added, what is left has not the unit declared. */
+function sayInverseLevel(checked: Checked & { type: DecibelType }, declared: Unit, context: Context): void {
+  const net = judgedNet(termsOf(checked, ''));
+  const isInverse = net.w + net.u + net.l < -1 + 1e-9;
+  if (isInverse && declared.form !== 'rate' && !sameDimension(checked.type.dimension, declared.dimension))
+    sayUnitMismatch(checked, declared, context);
 }
 
 const NO_FIGURE = constantPlan(NaN);

@@ -23,4 +23,4 @@ export function placesByKey(items: readonly { readonly key: string }[]): Readonl
 export const NO_MEMBERS: ReadonlySet<string> = new Set();
 
 /** An empty map, for a beginning. */
-export const NO_ENTRIES: ReadonlyMap<string, never> = new Map();
+export const NO_ENTRIES: ReadonlyMap<string, never> = new Map<string, never>();

@@ -116,7 +116,7 @@ export function cellNearest(row: Row, columns: readonly Column[], wanted: CellNa
 export function columnName(column: CellName, worksheet: Worksheet): string {
   const caseId = caseOfColumn(column);
   if (caseId !== undefined) return worksheet.cases.find((one) => one.id === caseId)?.name ?? caseId;
-  return NAMES[column as keyof typeof NAMES] ?? '';
+  return NAMES[column] ?? '';
 }
 
 const NAMES: Readonly<Partial<Record<CellName, string>>> = {

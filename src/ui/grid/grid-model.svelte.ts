@@ -19,7 +19,7 @@ import {
 } from './columns';
 import { NO_ENTRIES, NO_MEMBERS, placesByKey, withEntry, withMember } from './collections';
 import { GridView } from './grid-view.svelte';
-import { addKey, expectedHeight, lineKey, NEW_SECTION_KEY, rowsOf, sectionKey, type Row } from './rows';
+import { expectedHeight, lineKey, rowsOf, sectionKey, type Row } from './rows';
 
 /** A cell of the grid. */
 export interface Cell {
@@ -210,6 +210,7 @@ export class GridModel {
   toTop(): void {
     const first = this.rows.find((row) => row.kind === 'line' || row.kind === 'add') ?? this.rows[0];
     if (first !== undefined) this.put({ row: first.key, cell: cellNearest(first, this.columns, 'symbol') });
+    this.view.toTop();
   }
 
   #cellFor(field: string | undefined, caseId: string | undefined): CellName {

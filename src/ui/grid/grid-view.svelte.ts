@@ -139,16 +139,28 @@ export class GridView {
     if (Math.abs(wanted - this.#scroller.scrollTop) >= 1) this.#scrollTo(wanted);
   }
 
-  /** Scrolls as little as needed for a row to be in view, and makes it the row that stays where it is. */
-  reveal(key: string): void {
+  /**
+   * Scrolls as little as needed for a row to be in view, and makes it the row that stays where it is. With `amid`, a row that
+   * is out of view comes to a third of the view's height, so that it is seen among its neighbours.
+   */
+  reveal(key: string, amid = false): void {
     const index = this.#viewed.indexOf(key);
     if (index < 0) return;
     const top = this.#layout.top(index);
     const bottom = top + this.#layout.height(index);
     const room = this.height - this.headerHeight;
-    if (top < this.scrollTop) this.#scrollTo(top);
-    else if (bottom > this.scrollTop + room) this.#scrollTo(bottom - room + 8);
+    const isAbove = top < this.scrollTop;
+    const isBelow = bottom > this.scrollTop + room;
+    if (amid && (isAbove || isBelow)) this.#scrollTo(top - room / 3);
+    else if (isAbove) this.#scrollTo(index === 1 ? 0 : top);
+    else if (isBelow) this.#scrollTo(bottom - room + 8);
     this.#anchor = { row: key, offset: top - this.scrollTop };
+  }
+
+  /** Scrolls to the top. */
+  toTop(): void {
+    this.#scrollTo(0);
+    this.#dropAnchor();
   }
 
   #scrollTo(top: number): void {

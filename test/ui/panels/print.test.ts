@@ -1,0 +1,126 @@
+import { cleanup, render, screen, within } from '@testing-library/svelte';
+import { afterEach, describe, expect, it } from 'vitest';
+
+import { workingOf } from '../../../src/review';
+import { casesAbreast, printDocument, type PrintSource } from '../../../src/ui/panels/print-model';
+import PrintView from '../../../src/ui/panels/PrintView.svelte';
+import { evaluate, SHEET } from './sheet';
+
+afterEach(cleanup);
+
+const evaluation = evaluate();
+const source: PrintSource = {
+  reading: (lineId, caseId) => evaluation.reading(lineId, caseId),
+  findings: () => evaluation.sheetFindings(),
+  working: (lineId, caseId) => workingOf(evaluation, lineId, caseId),
+};
+
+describe('what is printed', () => {
+  const print = printDocument(SHEET, source);
+
+  it('holds every line in every case, in order', () => {
+    const lines = print.sections.flatMap((section) => section.lines ?? []);
+    expect(lines.map(({ line }) => line.id)).toEqual(['p', 'l', 'e', 'n', 'i', 'bad', 'good', 'w', 's']);
+    expect(lines.every(({ readings }) => readings.length === SHEET.cases.length)).toBe(true);
+    expect(lines[0]?.overrides).toEqual([{ caseName: 'Storm', entry: '13 dBm' }]);
+  });
+
+  it('names a section of a kind that is not evaluated, without lines', () => {
+    expect(print.sections.at(-1)).toEqual({ id: 'pool', title: 'Other harbours' });
+  });
+
+  it('numbers sources and notes by their first mention, equal ones once', () => {
+    expect(print.endnotes).toEqual(['Source: Invented.', 'Two metres.']);
+    const notes = print.sections.flatMap((section) => section.lines ?? []).map((line) => line.notes);
+    expect(notes.slice(0, 3)).toEqual([[1], [1, 2], []]);
+  });
+
+  it('marks what radiates', () => {
+    expect(print.radiates).toBe(true);
+    const marked = print.sections.flatMap((section) => section.lines ?? []).filter((line) => line.radiates);
+    expect(marked.map(({ line }) => line.symbol)).toEqual(['EIRP']);
+  });
+
+  it('gives the working of required lines, once for cases that read the same', () => {
+    expect(print.workings.map(({ working, caseNames }) => [working.symbol, caseNames])).toEqual([
+      ['EIRP', ['Calm']],
+      ['EIRP', ['Storm']],
+      ['SINR', ['Calm']],
+      ['SINR', ['Storm']],
+    ]);
+    const alike = printDocument({ ...SHEET, cases: SHEET.cases }, { ...source, working: (id) => source.working(id, 'calm') });
+    expect(alike.workings.map(({ working, caseNames }) => [working.symbol, caseNames])).toEqual([
+      ['EIRP', ['Calm', 'Storm']],
+      ['SINR', ['Calm', 'Storm']],
+    ]);
+  });
+
+  it('leaves out lines that only wait from the findings', () => {
+    expect(print.findings.map(({ finding }) => finding.code)).toEqual(['levels-summed', 'ratios-summed']);
+  });
+});
+
+describe('many cases', () => {
+  it('stand in groups of five, each with its place among all', () => {
+    const cases = Array.from({ length: 12 }, (_, i) => ({ id: `c${String(i)}`, name: `Case ${String(i)}` }));
+    const groups = casesAbreast(cases);
+    expect(groups.map((group) => group.length)).toEqual([5, 5, 2]);
+    expect(groups.flat().map(({ index }) => index)).toEqual(cases.map((_, i) => i));
+  });
+});
+
+describe('the page on paper', () => {
+  const printing = () => window.dispatchEvent(new Event('beforeprint'));
+
+  it('is there only while the page is being printed', async () => {
+    const { container } = render(PrintView, { worksheet: SHEET, source, linear: false });
+    expect(container.querySelector('table')).toBeNull();
+    printing();
+    expect(container.querySelectorAll('table')).toHaveLength(2);
+    window.dispatchEvent(new Event('afterprint'));
+    await Promise.resolve();
+    expect(container.querySelector('table')).toBeNull();
+  });
+
+  it('holds title, cautions, requirements, lines, findings, workings and endnotes', () => {
+    const { container } = render(PrintView, { worksheet: SHEET, source, linear: true });
+    printing();
+    expect(screen.getByRole('heading', { level: 1 }).textContent).toBe('Buoy');
+    expect(screen.getAllByRole('heading', { level: 2 }).map((heading) => heading.textContent)).toEqual([
+      'Requirements',
+      'Lines',
+      'Findings',
+      'Working of the required lines',
+      'Sources and notes',
+    ]);
+    const text = container.textContent.replace(/\s+/g, ' ');
+    for (const words of [
+      'Everything here is invented.',
+      'Cases: Calm, Storm',
+      'confirm them by measurement',
+      'Exposure of people to radio-frequency fields is not assessed',
+      'at most 14.5 dBm',
+      'not met, 0.50 dB short',
+      '31.62 mW',
+      'withheld',
+      'Not answered.',
+      'this version does not evaluate it',
+      'Two metres.',
+    ])
+      expect(text).toContain(words);
+  });
+
+  it('gives linear values only when they are shown', () => {
+    render(PrintView, { worksheet: SHEET, source, linear: false });
+    printing();
+    const [, lines] = screen.getAllByRole('table');
+    if (lines === undefined) throw new Error('the table of lines is the second');
+    expect(within(lines).queryByText('31.62 mW')).toBeNull();
+  });
+
+  it('tells the margins of the paper the title', () => {
+    render(PrintView, { worksheet: { ...SHEET, title: 'A "quoted" \\ title' }, source, linear: false });
+    printing();
+    expect(document.documentElement.style.getPropertyValue('--printed-title')).toBe('"A \\"quoted\\" \\\\ title"');
+  });
+});
