@@ -3,10 +3,14 @@
 import AxeBuilder from '@axe-core/playwright';
 import { test as base, expect, type Page } from '@playwright/test';
 
+import { WorksheetPage } from './pages/worksheet-page';
+
 /** Success criteria checked: WCAG 2.0, 2.1 and 2.2, levels A and AA. */
 const wcagTags = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'];
 
 interface Fixtures {
+  /** The page's model; it is opened by the test. */
+  readonly sheet: WorksheetPage;
   /** Expects that the page, or the part of it that the CSS selector names, breaks no rule of WCAG 2.2 A and AA. */
   readonly expectAccessible: (selector?: string) => Promise<void>;
 }
@@ -35,6 +39,9 @@ export const test = base.extend<Fixtures>({
     const errors = watchForErrors(page);
     await use(page);
     expect(errors, 'errors on the page').toEqual([]);
+  },
+  sheet: async ({ page }, use) => {
+    await use(new WorksheetPage(page));
   },
   expectAccessible: async ({ page }, use) => {
     await use(async (selector) => {

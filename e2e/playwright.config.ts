@@ -25,7 +25,9 @@ export default defineConfig({
   fullyParallel: true,
   workers: 2,
   retries: 0,
-  timeout: 60_000,
+  // A journey is long and the machine may be small and busy: these bound a test that hangs, they are no measure of speed.
+  timeout: 180_000,
+  expect: { timeout: 20_000 },
   reporter: [['list'], ['json', { outputFile: '../node_modules/.cache/levelwright-test/browser.json' }]],
   use: {
     baseURL: `http://127.0.0.1:${port}/`,

@@ -26,7 +26,10 @@ function report({ file, evaluation }: Opened): { lines: string[]; exitCode: Exit
   });
   for (const line of evaluation.lines()) {
     if (line.requirement === undefined) continue;
-    const bound = line.requirement.atLeast === undefined ? `at most ${line.requirement.atMost}` : `at least ${line.requirement.atLeast}`;
+    const bound =
+      line.requirement.atLeast === undefined
+        ? `at most ${line.requirement.atMost}`
+        : `at least ${line.requirement.atLeast}`;
     for (const { id } of cases) {
       const { requirement } = evaluation.reading(line.id, id);
       const standing =
@@ -36,5 +39,8 @@ function report({ file, evaluation }: Opened): { lines: string[]; exitCode: Exit
       lines.push(`${file}: ${id}: ${nameOfLine(evaluation, line)}: requirement ${bound}: ${standing}`);
     }
   }
-  return { lines: lines.map((line) => line.replace(/\s*\n\s*/g, ' ')), exitCode: exitCodeOf({ evaluation, cases, lines: evaluation.lines(), findings }) };
+  return {
+    lines: lines.map((line) => line.replace(/\s*\n\s*/g, ' ')),
+    exitCode: exitCodeOf({ evaluation, cases, lines: evaluation.lines(), findings }),
+  };
 }

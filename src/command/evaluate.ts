@@ -59,7 +59,10 @@ function write(selection: Selection, format: Format): string {
 /** 1 when an error finding or an unmet requirement is among what was chosen. */
 export function exitCodeOf({ evaluation, cases, lines, findings }: Omit<Selection, 'linear'>): ExitCode {
   const hasError = findings.some(({ severity }) => severity === 'error');
-  const isUnmet = lines.some(({ id, requirement }) => requirement !== undefined && cases.some((one) => evaluation.reading(id, one.id).requirement?.met === false));
+  const isUnmet = lines.some(
+    ({ id, requirement }) =>
+      requirement !== undefined && cases.some((one) => evaluation.reading(id, one.id).requirement?.met === false),
+  );
   return hasError || isUnmet ? 1 : 0;
 }
 
@@ -109,7 +112,12 @@ function lineAsJson(evaluation: Evaluation, line: Line, cases: readonly Case[]):
 function caseAsJson(reading: Reading | undefined, unit: string | null): unknown {
   const figure = reading?.figure;
   if (figure?.state !== 'value') {
-    return { value: null, linear: null, linearUnit: null, ...(figure?.state === 'waiting' ? { waitsFor: figure.roots } : {}) };
+    return {
+      value: null,
+      linear: null,
+      linearUnit: null,
+      ...(figure?.state === 'waiting' ? { waitsFor: figure.roots } : {}),
+    };
   }
   const { value } = figure;
   const linear = linearValue(value, figure.unit) ?? siValue(value, figure.unit);
@@ -123,7 +131,13 @@ function caseAsJson(reading: Reading | undefined, unit: string | null): unknown 
     linearUnit: linear.unit,
     ...(reading?.requirement === undefined
       ? {}
-      : { requirement: { met: reading.requirement.met, margin: reading.requirement.margin, unit: reading.requirement.unit } }),
+      : {
+          requirement: {
+            met: reading.requirement.met,
+            margin: reading.requirement.margin,
+            unit: reading.requirement.unit,
+          },
+        }),
   };
 }
 

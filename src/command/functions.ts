@@ -7,7 +7,10 @@ export function describeFunctions(name: string | undefined): Answer {
   if (name === undefined) return { results: listing(), messages: '', exitCode: 0 };
   const entry = findFunction(name);
   if (entry === undefined) {
-    const nearest = nearestName(name, FUNCTIONS.map((other) => other.name));
+    const nearest = nearestName(
+      name,
+      FUNCTIONS.map((other) => other.name),
+    );
     throw new Refusal(`There is no function “${name}”.${nearest === undefined ? '' : ` Is it “${nearest}”?`}`);
   }
   return { results: describe(entry), messages: '', exitCode: 0 };
@@ -26,7 +29,8 @@ function describe(entry: FunctionEntry): string {
     const inUnit = unit === '' || unit === '1' ? '' : `, in ${unit}`;
     return `    ${name}: ${text}${inUnit}${standard === undefined ? '' : `; ${standard} when left out`}\n`;
   });
-  const validity = entry.form === 'ordinary' && entry.validity !== undefined ? `  holds for ${entry.validity.range}\n` : '';
+  const validity =
+    entry.form === 'ordinary' && entry.validity !== undefined ? `  holds for ${entry.validity.range}\n` : '';
   return (
     `${signatureOf(entry)}\n  ${entry.text}\n` +
     `  parameters\n${parameters.join('')}` +

@@ -26,7 +26,11 @@ export function openFile(file: string, world: World): Opened {
   const { worksheet, readOnly, messages } = read.value;
   const evaluation = new Evaluation(worksheet);
   const nameOf = (id: string): string => worksheet.cases.find((one) => one.id === id)?.name ?? id;
-  const told = [...(readOnly === undefined ? [] : [readOnly]), ...messages, ...movedValues(evaluation).map((moved) => describeMoved(moved, nameOf))];
+  const told = [
+    ...(readOnly === undefined ? [] : [readOnly]),
+    ...messages,
+    ...movedValues(evaluation).map((moved) => describeMoved(moved, nameOf)),
+  ];
   return { file, evaluation, messages: told.map((sentence) => `${file}: ${sentence}\n`).join('') };
 }
 
@@ -34,7 +38,8 @@ export function openFile(file: string, world: World): Opened {
 export function chooseCases({ evaluation, file }: Opened, wanted: readonly string[]): readonly Case[] {
   const { cases } = evaluation.worksheet;
   const unknown = wanted.find((word) => !cases.some(({ id, name }) => id === word || name === word));
-  if (unknown !== undefined) throw new Refusal(`${file}: there is no case “${unknown}”; there are ${cases.map(({ id }) => id).join(', ')}.`);
+  if (unknown !== undefined)
+    throw new Refusal(`${file}: there is no case “${unknown}”; there are ${cases.map(({ id }) => id).join(', ')}.`);
   return wanted.length === 0 ? cases : cases.filter(({ id, name }) => wanted.includes(id) || wanted.includes(name));
 }
 
@@ -42,8 +47,16 @@ export function chooseCases({ evaluation, file }: Opened, wanted: readonly strin
 export function lineWithSymbol({ evaluation, file }: Opened, symbol: string): Line {
   const line = evaluation.lineOf(symbol);
   if (line !== undefined) return line;
-  const nearest = nearestName(symbol, evaluation.lines().map((other) => other.symbol));
-  throw new Refusal(`${file}: there is no line “${symbol}”${nearest === undefined ? '' : `; is it “${nearest}”?`}`.replace(/([^?])$/, '$1.'));
+  const nearest = nearestName(
+    symbol,
+    evaluation.lines().map((other) => other.symbol),
+  );
+  throw new Refusal(
+    `${file}: there is no line “${symbol}”${nearest === undefined ? '' : `; is it “${nearest}”?`}`.replace(
+      /([^?])$/,
+      '$1.',
+    ),
+  );
 }
 
 /** The name under which a line stands in results: its symbol, or its id where it has none or another line has it. */

@@ -45,7 +45,11 @@ export function run(words: readonly string[], world: World): Answer {
     }
   } catch (refusal) {
     if (!(refusal instanceof Refusal)) throw refusal;
-    return { results: '', messages: refusal.message.endsWith('\n') ? refusal.message : `${refusal.message}\n`, exitCode: 2 };
+    return {
+      results: '',
+      messages: refusal.message.endsWith('\n') ? refusal.message : `${refusal.message}\n`,
+      exitCode: 2,
+    };
   }
 }
 
@@ -73,13 +77,23 @@ function evaluate(words: readonly string[], world: World): Answer {
   });
   const [file, ...more] = positionals;
   if (file === undefined || more.length > 0) throw new Refusal(`evaluate takes one file.\n\n${USAGE}`);
-  return evaluateFile(file, { cases: listOf(values['case']), lines: listOf(values['line']), format: formatOf(values['format']), linear: values['linear'] === true }, world);
+  return evaluateFile(
+    file,
+    {
+      cases: listOf(values['case']),
+      lines: listOf(values['line']),
+      format: formatOf(values['format']),
+      linear: values['linear'] === true,
+    },
+    world,
+  );
 }
 
 function formatOf(value: Parsed['values'][string]): Format {
   const wanted = value ?? 'text';
   const format = FORMATS.find((known) => known === wanted);
-  if (format === undefined) throw new Refusal(`There is no format “${String(wanted)}”; there are ${FORMATS.join(', ')}.`);
+  if (format === undefined)
+    throw new Refusal(`There is no format “${String(wanted)}”; there are ${FORMATS.join(', ')}.`);
   return format;
 }
 
@@ -92,7 +106,8 @@ function check(words: readonly string[], world: World): Answer {
 function explain(words: readonly string[], world: World): Answer {
   const { values, positionals } = parse(words, { case: { type: 'string', multiple: true } });
   const [file, symbol, ...more] = positionals;
-  if (file === undefined || symbol === undefined || more.length > 0) throw new Refusal(`explain takes a file and a symbol.\n\n${USAGE}`);
+  if (file === undefined || symbol === undefined || more.length > 0)
+    throw new Refusal(`explain takes a file and a symbol.\n\n${USAGE}`);
   return explainLine(file, symbol, listOf(values['case']), world);
 }
 

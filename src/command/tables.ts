@@ -37,7 +37,11 @@ interface Row {
 }
 
 const boundText = ({ requirement }: Line): string =>
-  requirement === undefined ? '' : requirement.atLeast !== undefined ? `at least ${requirement.atLeast}` : `at most ${requirement.atMost}`;
+  requirement === undefined
+    ? ''
+    : requirement.atLeast !== undefined
+      ? `at least ${requirement.atLeast}`
+      : `at most ${requirement.atMost}`;
 
 function requirementText({ evaluation }: Selection, line: Line, caseId: string): string {
   const reading = evaluation.reading(line.id, caseId).requirement;
@@ -51,14 +55,21 @@ function rowsOf(selection: Selection, lines: readonly Line[]): Row[] {
   const { evaluation, cases, linear } = selection;
   return lines.map((line) => ({
     line,
-    cells: [line.symbol, line.label, ...cases.map(({ id }) => figureText(evaluation.reading(line.id, id).figure, line, linear)), requirementCell(selection, line)],
+    cells: [
+      line.symbol,
+      line.label,
+      ...cases.map(({ id }) => figureText(evaluation.reading(line.id, id).figure, line, linear)),
+      requirementCell(selection, line),
+    ],
   }));
 }
 
 /** The requirement with how each case stands to it. */
 function requirementCell(selection: Selection, line: Line): string {
   if (line.requirement === undefined) return '';
-  const cases = selection.cases.map(({ id, name }) => `${selection.cases.length > 1 ? `${name}: ` : ''}${requirementText(selection, line, id)}`);
+  const cases = selection.cases.map(
+    ({ id, name }) => `${selection.cases.length > 1 ? `${name}: ` : ''}${requirementText(selection, line, id)}`,
+  );
   return `${boundText(line)}; ${cases.join('; ')}`;
 }
 
@@ -82,17 +93,20 @@ function findingTexts({ evaluation, findings, cases }: Selection): string[] {
   });
 }
 
+/** How many columns of a terminal a text takes, by code points: figures and symbols hold none that take two. */
+const columnsOf = (text: string): number => Array.from(text).length;
+
 /** Columns padded to their widest cell; trailing blanks are dropped. */
 export function writeText(selection: Selection): string {
   const head = headOf(selection);
   const sections = sectionsOf(selection).map(({ title, lines }) => ({ title, rows: rowsOf(selection, lines) }));
   const all = [head, ...sections.flatMap(({ rows }) => rows.map(({ cells }) => cells))];
-  const widths = head.map((_, column) => Math.max(...all.map((cells) => [...(cells[column] ?? '')].length)));
+  const widths = head.map((_, column) => Math.max(...all.map((cells) => columnsOf(cells[column] ?? ''))));
   const isFigure = (column: number): boolean => column >= 2 && column < head.length - 1;
   const write = (cells: readonly string[]): string =>
     cells
       .map((cell, column) => {
-        const blank = ' '.repeat(Math.max(0, (widths[column] ?? 0) - [...cell].length));
+        const blank = ' '.repeat(Math.max(0, (widths[column] ?? 0) - columnsOf(cell)));
         return isFigure(column) ? blank + cell : cell + blank;
       })
       .join('  ')
@@ -121,7 +135,14 @@ export function writeMarkdown(selection: Selection): string {
   const findings = findingTexts(selection);
   return [
     `# ${escapeMarkdown(selection.evaluation.worksheet.title)}`,
-    ...sectionsOf(selection).flatMap(({ title, lines }) => ['', `## ${escapeMarkdown(title)}`, '', row(head), rule, ...rowsOf(selection, lines).map(({ cells }) => row(cells))]),
+    ...sectionsOf(selection).flatMap(({ title, lines }) => [
+      '',
+      `## ${escapeMarkdown(title)}`,
+      '',
+      row(head),
+      rule,
+      ...rowsOf(selection, lines).map(({ cells }) => row(cells)),
+    ]),
     ...(findings.length === 0 ? [] : ['', '## Findings', '', ...list(findings)]),
     '',
     '## Cautions',
@@ -139,14 +160,29 @@ const csvCell = (text: string): string => (/[",\r\n]/.test(text) ? `"${text.repl
 /** One row a line and case, values in full. */
 export function writeCsv(selection: Selection): string {
   const { evaluation, cases, linear } = selection;
-  const head = ['section', 'symbol', 'label', 'case', 'value', 'unit', ...(linear ? ['linear', 'linear unit'] : []), 'requirement', 'met', 'margin', 'margin unit', 'findings'];
+  const head = [
+    'section',
+    'symbol',
+    'label',
+    'case',
+    'value',
+    'unit',
+    ...(linear ? ['linear', 'linear unit'] : []),
+    'requirement',
+    'met',
+    'margin',
+    'margin unit',
+    'findings',
+  ];
   const rows = sectionsOf(selection).flatMap(({ title, lines }) =>
     lines.flatMap((line) =>
       cases.map(({ id }) => {
         const { figure, requirement } = evaluation.reading(line.id, id);
         const isValue = figure.state === 'value';
         const other = isValue ? linearValue(figure.value, figure.unit) : undefined;
-        const codes = selection.findings.filter(({ lineId, caseIds }) => lineId === line.id && caseIds.includes(id)).map(({ code }) => code);
+        const codes = selection.findings
+          .filter(({ lineId, caseIds }) => lineId === line.id && caseIds.includes(id))
+          .map(({ code }) => code);
         return [
           csvText(title),
           csvText(line.symbol),
@@ -154,7 +190,12 @@ export function writeCsv(selection: Selection): string {
           csvText(id),
           isValue && Number.isFinite(figure.value) ? String(figure.value) : '',
           csvText(isValue ? figure.unit.word : ''),
-          ...(linear ? [other === undefined || !Number.isFinite(other.value) ? '' : String(other.value), csvText(other?.unit ?? '')] : []),
+          ...(linear
+            ? [
+                other === undefined || !Number.isFinite(other.value) ? '' : String(other.value),
+                csvText(other?.unit ?? ''),
+              ]
+            : []),
           csvText(boundText(line)),
           requirement === undefined ? '' : requirement.met ? 'yes' : 'no',
           requirement === undefined ? '' : String(requirement.margin),

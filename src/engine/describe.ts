@@ -10,16 +10,18 @@ import { diagnose, figureOfNode, readBound } from './state';
 /** The remarks that hold for a node now. */
 export function remarksOf(node: Node, figures: Figures, value?: number): readonly Remark[] {
   const { barred, result } = node;
-  const own = result.remarks.filter(({ applies }) => applies === undefined || applies.test(evaluatePlan(applies.plan, figures)));
-  if (barred?.code === 'loop')
-    return [{ code: 'loop', facts: { path: barred.path.join(' → ') }, repairs: [] }];
+  const own = result.remarks.filter(
+    ({ applies }) => applies === undefined || applies.test(evaluatePlan(applies.plan, figures)),
+  );
+  if (barred?.code === 'loop') return [{ code: 'loop', facts: { path: barred.path.join(' → ') }, repairs: [] }];
   const late = [...own];
   if (barred?.code === 'duplicate-symbol')
     late.unshift({ code: 'duplicate-symbol', facts: { name: node.line.symbol, holder: barred.holder }, repairs: [] });
   const figure = figureOfNode(node, figures, value);
   if (figure.state === 'waiting')
     late.push({ code: 'waiting', facts: { roots: figure.roots.join(', ') }, repairs: [] });
-  if (figure.state === 'withheld' && !late.some(({ code }) => code === figure.code)) late.push(runtimeError(node, figures));
+  if (figure.state === 'withheld' && !late.some(({ code }) => code === figure.code))
+    late.push(runtimeError(node, figures));
   const requirement = unreadableRequirement(node, figure);
   if (requirement !== undefined) late.push(requirement);
   return late;
@@ -39,7 +41,9 @@ function unreadableRequirement({ line }: Node, figure: Figure): Remark | undefin
   if (bound === undefined || figure.state !== 'value' || readBound(bound, figure.unit) !== undefined) return undefined;
   return {
     code: 'bad-entry',
-    facts: { what: `The requirement “${bound}” is not a quantity in a unit of ${figure.unit.word === '1' ? 'a plain number' : figure.unit.word}: write for instance 3 ${figure.unit.form === 'decibel' ? figure.unit.word : figure.unit.word}.` },
+    facts: {
+      what: `The requirement “${bound}” is not a quantity in a unit of ${figure.unit.word === '1' ? 'a plain number' : figure.unit.word}: write for instance 3 ${figure.unit.form === 'decibel' ? figure.unit.word : figure.unit.word}.`,
+    },
     repairs: [],
   };
 }
@@ -106,8 +110,16 @@ function nowFigure(node: Node, figures: Figures, scope: Scope, value: number | u
   const shown = written(figureOfNode(node, figures, value));
   if (shown !== undefined) return shown;
   const { unit } = node.result;
-  const bare = node.read.form === 'expression' ? rawFigure(node.read.tree, scope, figures) : node.read.form === 'quantity' ? node.read.figure : undefined;
+  const bare =
+    node.read.form === 'expression'
+      ? rawFigure(node.read.tree, scope, figures)
+      : node.read.form === 'quantity'
+        ? node.read.figure
+        : undefined;
   if (bare === undefined) return undefined;
-  const text = unit?.form === 'decibel' || unit?.form === 'rate' ? bare.toFixed(2).replace('-', '−') : writeSignificant(bare).replace('-', '−');
+  const text =
+    unit?.form === 'decibel' || unit?.form === 'rate'
+      ? bare.toFixed(2).replace('-', '−')
+      : writeSignificant(bare).replace('-', '−');
   return unit === undefined || unit.word === '1' ? text : `${text} “${unit.word}”`;
 }

@@ -8,6 +8,7 @@ import { checkLine, type Checked, type Scope, type SymbolInfo } from '../formula
 import { isLinesSection, type Change, type Line, type Worksheet } from '../worksheet';
 import { buildGraph, entryOf, inputsOf, nodeIn, type Graph } from './graph';
 import { describeRemark, remarksOf } from './describe';
+import { neighboursOf, reachOf, restsUpon } from './neighbours';
 import type { Node } from './node';
 import type { Pass } from './pass';
 import { Figuring, settled } from './recompute';
@@ -83,7 +84,8 @@ export class Evaluation {
       node.take(line, entryOf(line, node.caseId));
       if (!node.isStale) continue;
       const inputs = inputsOf(this.graph, node);
-      if (inputs.length !== node.inputs.length || inputs.some((input, index) => input !== node.inputs[index])) return undefined;
+      if (inputs.length !== node.inputs.length || inputs.some((input, index) => input !== node.inputs[index]))
+        return undefined;
       stale.push(node);
     }
     const touched = new Set<string>([line.id]);
@@ -101,7 +103,10 @@ export class Evaluation {
     this.figuring.release(dropped);
     this.figuring.setOrder(this.graph.order);
     const touched = new Set<string>();
-    this.settleStale(this.graph.order.filter(({ isStale }) => isStale), touched);
+    this.settleStale(
+      this.graph.order.filter(({ isStale }) => isStale),
+      touched,
+    );
     return this.finish(touched, true);
   }
 
@@ -217,7 +222,15 @@ export class Evaluation {
     const known = this.findingCache.get(lineId);
     if (known !== undefined) return known;
     const line = this.byId.get(lineId);
-    const found = line === undefined ? [] : gatherFindings(line, this.current.cases.map(({ id }) => id), (caseId) => this.findingsIn(lineId, caseId), (caseId) => nodeIn(this.graph, lineId, caseId));
+    const found =
+      line === undefined
+        ? []
+        : gatherFindings(
+            line,
+            this.current.cases.map(({ id }) => id),
+            (caseId) => this.findingsIn(lineId, caseId),
+            (caseId) => nodeIn(this.graph, lineId, caseId),
+          );
     this.findingCache.set(lineId, found);
     return found;
   }
@@ -233,7 +246,13 @@ export class Evaluation {
   /** A quick no for the bulk of the lines. */
   private mayHaveFindings(lineId: string): boolean {
     for (const node of this.graph.nodes.get(lineId)?.values() ?? []) {
-      if (node.result.remarks.length > 0 || node.barred !== undefined || Number.isNaN(this.figuring.values[node.slot]) || node.line.requirement !== undefined) return true;
+      if (
+        node.result.remarks.length > 0 ||
+        node.barred !== undefined ||
+        Number.isNaN(this.figuring.values[node.slot]) ||
+        node.line.requirement !== undefined
+      )
+        return true;
     }
     return false;
   }
@@ -242,7 +261,9 @@ export class Evaluation {
     const node = nodeIn(this.graph, lineId, caseId);
     if (node === undefined) return [];
     const tryOut = (entry: string, unit?: string): Reading => this.tryOut(node, entry, unit).reading;
-    return remarksOf(node, this.figuring).map((remark) => describeRemark(remark, node, this.figuring, tryOut, this.scopeOf(node.caseId)));
+    return remarksOf(node, this.figuring).map((remark) =>
+      describeRemark(remark, node, this.figuring, tryOut, this.scopeOf(node.caseId)),
+    );
   }
 
   /** An entry in a line's place in a case, without committing it. */
@@ -251,78 +272,54 @@ export class Evaluation {
     if (node === undefined) return { reading: { figure: { state: 'empty' } }, findings: [] };
     const tried = this.tryOut(node, entry);
     const tryOut = (other: string, unit?: string): Reading => this.tryOut(node, other, unit).reading;
-    return { reading: tried.reading, findings: remarksOf(tried.node, this.figuring, tried.value).map((remark) => describeRemark(remark, tried.node, this.figuring, tryOut, this.scopeOf(node.caseId), tried.value)) };
+    return {
+      reading: tried.reading,
+      findings: remarksOf(tried.node, this.figuring, tried.value).map((remark) =>
+        describeRemark(remark, tried.node, this.figuring, tryOut, this.scopeOf(node.caseId), tried.value),
+      ),
+    };
   }
 
   /** Evaluates another entry (or unit) in a node's place. It cannot see itself, so a loop of one is found here too. */
   private tryOut(node: Node, entry: string, unit?: string): { reading: Reading; node: Node; value: number } {
     const scope = this.scopeOf(node.caseId);
-    const line: Line = { ...node.line, ...(node.caseId === null ? { entry } : {}), ...(unit === undefined ? {} : { unit }) };
+    const line: Line = {
+      ...node.line,
+      ...(node.caseId === null ? { entry } : {}),
+      ...(unit === undefined ? {} : { unit }),
+    };
     const trial = node.trial(line, entry);
     trial.inputs = inputsOf(this.graph, trial);
-    const usesItself = trial.inputs.includes(node) || trial.inputs.some((input) => this.restsUpon(input, node));
-    trial.barred = usesItself ? { code: 'loop', path: [line.symbol, line.symbol] } : node.barred?.code === 'loop' ? undefined : node.barred;
+    const usesItself = trial.inputs.includes(node) || trial.inputs.some((input) => restsUpon(input, node));
+    trial.barred = usesItself
+      ? { code: 'loop', path: [line.symbol, line.symbol] }
+      : node.barred?.code === 'loop'
+        ? undefined
+        : node.barred;
     trial.result = checkLine(trial.spec(), scope, trial.read);
-    const value = trial.barred === undefined ? settled(trial.compile(this.figuring)(), trial.result.unit?.form === 'decibel') : NaN;
+    const value =
+      trial.barred === undefined ? settled(trial.compile(this.figuring)(), trial.result.unit?.form === 'decibel') : NaN;
     return { reading: readingOf(trial, line, this.figuring, value), node: trial, value };
-  }
-
-  /** True when `node` rests on `other`, directly or not. */
-  private restsUpon(node: Node, other: Node): boolean {
-    if (node.rank < other.rank && node.barred === undefined) return false;
-    const seen = new Set<Node>([node]);
-    const open = [node];
-    for (let next = open.pop(); next !== undefined; next = open.pop()) {
-      if (next === other) return true;
-      for (const input of next.inputs) {
-        if (seen.has(input)) continue;
-        seen.add(input);
-        open.push(input);
-      }
-    }
-    return false;
   }
 
   /** Lines that a line uses directly, in any case. */
   restsOn(lineId: string): readonly string[] {
-    return this.neighbours(lineId, 'inputs');
+    return neighboursOf(this.graph, lineId, 'inputs');
   }
 
   /** Lines that use a line directly, in any case. */
   usedBy(lineId: string): readonly string[] {
-    return this.neighbours(lineId, 'users');
-  }
-
-  private neighbours(lineId: string, direction: 'inputs' | 'users'): string[] {
-    const found = new Set<string>();
-    for (const node of this.graph.nodes.get(lineId)?.values() ?? []) for (const other of node[direction]) found.add(other.lineId);
-    return [...found];
+    return neighboursOf(this.graph, lineId, 'users');
   }
 
   /** All lines that a line rests on, itself left out. */
   upstream(lineId: string): ReadonlySet<string> {
-    return this.reach(lineId, 'inputs');
+    return reachOf(this.graph, lineId, 'inputs');
   }
 
   /** All lines that rest on a line, itself left out. */
   downstream(lineId: string): ReadonlySet<string> {
-    return this.reach(lineId, 'users');
-  }
-
-  private reach(lineId: string, direction: 'inputs' | 'users'): Set<string> {
-    const reached = new Set<string>();
-    const open = [...(this.graph.nodes.get(lineId)?.values() ?? [])];
-    const seen = new Set<Node>(open);
-    for (let node = open.pop(); node !== undefined; node = open.pop()) {
-      for (const other of node[direction]) {
-        if (seen.has(other)) continue;
-        seen.add(other);
-        reached.add(other.lineId);
-        open.push(other);
-      }
-    }
-    reached.delete(lineId);
-    return reached;
+    return reachOf(this.graph, lineId, 'users');
   }
 
   /** The line that a symbol stands for. */

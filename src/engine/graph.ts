@@ -31,7 +31,8 @@ export function nodeIn(graph: Pick<Graph, 'nodes'>, lineId: string, caseId: stri
 export function buildGraph(worksheet: Worksheet, before: Graph | undefined, newSlot: () => number): Graph {
   const lines = worksheet.sections.flatMap((section) => (isLinesSection(section) ? section.lines : []));
   const holders = new Map<string, Line>();
-  for (const line of lines) if (line.symbol !== '' && !RESERVED.has(line.symbol) && !holders.has(line.symbol)) holders.set(line.symbol, line);
+  for (const line of lines)
+    if (line.symbol !== '' && !RESERVED.has(line.symbol) && !holders.has(line.symbol)) holders.set(line.symbol, line);
   const differing = findDiffering(worksheet, lines, holders);
   const nodes = new Map<string, Map<string, Node>>();
   for (const line of lines) {
@@ -46,7 +47,13 @@ export function buildGraph(worksheet: Worksheet, before: Graph | undefined, newS
     nodes.set(line.id, own);
   }
   const order = connect({ lines, holders, nodes });
-  return { lines, holders, nodes, order, hasDuplicates: order.some(({ barred }) => barred?.code === 'duplicate-symbol') };
+  return {
+    lines,
+    holders,
+    nodes,
+    order,
+    hasDuplicates: order.some(({ barred }) => barred?.code === 'duplicate-symbol'),
+  };
 }
 
 /** The entry of a line in a case, or its own. */
@@ -55,7 +62,11 @@ export function entryOf(line: Line, caseId: string | null): string {
 }
 
 /** For each line the cases in which its figure may differ: those that override it, or anything it rests on. */
-function findDiffering(worksheet: Worksheet, lines: readonly Line[], holders: ReadonlyMap<string, Line>): Map<string, Set<string>> {
+function findDiffering(
+  worksheet: Worksheet,
+  lines: readonly Line[],
+  holders: ReadonlyMap<string, Line>,
+): Map<string, Set<string>> {
   const differing = new Map<string, Set<string>>();
   const overridden = lines.filter(({ byCase }) => byCase !== undefined && Object.keys(byCase).length > 0);
   if (overridden.length === 0) return differing;
@@ -82,7 +93,11 @@ function findDiffering(worksheet: Worksheet, lines: readonly Line[], holders: Re
 }
 
 /** Who uses each line in a case, by line id. */
-function usersInCase(lines: readonly Line[], holders: ReadonlyMap<string, Line>, caseId: string): Map<string, string[]> {
+function usersInCase(
+  lines: readonly Line[],
+  holders: ReadonlyMap<string, Line>,
+  caseId: string,
+): Map<string, string[]> {
   const users = new Map<string, string[]>();
   for (const line of lines) {
     const read = readEntry(entryOf(line, caseId));
@@ -123,7 +138,13 @@ function connect(graph: Pick<Graph, 'lines' | 'holders' | 'nodes'>): Node[] {
       const holder = graph.holders.get(line.symbol);
       const isTaken = line.symbol !== '' && holder?.id !== line.id;
       const wasBarred = node.barred !== undefined;
-      node.barred = isTaken ? { code: 'duplicate-symbol', holder: holder === undefined ? 'is a constant' : `is the symbol of “${holder.label || holder.symbol}” already` } : undefined;
+      node.barred = isTaken
+        ? {
+            code: 'duplicate-symbol',
+            holder:
+              holder === undefined ? 'is a constant' : `is the symbol of “${holder.label || holder.symbol}” already`,
+          }
+        : undefined;
       if (wasBarred || isTaken) markStale(node);
       all.push(node);
     }

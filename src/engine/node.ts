@@ -2,7 +2,20 @@
  * Nodes: one for each line, and one more for each case in which the line's entry, or anything it rests on, differs.
  * Lines without overrides share one node among all cases.
  */
-import { checkLine, compilePlan, inspectLine, readEntry, readPlainQuantity, type Figures, type LineResult, type LineSpec, type ReadEntry, type Scope, type SymbolInfo, type Checked } from '../formula';
+import {
+  checkLine,
+  compilePlan,
+  inspectLine,
+  readEntry,
+  readPlainQuantity,
+  type Figures,
+  type LineResult,
+  type LineSpec,
+  type ReadEntry,
+  type Scope,
+  type SymbolInfo,
+  type Checked,
+} from '../formula';
 import type { Line } from '../worksheet';
 
 /** Why a line is withheld whatever its entry says. */
@@ -72,7 +85,10 @@ export class Node {
   /** What the checker is told of the line. An override follows the unit typed in the line's own entry. */
   spec(): LineSpec {
     const { symbol, label, unit, quantity, side } = this.line;
-    const typed = unit === undefined && this.caseId !== null && this.entry !== this.line.entry ? readPlainQuantity(this.line.entry)?.unit?.word : undefined;
+    const typed =
+      unit === undefined && this.caseId !== null && this.entry !== this.line.entry
+        ? readPlainQuantity(this.line.entry)?.unit?.word
+        : undefined;
     return { symbol, label, entry: this.entry, unit: unit ?? typed, quantity, side };
   }
 
@@ -135,7 +151,8 @@ function sameInfo(a: SymbolInfo | undefined, b: SymbolInfo | undefined): boolean
 }
 
 function sameType(a: SymbolInfo['type'], b: SymbolInfo['type']): boolean {
-  if (a.form === 'rate' || b.form === 'rate') return a.form === b.form && a.form === 'rate' && b.form === 'rate' && a.lengthM === b.lengthM;
+  if (a.form === 'rate' || b.form === 'rate')
+    return a.form === b.form && a.form === 'rate' && b.form === 'rate' && a.lengthM === b.lengthM;
   const sameMeaning =
     a.meaning === b.meaning ||
     (a.meaning !== undefined &&
@@ -145,9 +162,11 @@ function sameType(a: SymbolInfo['type'], b: SymbolInfo['type']): boolean {
       a.meaning.f === b.meaning.f &&
       a.meaning.l === b.meaning.l &&
       a.meaning.declared === b.meaning.declared);
-  if (!sameMeaning || a.bandwidth?.key !== b.bandwidth?.key || a.noiseTemperature?.key !== b.noiseTemperature?.key) return false;
+  if (!sameMeaning || a.bandwidth?.key !== b.bandwidth?.key || a.noiseTemperature?.key !== b.noiseTemperature?.key)
+    return false;
   if (a.bandwidth?.text !== b.bandwidth?.text || a.noiseTemperature?.text !== b.noiseTemperature?.text) return false;
-  if (a.form === 'linear') return b.form === 'linear' && a.degree === b.degree && a.sort === b.sort && sameDimensionText(a, b);
+  if (a.form === 'linear')
+    return b.form === 'linear' && a.degree === b.degree && a.sort === b.sort && sameDimensionText(a, b);
   return b.form === 'decibel' && a.offsetDb === b.offsetDb && sameDimensionText(a, b);
 }
 

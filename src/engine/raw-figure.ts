@@ -25,7 +25,9 @@ function raw(tree: Tree, scope: Scope, figures: Figures): number | undefined {
       return tree.figure;
     case 'symbol': {
       const info = scope.find(tree.name);
-      return info === undefined || info === 'withheld' ? undefined : evaluatePlan({ op: 'slot', slot: info.slot }, figures);
+      return info === undefined || info === 'withheld'
+        ? undefined
+        : evaluatePlan({ op: 'slot', slot: info.slot }, figures);
     }
     case 'negation': {
       const operand = raw(tree.operand, scope, figures);
@@ -34,7 +36,11 @@ function raw(tree: Tree, scope: Scope, figures: Figures): number | undefined {
     case 'call': {
       const parameters = tree.parameters.map((parameter) => raw(parameter, scope, figures));
       const [first] = parameters;
-      if (tree.name === 'sum') return parameters.reduce<number | undefined>((sum, value) => (sum === undefined || value === undefined ? undefined : sum + value), 0);
+      if (tree.name === 'sum')
+        return parameters.reduce<number | undefined>(
+          (sum, value) => (sum === undefined || value === undefined ? undefined : sum + value),
+          0,
+        );
       return first === undefined ? undefined : LOGARITHMS[tree.name]?.(first);
     }
     case 'binary': {

@@ -9,7 +9,13 @@ import type { QuantityKind, Side, Unit } from '../quantity';
 export type Figure =
   /** `value` is in `unit`; −∞ in a decibel unit is *no power*. `digits` is how many significant digits were typed, for literals.
    *  `isFitted`: nobody chose the unit, so that display may take an SI prefix. */
-  | { readonly state: 'value'; readonly value: number; readonly unit: Unit; readonly isFitted: boolean; readonly digits?: number }
+  | {
+      readonly state: 'value';
+      readonly value: number;
+      readonly unit: Unit;
+      readonly isFitted: boolean;
+      readonly digits?: number;
+    }
   /** The line itself has an error finding of this code. */
   | { readonly state: 'withheld'; readonly code: FindingCode }
   /** A line above is withheld: `roots` are the symbols (or labels) of the lines at fault. */

@@ -14,14 +14,23 @@ export function figureOfNode(node: Node, figures: Figures, value: number = figur
   if (own !== undefined) return { state: 'withheld', code: own };
   if (result.isEmpty) return { state: 'empty' };
   if (!Number.isNaN(value) && result.unit !== undefined)
-    return { state: 'value', value, unit: result.unit, isFitted: result.isFitted, ...(result.typedDigits === undefined ? {} : { digits: result.typedDigits }) };
+    return {
+      state: 'value',
+      value,
+      unit: result.unit,
+      isFitted: result.isFitted,
+      ...(result.typedDigits === undefined ? {} : { digits: result.typedDigits }),
+    };
   const roots = rootsOf(node, figures);
-  return roots.length > 0 ? { state: 'waiting', roots } : { state: 'withheld', code: diagnose(result.plan, figures).code };
+  return roots.length > 0
+    ? { state: 'waiting', roots }
+    : { state: 'withheld', code: diagnose(result.plan, figures).code };
 }
 
 /** The first error that the checker found in the line itself. */
 function ownError({ result }: Node): FindingCode | undefined {
-  return result.remarks.find(({ code, applies }) => applies === undefined && CATALOGUE[code].severity === 'error')?.code;
+  return result.remarks.find(({ code, applies }) => applies === undefined && CATALOGUE[code].severity === 'error')
+    ?.code;
 }
 
 /** The symbols (or labels) of the lines at fault for a node that waits; empty when its inputs all have figures. */
@@ -32,22 +41,32 @@ export function rootsOf(node: Node, figures: Figures): readonly string[] {
   for (let next = open.shift(); next !== undefined; next = open.shift()) {
     if (seen.has(next)) continue;
     seen.add(next);
-    const further = next.barred === undefined && ownError(next) === undefined && !next.result.isEmpty ? withheldInputs(next, figures) : [];
+    const further =
+      next.barred === undefined && ownError(next) === undefined && !next.result.isEmpty
+        ? withheldInputs(next, figures)
+        : [];
     if (further.length === 0) roots.add(next.line.symbol || next.line.label);
     else open.push(...further);
   }
   return [...roots];
 }
 
-const withheldInputs = (node: Node, figures: Figures): Node[] => node.inputs.filter(({ slot }) => Number.isNaN(figures.values[slot]));
+const withheldInputs = (node: Node, figures: Figures): Node[] =>
+  node.inputs.filter(({ slot }) => Number.isNaN(figures.values[slot]));
 
 /** Why a plan whose inputs have figures has none itself. */
-export function diagnose(plan: Plan, figures: Figures): { readonly code: 'no-power' | 'not-finite'; readonly why: string } {
+export function diagnose(
+  plan: Plan,
+  figures: Figures,
+): { readonly code: 'no-power' | 'not-finite'; readonly why: string } {
   const value = evaluatePlan(plan, figures);
-  for (const part of partsOf(plan)) if (!Number.isFinite(evaluatePlan(part, figures)) && part.op !== 'slot') return diagnose(part, figures);
+  for (const part of partsOf(plan))
+    if (!Number.isFinite(evaluatePlan(part, figures)) && part.op !== 'slot') return diagnose(part, figures);
   if (plan.op === 'decibels') return { code: 'no-power', why: 'the decibel of zero or less than zero is asked for' };
-  if (plan.op === 'apply' && plan.name === 'powerdiff') return { code: 'no-power', why: 'the power taken off is larger than the one it is taken from' };
-  if (plan.op === 'apply' && (plan.name === 'log10' || plan.name === 'ln')) return { code: 'no-power', why: `${plan.name} of zero or less is asked for` };
+  if (plan.op === 'apply' && plan.name === 'powerdiff')
+    return { code: 'no-power', why: 'the power taken off is larger than the one it is taken from' };
+  if (plan.op === 'apply' && (plan.name === 'log10' || plan.name === 'ln'))
+    return { code: 'no-power', why: `${plan.name} of zero or less is asked for` };
   if (plan.op === 'quotient') return { code: 'not-finite', why: 'a division by zero' };
   if (plan.op === 'apply') return { code: 'not-finite', why: `${plan.name} has no value for these arguments` };
   return { code: 'not-finite', why: value === Infinity ? 'it is larger than any number' : 'it is not a number' };
@@ -88,7 +107,7 @@ export function readingOf(node: Node, line: Line, figures: Figures, value?: numb
 function requirementOf(line: Line, value: number, unit: Unit): RequirementReading | undefined {
   if (line.requirement === undefined) return undefined;
   const isFloor = line.requirement.atLeast !== undefined;
-  const limit = readBound(line.requirement.atLeast ?? line.requirement.atMost ?? '', unit);
+  const limit = readBound(line.requirement.atLeast ?? line.requirement.atMost, unit);
   if (limit === undefined) return undefined;
   const margin = isFloor ? value - limit : limit - value;
   return {
@@ -110,7 +129,8 @@ export function readBound(text: string, unit: Unit): number | undefined {
 
 /** A figure in another unit of the same dimension, across forms; undefined when the dimensions differ. */
 export function convertFigure(figure: number, from: Unit, to: Unit): number | undefined {
-  const same = (a: readonly number[], b: readonly number[], factor = 1): boolean => a.every((n, index) => Math.abs(n * factor - (b[index] ?? 0)) < 1e-9);
+  const same = (a: readonly number[], b: readonly number[], factor = 1): boolean =>
+    a.every((n, index) => Math.abs(n * factor - (b[index] ?? 0)) < 1e-9);
   if (from.form === 'rate' || to.form === 'rate')
     return from.form === 'rate' && to.form === 'rate' ? (figure * to.lengthM) / from.lengthM : undefined;
   if (from.form === 'decibel' && to.form === 'decibel')
@@ -120,7 +140,9 @@ export function convertFigure(figure: number, from: Unit, to: Unit): number | un
   if (from.form === 'decibel' && to.form === 'linear') {
     const linear = linearValue(figure, from);
     const root = same(to.dimension, from.dimension, 2);
-    return linear !== undefined && (root || same(from.dimension, to.dimension)) ? (linear.value - to.shift) / to.factor : undefined;
+    return linear !== undefined && (root || same(from.dimension, to.dimension))
+      ? (linear.value - to.shift) / to.factor
+      : undefined;
   }
   if (from.form === 'linear' && to.form === 'decibel') {
     const value = figure * from.factor + from.shift;

@@ -22,12 +22,12 @@ const instead = (facts: Facts, lead: string): string =>
     ? ''
     : ` ${lead}: ${facts['repair']}${given(facts['meant'], (meant) => `, which gives ${meant}`)}.`;
 
-const entry = (
-  severity: Severity,
-  title: string,
-  why: string,
-  message: CatalogueEntry['message'],
-): CatalogueEntry => ({ severity, title, why, message });
+const entry = (severity: Severity, title: string, why: string, message: CatalogueEntry['message']): CatalogueEntry => ({
+  severity,
+  title,
+  why,
+  message,
+});
 
 const f = (facts: Facts, name: string): string => facts[name] ?? '';
 
@@ -102,8 +102,7 @@ export const CATALOGUE = {
     'error',
     'No power to express in decibels',
     'Zero or negative power has no decibel figure.',
-    (x) =>
-      `${f(x, 'what')}. The decibel figure does not exist; the value is withheld until its inputs are put right.`,
+    (x) => `${f(x, 'what')}. The decibel figure does not exist; the value is withheld until its inputs are put right.`,
   ),
   loop: entry(
     'error',
@@ -116,8 +115,7 @@ export const CATALOGUE = {
     'Nothing has this name',
     'An expression may use the symbols of lines, constants and functions of the catalogue.',
     (x) =>
-      `${f(x, 'what')} “${f(x, 'name')}” is not known here.` +
-      given(x['nearest'], (nearest) => ` Is it “${nearest}”?`),
+      `${f(x, 'what')} “${f(x, 'name')}” is not known here.` + given(x['nearest'], (nearest) => ` Is it “${nearest}”?`),
   ),
   'duplicate-symbol': entry(
     'error',
@@ -236,7 +234,8 @@ export const CATALOGUE = {
     'warning',
     'A noise figure or temperature below its floor',
     'A noise figure is at least 0 dB and a noise temperature at least 0 K.',
-    (x) => `The line is a ${f(x, 'kind')} and reads ${f(x, 'now')}; it cannot be below ${f(x, 'floor')}.${instead(x, 'Probably meant')}`,
+    (x) =>
+      `The line is a ${f(x, 'kind')} and reads ${f(x, 'now')}; it cannot be below ${f(x, 'floor')}.${instead(x, 'Probably meant')}`,
   ),
   'loss-added': entry(
     'note',

@@ -2,9 +2,7 @@
  * Bringing several operands to one form and dimension: for comparisons, the extremes, branches, and sums of powers.
  * Densities beside levels, and voltages beside powers, get findings of their own.
  */
-import {
-  combineDimensions, FREQUENCY, IMPEDANCE, isDimensionless, sameDimension, type Dimension,
-} from '../quantity';
+import { combineDimensions, FREQUENCY, IMPEDANCE, isDimensionless, sameDimension, type Dimension } from '../quantity';
 import type { Context } from './context';
 import { decibelsOf, describeType } from './forms';
 import { shiftPlan, type Plan } from './plan';
@@ -29,7 +27,12 @@ export const differByImpedance = (a: Dimension, b: Dimension): boolean =>
  * Aligns operands of `tree`; undefined when they cannot be, after making the finding.
  * `asDecibels`: linear powers are taken in decibels, as the functions that add powers do; else mixed forms are refused.
  */
-export function align(tree: Tree, operands: readonly Checked[], context: Context, asDecibels: boolean): Aligned | undefined {
+export function align(
+  tree: Tree,
+  operands: readonly Checked[],
+  context: Context,
+  asDecibels: boolean,
+): Aligned | undefined {
   if (operands.some(({ type }) => type.form === 'broken')) return undefined;
   const odd = operands.find(({ type }) => type.form !== 'decibel' && type.form !== 'linear');
   if (odd !== undefined) {
@@ -47,12 +50,24 @@ export function align(tree: Tree, operands: readonly Checked[], context: Context
   const hasDecibels = operands.some(({ type }) => type.form === 'decibel');
   const typed = operands.map((operand) => settleForm(operand, hasDecibels, asDecibels));
   const stray = typed.findIndex((part) => part === undefined);
-  if (stray >= 0) return refuseForm(operands, stray, context);
+  if (stray >= 0) {
+    refuseForm(operands, stray, context);
+    return undefined;
+  }
   const parts = typed.flatMap((part) => (part === undefined ? [] : [part]));
   const [first] = parts;
   if (first === undefined) return undefined;
   const other = parts.findIndex(({ type }) => !sameDimension(type.dimension, first.type.dimension));
-  if (other >= 0) return refuseDimension(tree, operands, parts.map(({ type }) => type), other, context);
+  if (other >= 0) {
+    refuseDimension(
+      tree,
+      operands,
+      parts.map(({ type }) => type),
+      other,
+      context,
+    );
+    return undefined;
+  }
   if (first.type.form === 'linear') return { type: first.type, plans: parts.map(({ plan }) => plan) };
   const { offsetDb } = first.type;
   return {
@@ -67,7 +82,8 @@ function settleForm(operand: Checked, hasDecibels: boolean, asDecibels: boolean)
   const { type, plan } = operand;
   if (type.form === 'decibel') return { type, plan };
   if (type.form !== 'linear') return undefined;
-  if (asDecibels && !(isDimensionless(type.dimension) && type.sort !== 'ratio')) return decibelsOf({ type, plan }, true);
+  if (asDecibels && !(isDimensionless(type.dimension) && type.sort !== 'ratio'))
+    return decibelsOf({ type, plan }, true);
   if (!hasDecibels && !asDecibels) return { type, plan };
   // A bare number beside decibels, or among figures to be added as powers, counts as decibels.
   return isDimensionless(type.dimension)
@@ -75,15 +91,14 @@ function settleForm(operand: Checked, hasDecibels: boolean, asDecibels: boolean)
     : undefined;
 }
 
-function refuseForm(operands: readonly Checked[], stray: number, context: Context): undefined {
+function refuseForm(operands: readonly Checked[], stray: number, context: Context): void {
   const operand = operands[stray];
-  if (operand === undefined) return undefined;
+  if (operand === undefined) return;
   const text = context.textOf(operand.tree);
   context.say('mixed-forms', operand.tree, {
     facts: { linear: text, linearUnit: describeType(operand.type), where: 'beside decibels' },
     repairs: [context.rewrite(operand.tree, `db(${text})`)],
   });
-  return undefined;
 }
 
 function refuseDimension(
@@ -92,12 +107,12 @@ function refuseDimension(
   types: readonly (DecibelType | LinearType)[],
   stray: number,
   context: Context,
-): undefined {
+): void {
   const [first] = operands;
   const operand = operands[stray];
   const [firstType] = types;
   const strayType = types[stray];
-  if (first === undefined || operand === undefined || firstType === undefined || strayType === undefined) return undefined;
+  if (first === undefined || operand === undefined || firstType === undefined || strayType === undefined) return;
   if (differByBandwidth(firstType.dimension, strayType.dimension)) {
     const level = levelDimension(types, firstType.dimension);
     const perHertz = (index: number): boolean => !sameDimension(types[index]?.dimension ?? level, level);
@@ -113,9 +128,12 @@ function refuseDimension(
         levels: levels.map(({ tree: part }) => context.textOf(part)).join(', '),
         where: tree.type === 'call' ? tree.name : 'a comparison',
       },
-      repairs: bandwidth === undefined || firstType.form !== 'decibel' ? [] : [{ kind: 'entry', title: `+ ${bandwidth}`, entry: repaired }],
+      repairs:
+        bandwidth === undefined || firstType.form !== 'decibel'
+          ? []
+          : [{ kind: 'entry', title: `+ ${bandwidth}`, entry: repaired }],
     });
-    return undefined;
+    return;
   }
   if (differByImpedance(firstType.dimension, strayType.dimension)) {
     const voltage = isVoltageSide(firstType.dimension, strayType.dimension) ? first : operand;
@@ -127,7 +145,7 @@ function refuseDimension(
       },
       repairs: [context.rewrite(voltage.tree, `${context.textOf(voltage.tree)} - db(50 ohm)`)],
     });
-    return undefined;
+    return;
   }
   context.say('unit-mismatch', operand.tree, {
     facts: {
@@ -137,7 +155,6 @@ function refuseDimension(
     },
     repairs: [],
   });
-  return undefined;
 }
 
 /** True when `a` is the squared voltage of the two. */

@@ -1,7 +1,19 @@
 /** Checking of what an expression is made of: literals, constants and symbols. */
 import {
-  ENTROPY, NEUTRAL, NO_DIMENSION, TEMPERATURE, UNSAID, combineDimensions, LENGTH, TIME, isRootPower, meaningOf, combineMeanings,
-  findUnit, type Meaning, type Unit,
+  ENTROPY,
+  NEUTRAL,
+  NO_DIMENSION,
+  TEMPERATURE,
+  UNSAID,
+  combineDimensions,
+  LENGTH,
+  TIME,
+  isRootPower,
+  meaningOf,
+  combineMeanings,
+  findUnit,
+  type Meaning,
+  type Unit,
 } from '../quantity';
 import { broken, type Context } from './context';
 import { nearestName } from './nearest';
@@ -21,9 +33,27 @@ export interface Constant {
 /** The named constants. A line may not take these symbols. */
 export const CONSTANTS: readonly Constant[] = [
   { name: 'pi', text: 'ratio of circumference to diameter', value: Math.PI, unit: '1', source: 'ISO 80000-2' },
-  { name: 'c_0', text: 'speed of light in vacuum', value: 299792458, unit: 'm/s', source: 'SI Brochure, 9th edition 2019, exact' },
-  { name: 'k_B', text: 'Boltzmann constant', value: 1.380649e-23, unit: 'J/K', source: 'SI Brochure, 9th edition 2019, exact' },
-  { name: 'T_0', text: 'reference noise temperature', value: 290, unit: 'K', source: 'ITU-R V.573-5, reference temperature' },
+  {
+    name: 'c_0',
+    text: 'speed of light in vacuum',
+    value: 299792458,
+    unit: 'm/s',
+    source: 'SI Brochure, 9th edition 2019, exact',
+  },
+  {
+    name: 'k_B',
+    text: 'Boltzmann constant',
+    value: 1.380649e-23,
+    unit: 'J/K',
+    source: 'SI Brochure, 9th edition 2019, exact',
+  },
+  {
+    name: 'T_0',
+    text: 'reference noise temperature',
+    value: 290,
+    unit: 'K',
+    source: 'ITU-R V.573-5, reference temperature',
+  },
 ];
 
 /** Half the exponents for voltages and fields, whose square is the power. */
@@ -65,15 +95,31 @@ export function checkLiteral(tree: LiteralTree): Checked {
     return { tree, type, plan: constantPlan(figure), constant: figure, parts: [] };
   }
   const value = unit.form === 'linear' ? figure * unit.factor + unit.shift : figure;
-  const type = typeOfUnit(unit, unit.defaultKind === undefined ? meaningOfUnit(unit) : meaningOf(unit.defaultKind, undefined, true));
+  const type = typeOfUnit(
+    unit,
+    unit.defaultKind === undefined ? meaningOfUnit(unit) : meaningOf(unit.defaultKind, undefined, true),
+  );
   return { tree, type, plan: constantPlan(value), kind: unit.defaultKind, parts: [] };
 }
 
 function constantNamed(name: string): Checked['type'] & LinearType {
   const dimension =
-    name === 'c_0' ? combineDimensions(LENGTH, TIME, -1) : name === 'k_B' ? ENTROPY : name === 'T_0' ? TEMPERATURE : NO_DIMENSION;
+    name === 'c_0'
+      ? combineDimensions(LENGTH, TIME, -1)
+      : name === 'k_B'
+        ? ENTROPY
+        : name === 'T_0'
+          ? TEMPERATURE
+          : NO_DIMENSION;
   const meaning = name === 'T_0' ? meaningOf('temperature', undefined, true) : NEUTRAL;
-  return { form: 'linear', dimension, degree: 0, sort: name === 'pi' ? 'pure' : 'ratio', meaning, unitHint: findUnit(name === 'k_B' ? 'J/K' : name === 'T_0' ? 'K' : '1') };
+  return {
+    form: 'linear',
+    dimension,
+    degree: 0,
+    sort: name === 'pi' ? 'pure' : 'ratio',
+    meaning,
+    unitHint: findUnit(name === 'k_B' ? 'J/K' : name === 'T_0' ? 'K' : '1'),
+  };
 }
 
 /** Checks a symbol: a constant, or a line as others meet it. */

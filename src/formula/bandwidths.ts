@@ -42,10 +42,16 @@ export function sayBandwidthsDiffer(operands: readonly PowerOperand[], context: 
       firstBandwidth: asText(evaluate(first.bandwidth.plan)),
       secondBandwidth: asText(evaluate(other.bandwidth.plan)),
     }),
-    repairs: [context.rewrite(other.tree, `rebase(${other.text}, ${hertzText(other.bandwidth.text)}, ${hertzText(first.bandwidth.text)})`)],
+    repairs: [
+      context.rewrite(
+        other.tree,
+        `rebase(${other.text}, ${hertzText(other.bandwidth.text)}, ${hertzText(first.bandwidth.text)})`,
+      ),
+    ],
     applies: { plan, test: differs },
   });
 }
 
 /** A bandwidth given as decibels of a line is that line again: db(B) is B. */
-const hertzText = (text: string): string => /^db\(([^()]+)\)$/.exec(text)?.[1] ?? /^10\*log10\(([^()]+)\)$/.exec(text)?.[1] ?? text;
+const hertzText = (text: string): string =>
+  /^db\(([^()]+)\)$/.exec(text)?.[1] ?? /^10\*log10\(([^()]+)\)$/.exec(text)?.[1] ?? text;

@@ -1,13 +1,30 @@
 /** Checking of calls: finds the function, counts arguments, converts them to what ordinary functions take. */
 import { present } from '../base';
 import {
-  findUnit, FREQUENCY, isDimensionless, LENGTH, meaningOf, NO_DIMENSION, sameDimension, TEMPERATURE, writeQuantity, type Dimension, type Unit,
+  findUnit,
+  FREQUENCY,
+  isDimensionless,
+  LENGTH,
+  meaningOf,
+  NO_DIMENSION,
+  sameDimension,
+  TEMPERATURE,
+  writeQuantity,
+  type Dimension,
+  type Unit,
 } from '../quantity';
 import type { Check } from './check';
 import { typeOfUnit } from './atoms';
 import { broken, type Context } from './context';
 import {
-  fewestArguments, findFunction, FUNCTIONS, signatureOf, type FunctionEntry, type OrdinaryFunction, type Parameter, type ParameterKind,
+  fewestArguments,
+  findFunction,
+  FUNCTIONS,
+  signatureOf,
+  type FunctionEntry,
+  type OrdinaryFunction,
+  type Parameter,
+  type ParameterKind,
 } from './catalogue';
 import { decibelsOf, describeType } from './forms';
 import { parseEntry } from './grammar';
@@ -37,7 +54,9 @@ export function checkCall(tree: CallTree, context: Context, check: Check): Check
     return entry.form === 'structural' && entry.judgesItself === true ? operand : consume(operand, context);
   });
   if (operands.some(({ type }) => type.form === 'broken')) return { ...broken(tree), parts: operands };
-  return entry.form === 'structural' ? entry.check(tree, operands, context) : callOrdinary(tree, entry, operands, context, check);
+  return entry.form === 'structural'
+    ? entry.check(tree, operands, context)
+    : callOrdinary(tree, entry, operands, context, check);
 }
 
 function fewestOf(entry: FunctionEntry): number {
@@ -57,13 +76,22 @@ function argumentCount(entry: FunctionEntry): string {
 }
 
 function unknownFunction(tree: CallTree, context: Context): Checked {
-  const nearest = nearestName(tree.name, FUNCTIONS.map(({ name }) => name));
+  const nearest = nearestName(
+    tree.name,
+    FUNCTIONS.map(({ name }) => name),
+  );
   return context.stop('unknown-symbol', tree, {
     facts: { what: 'The function', name: tree.name, ...(nearest === undefined ? {} : { nearest }) },
     repairs:
       nearest === undefined
         ? []
-        : [{ kind: 'entry', title: nearest, entry: context.entry.slice(0, tree.namePlace.start) + nearest + context.entry.slice(tree.namePlace.end) }],
+        : [
+            {
+              kind: 'entry',
+              title: nearest,
+              entry: context.entry.slice(0, tree.namePlace.start) + nearest + context.entry.slice(tree.namePlace.end),
+            },
+          ],
   });
 }
 
@@ -75,7 +103,13 @@ export function parameterAt(entry: FunctionEntry, index: number): Parameter | un
   return parameters[parameters.length - repeats + ((index - parameters.length) % repeats)];
 }
 
-function callOrdinary(tree: CallTree, entry: OrdinaryFunction, operands: readonly Checked[], context: Context, check: Check): Checked {
+function callOrdinary(
+  tree: CallTree,
+  entry: OrdinaryFunction,
+  operands: readonly Checked[],
+  context: Context,
+  check: Check,
+): Checked {
   const complete = [...operands];
   for (const parameter of entry.parameters.slice(operands.length)) {
     if (parameter.default === undefined) continue;
@@ -95,13 +129,24 @@ function callOrdinary(tree: CallTree, entry: OrdinaryFunction, operands: readonl
   const origin = (name: string | undefined): ReturnType<typeof originOf> | undefined => {
     const operand = complete[at(name)];
     const plan = plans[at(name)];
-    return operand === undefined || plan === undefined ? undefined : { ...originOf({ tree: operand.tree, plan }, context), text: operands[at(name)] === undefined ? (entry.parameters[at(name)]?.default ?? '') : context.textOf(operand.tree) };
+    return operand === undefined || plan === undefined
+      ? undefined
+      : {
+          ...originOf({ tree: operand.tree, plan }, context),
+          text:
+            operands[at(name)] === undefined
+              ? (entry.parameters[at(name)]?.default ?? '')
+              : context.textOf(operand.tree),
+        };
   };
   const type = typeOfUnit(unit, meaning);
   sayValidity(tree, entry, plans, context);
   return {
     tree,
-    type: type.form === 'rate' ? type : { ...type, bandwidth: origin(entry.bandwidthFrom), noiseTemperature: origin(entry.temperatureFrom) },
+    type:
+      type.form === 'rate'
+        ? type
+        : { ...type, bandwidth: origin(entry.bandwidthFrom), noiseTemperature: origin(entry.temperatureFrom) },
     plan: { op: 'apply', name: entry.name, compute: entry.compute, parameters: plans },
     kind: entry.resultKind,
     side: entry.resultSide,
@@ -124,7 +169,10 @@ function sayValidity(tree: CallTree, entry: OrdinaryFunction, plans: readonly Pl
     facts: { function: entry.name, range: validity.range, name: parameter.name },
     lateFacts: (evaluate) => ({ value: inUnit(evaluate(plan), parameter.unit) }),
     repairs: [],
-    applies: { plan: { op: 'apply', name: 'validity', compute: (...values) => (holds(...values) ? 1 : 0), parameters: plans }, test: isZero },
+    applies: {
+      plan: { op: 'apply', name: 'validity', compute: (...values) => (holds(...values) ? 1 : 0), parameters: plans },
+      test: isZero,
+    },
   });
 }
 
@@ -146,7 +194,8 @@ function convert(operand: Checked, parameter: Parameter, context: Context): Plan
   const { type } = operand;
   const dimension = LINEAR[parameter.takes];
   if (dimension !== undefined) {
-    if ((type.form !== 'linear' && type.form !== 'decibel') || !sameDimension(type.dimension, dimension)) return undefined;
+    if ((type.form !== 'linear' && type.form !== 'decibel') || !sameDimension(type.dimension, dimension))
+      return undefined;
     if (type.form === 'linear') return operand.plan;
     return isDimensionless(dimension) ? undefined : { op: 'linear', of: shiftPlan(operand.plan, type.offsetDb) };
   }
@@ -176,10 +225,18 @@ function sayGainGivenLoss(operand: Checked, parameter: Parameter, context: Conte
   });
 }
 
-function wrongArgument(tree: CallTree, entry: OrdinaryFunction, operands: readonly Checked[], index: number, parameter: Parameter, context: Context): Checked {
+function wrongArgument(
+  tree: CallTree,
+  entry: OrdinaryFunction,
+  operands: readonly Checked[],
+  index: number,
+  parameter: Parameter,
+  context: Context,
+): Checked {
   const operand = operands[index] ?? present(operands[0], 'argument');
   const text = context.textOf(operand.tree);
-  const isBareNumber = operand.type.form === 'linear' && isDimensionless(operand.type.dimension) && operand.tree.type === 'literal';
+  const isBareNumber =
+    operand.type.form === 'linear' && isDimensionless(operand.type.dimension) && operand.tree.type === 'literal';
   const isSwapped = operands.length === 2 && entry.repeats === 0;
   const [first, second] = operands.map((part) => context.textOf(part.tree));
   const repairs = isBareNumber

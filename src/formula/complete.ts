@@ -36,7 +36,9 @@ export function completionsAt(
   const replace = { start: caret - typed.length, end: caret };
   const followsBracket = /^\s*\(/.test(entry.slice(caret));
   const candidates: Completion[] = [
-    ...symbols.filter(({ symbol }) => symbol !== '').map(({ symbol, label }) => make('symbol', symbol, symbol, label, replace)),
+    ...symbols
+      .filter(({ symbol }) => symbol !== '')
+      .map(({ symbol, label }) => make('symbol', symbol, symbol, label, replace)),
     ...CONSTANTS.map(({ name, text }) => make('constant', name, name, text, replace)),
     ...FUNCTIONS.map((entryOf) => functionCompletion(entryOf, replace, followsBracket)),
   ];
@@ -61,7 +63,9 @@ function functionCompletion(entry: FunctionEntry, replace: Place, followsBracket
 
 function unitCompletions(typed: string, caret: number): readonly Completion[] {
   const replace = { start: caret - typed.length, end: caret };
-  const words = UNIT_WORDS.filter((word) => word !== '1').map((word) => make('unit', word, word, findUnit(word)?.description ?? '', replace));
+  const words = UNIT_WORDS.filter((word) => word !== '1').map((word) =>
+    make('unit', word, word, findUnit(word)?.description ?? '', replace),
+  );
   return typed === '' ? words.slice(0, 12) : best(typed.replace(/^u/, 'µ').replace(/^dBu/, 'dBµ'), words);
 }
 

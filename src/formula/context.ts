@@ -46,7 +46,9 @@ export class Context {
 
   /** The line that most likely states the bandwidth, for repairs. */
   bandwidthTerm(): string | undefined {
-    const lines = this.linesOf(FREQUENCY).filter(({ kind, unit }) => kind !== 'signal ratio' && !/bit|Bd/.test(unit.word));
+    const lines = this.linesOf(FREQUENCY).filter(
+      ({ kind, unit }) => kind !== 'signal ratio' && !/bit|Bd/.test(unit.word),
+    );
     const named = lines.find(({ symbol, label }) => /^(B|BW|B_.*|W_.*)$/.test(symbol) || /\bbandwidth\b/i.test(label));
     const only = lines.filter(({ symbol }) => !/^[fFR]/.test(symbol));
     const line = named ?? (only.length === 1 ? only[0] : undefined);
@@ -56,7 +58,9 @@ export class Context {
   /** The line that most likely states a length, for repairs. */
   lengthTerm(): string | undefined {
     const lines = this.linesOf(LENGTH).filter(({ unit }) => unit.form === 'linear');
-    const named = lines.find(({ symbol, label }) => /^(len|l|length)(_.*)?$/i.test(symbol) || /\blength\b/i.test(label));
+    const named = lines.find(
+      ({ symbol, label }) => /^(len|l|length)(_.*)?$/i.test(symbol) || /\blength\b/i.test(label),
+    );
     const path = lines.find(({ symbol, label }) => /^d(_.*)?$/.test(symbol) || /\b(distance|path)\b/i.test(label));
     return (named ?? path ?? (lines.length === 1 ? lines[0] : undefined))?.symbol;
   }
@@ -74,9 +78,7 @@ export class Context {
   }
 
   private linesOf(dimension: Dimension): SymbolInfo[] {
-    return this.allLines().filter(
-      ({ unit }) => unit.form !== 'rate' && sameDimension(unit.dimension, dimension),
-    );
+    return this.allLines().filter(({ unit }) => unit.form !== 'rate' && sameDimension(unit.dimension, dimension));
   }
 }
 

@@ -1,11 +1,27 @@
 /** Bringing a line's result into its unit: between forms, references and scales; or saying that it has another dimension. */
 import {
-  findUnit, isDimensionless, isRootPower, raiseDimension, sameDimension, writeQuantity, type DecibelUnit, type LinearUnit, type Unit,
+  findUnit,
+  isDimensionless,
+  isRootPower,
+  raiseDimension,
+  sameDimension,
+  writeQuantity,
+  type DecibelUnit,
+  type LinearUnit,
+  type Unit,
 } from '../quantity';
 import { present } from '../base';
 import type { Repair } from '../findings';
 import { asFactor, type Context } from './context';
-import { decibelsOf, describeType, fittingDecibelUnit, fittingLinearUnit, linearOf, powerDimension, termsOf } from './forms';
+import {
+  decibelsOf,
+  describeType,
+  fittingDecibelUnit,
+  fittingLinearUnit,
+  linearOf,
+  powerDimension,
+  termsOf,
+} from './forms';
 import { sayRateAlone, sayUnitMismatch } from './mismatch';
 import { constantPlan, scalePlan, shiftPlan, type Plan } from './plan';
 import { decibelSum } from './sums';
@@ -25,7 +41,10 @@ export interface Converted {
  * `hidden`: the repairs of a bare number that hides a unit, which then come first.
  */
 export function convertResult(
-  checked: Checked, declared: Unit | undefined, context: Context, hidden: readonly Repair[] | undefined,
+  checked: Checked,
+  declared: Unit | undefined,
+  context: Context,
+  hidden: readonly Repair[] | undefined,
 ): Converted | undefined {
   const { type, tree } = checked;
   // A quantity typed in the line's own unit is taken as typed, without a way there and back.
@@ -45,9 +64,16 @@ export function convertResult(
       return convertRate(checked, type.lengthM, declared, context);
     case 'decibel':
       if (declared === undefined) return ownDecibel(type, checked);
-      return toDeclared(declared.form === 'decibel' ? readOverReference({ ...checked, type }, declared) : { ...checked, type }, declared, context, hidden);
+      return toDeclared(
+        declared.form === 'decibel' ? readOverReference({ ...checked, type }, declared) : { ...checked, type },
+        declared,
+        context,
+        hidden,
+      );
     case 'linear':
-      return declared === undefined ? ownLinear(type, checked) : toDeclared({ ...checked, type }, declared, context, hidden);
+      return declared === undefined
+        ? ownLinear(type, checked)
+        : toDeclared({ ...checked, type }, declared, context, hidden);
   }
 }
 
@@ -59,7 +85,11 @@ function ownDecibel(type: DecibelType, { plan }: Checked): Converted {
 
 function ownLinear(type: LinearType, { plan }: Checked): Converted {
   const unit = fittingLinearUnit(type.dimension, [type.unitHint]);
-  return { unit, plan: unit.form === 'linear' ? inLinearUnit(plan, unit) : plan, isFitted: type.unitHint?.form !== 'linear' };
+  return {
+    unit,
+    plan: unit.form === 'linear' ? inLinearUnit(plan, unit) : plan,
+    isFitted: type.unitHint?.form !== 'linear',
+  };
 }
 
 /** An SI value as a figure in the unit; literals come back as typed. */
@@ -67,16 +97,28 @@ function inLinearUnit(plan: Plan, unit: LinearUnit): Plan {
   const shifted = shiftPlan(plan, -unit.shift);
   if (unit.factor === 1) return shifted;
   // Division by a written factor and multiplication by its inverse differ in the last digit: use the exact one.
-  return unit.factor < 1 ? scalePlan(shifted, Number((1 / unit.factor).toPrecision(15))) : { op: 'quotient', left: shifted, right: { op: 'constant', value: unit.factor } };
+  return unit.factor < 1
+    ? scalePlan(shifted, Number((1 / unit.factor).toPrecision(15)))
+    : { op: 'quotient', left: shifted, right: { op: 'constant', value: unit.factor } };
 }
 
-function convertRate(checked: Checked, lengthM: number, declared: Unit | undefined, context: Context): Converted | undefined {
+function convertRate(
+  checked: Checked,
+  lengthM: number,
+  declared: Unit | undefined,
+  context: Context,
+): Converted | undefined {
   if (declared === undefined) {
     const unit = checked.type.form === 'rate' ? checked.type.unitHint : undefined;
     const shown = unit?.form === 'rate' ? unit : present(findUnit('dB/m'), 'dB/m');
-    return { unit: shown, plan: scalePlan(checked.plan, shown.form === 'rate' ? shown.lengthM / lengthM : 1), isFitted: unit === undefined };
+    return {
+      unit: shown,
+      plan: scalePlan(checked.plan, shown.form === 'rate' ? shown.lengthM / lengthM : 1),
+      isFitted: unit === undefined,
+    };
   }
-  if (declared.form === 'rate') return { unit: declared, plan: scalePlan(checked.plan, declared.lengthM / lengthM), isFitted: false };
+  if (declared.form === 'rate')
+    return { unit: declared, plan: scalePlan(checked.plan, declared.lengthM / lengthM), isFitted: false };
   sayRateAlone(checked, context);
   return undefined;
 }
@@ -90,16 +132,28 @@ type Result = Checked & { readonly type: DecibelType | LinearType };
 export function readOverReference(checked: Result, declared: DecibelUnit): Result {
   const terms = termsOf(checked, '');
   const written = terms.filter(({ overReference }) => overReference !== undefined);
-  if (written.length === 0 || (checked.type.form === 'decibel' && sameDimension(checked.type.dimension, declared.dimension))) return checked;
+  if (
+    written.length === 0 ||
+    (checked.type.form === 'decibel' && sameDimension(checked.type.dimension, declared.dimension))
+  )
+    return checked;
   for (const chosen of [written, ...written.map((one) => [one])]) {
-    const read = terms.map((term) => (term.overReference !== undefined && chosen.includes(term) ? { ...term, type: term.overReference } : term));
+    const read = terms.map((term) =>
+      term.overReference !== undefined && chosen.includes(term) ? { ...term, type: term.overReference } : term,
+    );
     const sum = decibelSum(checked.tree, read, checked.parts);
-    if (sum.type.form === 'decibel' && sameDimension(sum.type.dimension, declared.dimension)) return { ...sum, type: sum.type };
+    if (sum.type.form === 'decibel' && sameDimension(sum.type.dimension, declared.dimension))
+      return { ...sum, type: sum.type };
   }
   return checked;
 }
 
-function toDeclared(checked: Result, declared: Unit, context: Context, hidden: readonly Repair[] | undefined): Converted | undefined {
+function toDeclared(
+  checked: Result,
+  declared: Unit,
+  context: Context,
+  hidden: readonly Repair[] | undefined,
+): Converted | undefined {
   const done = (plan: Plan): Converted => ({ unit: declared, plan, isFitted: false });
   const { type } = checked;
   if (type.form === 'linear' && isDimensionless(type.dimension) && type.sort !== 'ratio') {
@@ -107,11 +161,17 @@ function toDeclared(checked: Result, declared: Unit, context: Context, hidden: r
     if (bare !== undefined) return done(bare);
   }
   if (declared.form === 'decibel') {
-    const plan = type.form === 'decibel' ? decibelToDecibel(type, checked.plan, declared) : linearToDecibel(type, checked.plan, declared);
+    const plan =
+      type.form === 'decibel'
+        ? decibelToDecibel(type, checked.plan, declared)
+        : linearToDecibel(type, checked.plan, declared);
     if (plan !== undefined) return done(plan);
   }
   if (declared.form === 'linear') {
-    const plan = type.form === 'decibel' ? decibelToLinear(type, checked.plan, declared) : linearToLinear(type, checked.plan, declared);
+    const plan =
+      type.form === 'decibel'
+        ? decibelToLinear(type, checked.plan, declared)
+        : linearToLinear(type, checked.plan, declared);
     if (plan !== undefined) return done(plan);
   }
   sayUnitMismatch(checked, declared, context, hidden);
@@ -133,14 +193,19 @@ function bareNumber(checked: Result, type: LinearType, declared: Unit, context: 
     context.say('number-as-decibels', checked.tree, {
       facts: { number: text },
       lateFacts: (evaluate) => ({ decibels: writeQuantity(evaluate(checked.plan), present(findUnit('dB'), 'dB')) }),
-      repairs: [context.rewrite(checked.tree, `${asFactor(checked.tree, text)} * 1 dB`), context.rewrite(checked.tree, `db(${text})`)],
+      repairs: [
+        context.rewrite(checked.tree, `${asFactor(checked.tree, text)} * 1 dB`),
+        context.rewrite(checked.tree, `db(${text})`),
+      ],
     });
   }
   return checked.plan;
 }
 
 function decibelToDecibel(type: DecibelType, plan: Plan, declared: DecibelUnit): Plan | undefined {
-  return sameDimension(type.dimension, declared.dimension) ? shiftPlan(plan, type.offsetDb - declared.offsetDb) : undefined;
+  return sameDimension(type.dimension, declared.dimension)
+    ? shiftPlan(plan, type.offsetDb - declared.offsetDb)
+    : undefined;
 }
 
 function linearToDecibel(type: LinearType, plan: Plan, declared: DecibelUnit): Plan | undefined {
@@ -152,7 +217,8 @@ function decibelToLinear(type: DecibelType, plan: Plan, declared: LinearUnit): P
   if (sameDimension(type.dimension, declared.dimension)) {
     return inLinearUnit({ op: 'linear', of: shiftPlan(plan, type.offsetDb) }, declared);
   }
-  const isRoot = isRootPower(declared.dimension) && sameDimension(type.dimension, raiseDimension(declared.dimension, 2));
+  const isRoot =
+    isRootPower(declared.dimension) && sameDimension(type.dimension, raiseDimension(declared.dimension, 2));
   return isRoot ? inLinearUnit(linearOf({ type, plan }).plan, declared) : undefined;
 }
 

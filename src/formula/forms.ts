@@ -1,7 +1,17 @@
 /** Moving between the linear and the decibel form, and naming types in findings. */
 import {
-  combineMeanings, describeDimension, findUnit, isDimensionless, isRootPower, NEUTRAL, raiseDimension, sameDimension, UNIT_WORDS,
-  type Dimension, type Meaning, type Unit,
+  combineMeanings,
+  describeDimension,
+  findUnit,
+  isDimensionless,
+  isRootPower,
+  NEUTRAL,
+  raiseDimension,
+  sameDimension,
+  UNIT_WORDS,
+  type Dimension,
+  type Meaning,
+  type Unit,
 } from '../quantity';
 import { scalePlan, shiftPlan, type Plan } from './plan';
 import type { Checked, DecibelType, LinearType, SumTerm, Type } from './types';
@@ -17,7 +27,10 @@ export function powerDimension(type: LinearType): Dimension {
 }
 
 /** The decibel form of a linear quantity: 10·log10, or 20·log10 of voltages and fields (ISO 80000-1). */
-export function decibelsOf(linear: { type: LinearType; plan: Plan }, zeroIsNoPower: boolean): { type: DecibelType; plan: Plan } {
+export function decibelsOf(
+  linear: { type: LinearType; plan: Plan },
+  zeroIsNoPower: boolean,
+): { type: DecibelType; plan: Plan } {
   const fieldLike = isFieldLike(linear.type);
   const decibels: Plan = { op: 'decibels', of: linear.plan, zeroIsNoPower };
   const { meaning, bandwidth, noiseTemperature } = linear.type;
@@ -95,7 +108,9 @@ export function fittingDecibelUnit(dimension: Dimension, offsetDb: number, hints
   const hinted = hints.find(fits);
   if (hinted !== undefined) return hinted;
   const candidates = UNIT_WORDS.map(findUnit).filter(fits);
-  const same = candidates.find((unit) => unit.form === 'decibel' && unit.offsetDb === offsetDb && !RARE_WORDS.has(unit.word));
+  const same = candidates.find(
+    (unit) => unit.form === 'decibel' && unit.offsetDb === offsetDb && !RARE_WORDS.has(unit.word),
+  );
   const found = same ?? candidates[0];
   if (found !== undefined) return found;
   const word = `dB(${describeDimension(dimension)})`;
@@ -108,7 +123,9 @@ export function fittingLinearUnit(dimension: Dimension, hints: readonly (Unit | 
     unit?.form === 'linear' && sameDimension(unit.dimension, dimension);
   const hinted = hints.find(fits);
   if (hinted !== undefined) return hinted;
-  const base = UNIT_WORDS.map(findUnit).find((unit) => fits(unit) && unit.form === 'linear' && unit.factor === 1 && unit.shift === 0);
+  const base = UNIT_WORDS.map(findUnit).find(
+    (unit) => fits(unit) && unit.form === 'linear' && unit.factor === 1 && unit.shift === 0,
+  );
   if (base !== undefined) return base;
   const word = describeDimension(dimension);
   return { form: 'linear', word, dimension, factor: 1, shift: 0, description: word };
@@ -120,7 +137,9 @@ export function describeType(type: Type): string {
     case 'decibel':
       return fittingDecibelUnit(type.dimension, type.offsetDb, [type.unitHint]).word;
     case 'linear':
-      return isDimensionless(type.dimension) ? 'a plain number' : fittingLinearUnit(type.dimension, [type.unitHint]).word;
+      return isDimensionless(type.dimension)
+        ? 'a plain number'
+        : fittingLinearUnit(type.dimension, [type.unitHint]).word;
     case 'rate':
       return type.unitHint?.word ?? 'dB/m';
     case 'truth':

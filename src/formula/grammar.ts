@@ -172,7 +172,10 @@ function explainStop({ tokens }: Scan, at: number): EntryFault {
   if (token.type === 'sign' && token.sign !== ')' && token.sign !== '(' && at === tokens.length - 1)
     return { place, sentence: `The entry ends with ${token.sign}: something is missing after it.` };
   if (token.type === 'sign' && (token.sign === ',' || token.sign === ';'))
-    return { place, sentence: 'A comma separates the arguments of a function; decimals are written with a point in expressions.' };
+    return {
+      place,
+      sentence: 'A comma separates the arguments of a function; decimals are written with a point in expressions.',
+    };
   if (token.type === 'sign')
     return { place, sentence: `Something is missing before ${token.sign}: a quantity, a symbol or a call.` };
   return { place, sentence: 'The entry cannot be read from here on.' };

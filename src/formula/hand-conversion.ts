@@ -16,12 +16,17 @@ const near = (a: number, b: number): boolean => Math.abs(a - b) < 0.06;
  * the quantity's reference to that of the result (`resultOffsetDb`). `write`: what takes the place of `tree`, of the quantity.
  */
 export function sayHandConversion(
-  tree: Tree, terms: readonly SumTerm[], resultOffsetDb: number, context: Context, write: (quantity: string) => string = (quantity) => quantity,
+  tree: Tree,
+  terms: readonly SumTerm[],
+  resultOffsetDb: number,
+  context: Context,
+  write: (quantity: string) => string = (quantity) => quantity,
 ): boolean {
   if (terms.length !== 2) return sayBareStep(tree, terms, resultOffsetDb, context, write);
   const [quantity, ...rest] = [...terms].sort((a, b) => Number(isFigure(a)) - Number(isFigure(b)));
   const [figure] = rest;
-  if (quantity === undefined || figure === undefined || rest.length !== 1 || !isFigure(figure) || isFigure(quantity)) return false;
+  if (quantity === undefined || figure === undefined || rest.length !== 1 || !isFigure(figure) || isFigure(quantity))
+    return false;
   if (!near(quantity.coefficient, 1) || figure.plan.op !== 'constant') return false;
   const step = quantity.type.offsetDb - resultOffsetDb;
   const added = figure.coefficient * figure.plan.value;
@@ -31,11 +36,19 @@ export function sayHandConversion(
 }
 
 /** In longer sums only a number without any unit is taken for a step: 30 dB may be an amplifier's gain. */
-function sayBareStep(tree: Tree, terms: readonly SumTerm[], resultOffsetDb: number, context: Context, write: (quantity: string) => string): boolean {
+function sayBareStep(
+  tree: Tree,
+  terms: readonly SumTerm[],
+  resultOffsetDb: number,
+  context: Context,
+  write: (quantity: string) => string,
+): boolean {
   const rest = terms.filter(({ isNumber }) => !isNumber);
   const offsetDb = rest.reduce((sum, { coefficient, type }) => sum + coefficient * type.offsetDb, 0);
   const step = offsetDb - resultOffsetDb;
-  const number = terms.find(({ isNumber, plan, coefficient }) => isNumber && plan.op === 'constant' && near(coefficient * plan.value, step));
+  const number = terms.find(
+    ({ isNumber, plan, coefficient }) => isNumber && plan.op === 'constant' && near(coefficient * plan.value, step),
+  );
   if (number === undefined || near(step, 0)) return false;
   say(tree, number.text, write(withoutTerm(terms, number).text), context);
   return true;
@@ -56,14 +69,19 @@ function say(tree: Tree, number: string, repaired: string, context: Context): vo
 export function sayFactorInLogarithm(terms: readonly SumTerm[], declared: DecibelUnit, context: Context): boolean {
   for (const term of terms) {
     const argument = argumentOfLogarithm(term.tree);
-    if (argument?.type !== 'binary' || (argument.operator !== '*' && argument.operator !== '/') || !isLevel(term)) continue;
+    if (argument?.type !== 'binary' || (argument.operator !== '*' && argument.operator !== '/') || !isLevel(term))
+      continue;
     const factor = [argument.left, argument.right].find((side) => side.type === 'literal' && side.unit === null);
     if (factor?.type !== 'literal' || (argument.operator === '/' && factor === argument.left)) continue;
     const step = (argument.operator === '*' ? 10 : -10) * Math.log10(factor.figure);
     if (near(step, 0) || !near(step, -declared.offsetDb)) continue;
     const quantity = factor === argument.left ? argument.right : argument.left;
     context.say('constant-hides-unit', argument, {
-      facts: { number: context.textOf(factor), standsFor: 'the step between two references, which the line’s unit takes already', closes: 'yes' },
+      facts: {
+        number: context.textOf(factor),
+        standsFor: 'the step between two references, which the line’s unit takes already',
+        closes: 'yes',
+      },
       repairs: [context.rewrite(argument, context.textOf(quantity))],
     });
     return true;

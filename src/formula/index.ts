@@ -13,5 +13,6 @@ export * from './catalogue';
 export { CONSTANTS, type Constant } from './atoms';
 export { parameterAt } from './calls';
 export * from './line';
+export type { AttributedKind, AttributedSide, KindOrigin, LineSpec } from './attribution';
 export * from './complete';
 export { describeType, linearOf, decibelsOf, termsOf, fittingDecibelUnit, fittingLinearUnit } from './forms';

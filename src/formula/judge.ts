@@ -9,9 +9,7 @@ import { findAveraged } from './averages';
 import { describeType } from './forms';
 import { isLevel, judgedNet } from './net';
 import { sayNotes } from './notes';
-import {
-  cascadeOfFigures, groupedAsPowers, groupedAsRatios, withFlippedTerm, type Grouped,
-} from './repairs';
+import { cascadeOfFigures, groupedAsPowers, groupedAsRatios, withFlippedTerm, type Grouped } from './repairs';
 import { sayBandwidthsDiffer } from './bandwidths';
 import type { Tree } from './tree';
 import type { Checked, SumTerm } from './types';
@@ -39,7 +37,12 @@ function judge(checked: Checked, terms: readonly SumTerm[], context: Context, li
   const net = judgedNet(terms);
   const levels = net.w + net.u + net.l;
   if (levels > 2 - 1e-9) {
-    sayLevelsSummed(checked.tree, terms, terms.filter((term) => isLevel(term) && term.coefficient > 0), context);
+    sayLevelsSummed(
+      checked.tree,
+      terms,
+      terms.filter((term) => isLevel(term) && term.coefficient > 0),
+      context,
+    );
     return false;
   }
   // S − N − I: the levels taken off are added as well, and what is left is the inverse of a level, which no line is.
@@ -51,10 +54,7 @@ function judge(checked: Checked, terms: readonly SumTerm[], context: Context, li
   const averaged = findAveraged(checked.tree, terms, context);
   sayMeaning(checked.tree, terms, net, context);
   if (!averaged) sayNotes(checked, terms, net, context, line);
-  sayBandwidthsDiffer(
-    terms.filter(({ coefficient }) => Math.abs(coefficient) === 1).filter(isLevel),
-    context,
-  );
+  sayBandwidthsDiffer(terms.filter(({ coefficient }) => Math.abs(coefficient) === 1).filter(isLevel), context);
   return true;
 }
 
@@ -70,21 +70,38 @@ function sayLevelsSummed(tree: Tree, terms: readonly SumTerm[], levels: readonly
 }
 
 /** A level of voltage added to one of power: what is missing first is the impedance. */
-function sayVoltageAmongPowers(tree: Tree, terms: readonly SumTerm[], levels: readonly SumTerm[], context: Context): boolean {
+function sayVoltageAmongPowers(
+  tree: Tree,
+  terms: readonly SumTerm[],
+  levels: readonly SumTerm[],
+  context: Context,
+): boolean {
   const power = levels.find(({ type }) => sameDimension(type.dimension, POWER));
-  const voltage = levels.find((term) => power !== undefined && differByImpedance(term.type.dimension, power.type.dimension));
+  const voltage = levels.find(
+    (term) => power !== undefined && differByImpedance(term.type.dimension, power.type.dimension),
+  );
   if (power === undefined || voltage === undefined) return false;
-  const inPower = levels.map((term) => (differByImpedance(term.type.dimension, power.type.dimension) ? { ...term, text: `${term.text} - db(50 ohm)` } : term));
+  const inPower = levels.map((term) =>
+    differByImpedance(term.type.dimension, power.type.dimension)
+      ? { ...term, text: `${term.text} - db(50 ohm)` }
+      : term,
+  );
   const all = terms.map((term) => inPower[levels.indexOf(term)] ?? term);
   context.say('field-and-power', voltage.tree, {
-    facts: { what: voltage.text, found: describeType(voltage.type), declared: `${describeType(power.type)}, as ${power.text} is` },
+    facts: {
+      what: voltage.text,
+      found: describeType(voltage.type),
+      declared: `${describeType(power.type)}, as ${power.text} is`,
+    },
     repairs: repairsOf(groupedAsPowers(all, inPower, 'powersum', context), tree, context),
   });
   return true;
 }
 
 function repairsOf(grouped: Grouped | undefined, tree: Tree, context: Context): ReturnType<Context['rewrite']>[] {
-  return grouped === undefined ? [] : [{ kind: 'entry', title: grouped.title, entry: context.replace(tree, grouped.text) }];
+  return grouped === undefined
+    ? []
+    : [{ kind: 'entry', title: grouped.title, entry: context.replace(tree, grouped.text) }];
 }
 
 const near = (a: number, b: number): boolean => Math.abs(a - b) < 1e-9;
@@ -102,7 +119,8 @@ function sayMeaning(tree: Tree, terms: readonly SumTerm[], net: Meaning, context
   if (isRatios) {
     const sign = Math.sign(net.w);
     const ratios = terms.filter(
-      ({ coefficient, type }) => type.meaning !== undefined && type.meaning.w * coefficient * sign > 0 && near(type.meaning.w, -type.meaning.u),
+      ({ coefficient, type }) =>
+        type.meaning !== undefined && type.meaning.w * coefficient * sign > 0 && near(type.meaning.w, -type.meaning.u),
     );
     context.say('ratios-summed', tree, {
       facts: { ratios: ratios.map(({ text }) => text).join(' and ') },
@@ -119,4 +137,3 @@ function sayMeaning(tree: Tree, terms: readonly SumTerm[], net: Meaning, context
     repairs: repairsOf(flipped, tree, context),
   });
 }
-

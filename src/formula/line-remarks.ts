@@ -1,11 +1,21 @@
 /** What the checker says of a line as a whole: its declared kind against what it rests on, and figures below their floor. */
 import {
-  FREQUENCY, isDimensionless, kindOfNet, meaningOf, raiseDimension, sameDimension, TEMPERATURE, TIME,
-  type Dimension, type Meaning, type QuantityKind, type Unit,
+  FREQUENCY,
+  isDimensionless,
+  kindOfNet,
+  meaningOf,
+  raiseDimension,
+  sameDimension,
+  TEMPERATURE,
+  TIME,
+  type Dimension,
+  type Meaning,
+  type QuantityKind,
+  type Unit,
 } from '../quantity';
 import type { Repair } from '../findings';
 import type { Context } from './context';
-import type { AttributedKind, LineSpec } from './line';
+import type { AttributedKind, LineSpec } from './attribution';
 import type { Plan } from './plan';
 import type { Tree } from './tree';
 import type { Checked, DecibelType, LinearType, RateType } from './types';
@@ -53,11 +63,22 @@ function sayKindMismatch({ spec, net, unit, tree, context }: LineFacts): void {
   if (spec.quantity !== undefined && !fitsUnit(spec.quantity, unit)) {
     context.say('kind-mismatch', tree, {
       facts: { declared: spec.quantity, what: `its unit ${unit.word}`, found: 'something else' },
-      repairs: unit.defaultKind === undefined ? [] : [{ kind: 'quantity', title: `declare it ${unit.defaultKind}`, quantity: unit.defaultKind }],
+      repairs:
+        unit.defaultKind === undefined
+          ? []
+          : [{ kind: 'quantity', title: `declare it ${unit.defaultKind}`, quantity: unit.defaultKind }],
     });
     return;
   }
-  if (!isDeclared || spec.quantity === 'plain' || net === undefined || !net.declared || tree === undefined || tree.type === 'literal') return;
+  if (
+    !isDeclared ||
+    spec.quantity === 'plain' ||
+    net === undefined ||
+    !net.declared ||
+    tree === undefined ||
+    tree.type === 'literal'
+  )
+    return;
   const declared = meaningOf(spec.quantity ?? 'level', spec.side, true);
   const isSideFree = near(declared.l, 1);
   const agrees = isSideFree ? near(net.w + net.u + net.l, 1) : near(declared.w, net.w) && near(declared.u, net.u);
@@ -73,7 +94,14 @@ function sayKindMismatch({ spec, net, unit, tree, context }: LineFacts): void {
     repairs:
       found === undefined
         ? []
-        : [{ kind: 'quantity', title: `declare it ${words}`, quantity: found.kind, ...(found.side === undefined ? {} : { side: found.side }) }],
+        : [
+            {
+              kind: 'quantity',
+              title: `declare it ${words}`,
+              quantity: found.kind,
+              ...(found.side === undefined ? {} : { side: found.side }),
+            },
+          ],
   });
 }
 
@@ -106,10 +134,16 @@ const isNegative = (value: number): boolean => value < 0;
 
 function sayBelowFloor({ unit, kind, plan, tree, checked, context }: LineFacts): void {
   const positive: Repair[] =
-    tree?.type === 'literal' && tree.figure < 0 ? [context.rewrite(tree, context.textOf(tree).replace(/^[-−–]\s*/, ''))] : [];
+    tree?.type === 'literal' && tree.figure < 0
+      ? [context.rewrite(tree, context.textOf(tree).replace(/^[-−–]\s*/, ''))]
+      : [];
   const isRatio = unit.form === 'decibel' && isDimensionless(unit.dimension);
   if (kind?.kind === 'noise figure' && isRatio)
-    context.say('negative-figure', tree, { facts: { kind: 'noise figure', floor: '0 dB' }, repairs: positive, applies: { plan, test: isNegative } });
+    context.say('negative-figure', tree, {
+      facts: { kind: 'noise figure', floor: '0 dB' },
+      repairs: positive,
+      applies: { plan, test: isNegative },
+    });
   if (unit.form === 'linear' && sameDimension(unit.dimension, TEMPERATURE)) {
     const floor = -unit.shift / unit.factor;
     context.say('negative-figure', tree, {

@@ -2,51 +2,35 @@
  * A line: its entry checked, brought into the line's unit, and given its kind and side. What comes out is all that the
  * engine needs: a plan for the figure, how other lines meet it, and the findings.
  */
-import { fail, ok, present, type Result } from '../base';
+import { fail, ok, type Result } from '../base';
 import { CATALOGUE } from '../findings';
+import { assumeFromName, findUnit, isDimensionless, sameDimension, UNIT_WORDS, type Unit } from '../quantity';
 import {
-  assumeFromName, findUnit, isDimensionless, kindOfNet, meaningOf, resolveMeaning, sameDimension, UNIT_WORDS, UNSAID,
-  type Meaning, type QuantityKind, type Side, type Unit,
-} from '../quantity';
-import { meaningOfUnit, typeOfUnit } from './atoms';
+  attributeKind,
+  attributeSide,
+  exportedType,
+  nameKind,
+  powerMeaning,
+  type AttributedKind,
+  type AttributedSide,
+  type LineSpec,
+} from './attribution';
 import { check } from './check';
 import { Context } from './context';
-import { fittingDecibelUnit, isFieldLike, squared, termsOf } from './forms';
+import { convertResult, readOverReference } from './conversion';
+import { fittingDecibelUnit, termsOf } from './forms';
 import { parseEntry } from './grammar';
 import { sayFactorInLogarithm, sayHandConversion } from './hand-conversion';
-import { sayConstantHidesUnit, hasDimensionedTerms, hidesBoltzmann, type Hidden } from './hidden-units';
+import { hasDimensionedTerms, hidesBoltzmann, sayConstantHidesUnit, type Hidden } from './hidden-units';
 import { consume } from './judge';
-import { convertResult, readOverReference } from './conversion';
+import { sayLineRemarks } from './line-remarks';
 import { sayUnitMismatch } from './mismatch';
 import { nearestName } from './nearest';
 import { judgedNet } from './net';
-import { sayLineRemarks } from './line-remarks';
 import { constantPlan, type Plan } from './plan';
 import { readPlainQuantity, type EntryFault } from './scan';
 import { symbolsOf, type Tree } from './tree';
 import type { Checked, DecibelType, LinearType, RateType, Remark, Scope } from './types';
-
-/** What a person has said of a line. */
-export interface LineSpec {
-  readonly symbol: string;
-  readonly label: string;
-  readonly entry: string;
-  readonly unit?: string | undefined;
-  readonly quantity?: QuantityKind | undefined;
-  readonly side?: Side | undefined;
-}
-
-export type KindOrigin = 'declared' | 'name' | 'expression' | 'unit';
-
-export interface AttributedKind {
-  readonly kind: QuantityKind;
-  readonly origin: KindOrigin;
-}
-
-export interface AttributedSide {
-  readonly side: Side;
-  readonly origin: KindOrigin;
-}
 
 /** A line as checked. */
 export interface LineResult {
@@ -143,7 +127,12 @@ function emptyLine(spec: LineSpec, unit: Unit | undefined, context: Context): Li
   };
 }
 
-function checkRead(spec: LineSpec, read: Exclude<ReadEntry, { form: 'empty' }>, context: Context, declared: Unit | undefined): Draft {
+function checkRead(
+  spec: LineSpec,
+  read: Exclude<ReadEntry, { form: 'empty' }>,
+  context: Context,
+  declared: Unit | undefined,
+): Draft {
   switch (read.form) {
     case 'quantity': {
       const start = spec.entry.length - spec.entry.trimStart().length;
@@ -158,7 +147,12 @@ function checkRead(spec: LineSpec, read: Exclude<ReadEntry, { form: 'empty' }>, 
       };
     }
     case 'unreadable':
-      context.remarks.push({ code: 'bad-entry', place: read.fault.place, facts: { what: read.fault.sentence }, repairs: [] });
+      context.remarks.push({
+        code: 'bad-entry',
+        place: read.fault.place,
+        facts: { what: read.fault.sentence },
+        repairs: [],
+      });
       return { checked: undefined };
     case 'expression':
       return { checked: check(read.tree, context), tree: read.tree, symbols: read.symbols };
@@ -177,7 +171,8 @@ function findHidden(checked: Checked, declared: Unit | undefined, context: Conte
     const read = readOverReference({ ...checked, type }, declared).type;
     if (read.form === 'decibel' && sameDimension(read.dimension, declared.dimension)) {
       // It closes; but a step between references may have been taken twice.
-      if (!sayHandConversion(checked.tree, terms, declared.offsetDb, context)) sayFactorInLogarithm(terms, declared, context);
+      if (!sayHandConversion(checked.tree, terms, declared.offsetDb, context))
+        sayFactorInLogarithm(terms, declared, context);
       return undefined;
     }
     return sayConstantHidesUnit(checked.tree, terms, declared, context);
@@ -185,19 +180,33 @@ function findHidden(checked: Checked, declared: Unit | undefined, context: Conte
   if (declared !== undefined) return undefined;
   const isPlain = isDimensionless(type.dimension) || !hasDimensionedTerms(terms);
   const hasWord = !fittingDecibelUnit(type.dimension, 0, []).word.startsWith('dB(');
-  return isPlain || (hasWord && !hidesBoltzmann(terms)) ? undefined : sayConstantHidesUnit(checked.tree, terms, undefined, context);
+  return isPlain || (hasWord && !hidesBoltzmann(terms))
+    ? undefined
+    : sayConstantHidesUnit(checked.tree, terms, undefined, context);
 }
 
-function settle(spec: LineSpec, draft: Draft, declared: Unit | undefined, context: Context, isUnitInError: boolean): LineResult {
+function settle(
+  spec: LineSpec,
+  draft: Draft,
+  declared: Unit | undefined,
+  context: Context,
+  isUnitInError: boolean,
+): LineResult {
   const assumed = declared === undefined ? undefined : assumeFromName(spec.symbol, spec.label, declared);
   const hidden = draft.checked === undefined ? undefined : findHidden(draft.checked, declared, context);
   const checked =
     draft.checked === undefined
       ? undefined
-      : consume(draft.checked, context, { symbol: spec.symbol, label: spec.label, kind: spec.quantity ?? assumed?.kind ?? nameKind(spec), hidden: hidden?.term });
+      : consume(draft.checked, context, {
+          symbol: spec.symbol,
+          label: spec.label,
+          kind: spec.quantity ?? assumed?.kind ?? nameKind(spec),
+          hidden: hidden?.term,
+        });
   if (draft.checked?.type.form === 'decibel' && checked?.type.form === 'broken' && declared !== undefined)
     sayInverseLevel({ ...draft.checked, type: draft.checked.type }, declared, context);
-  const converted = checked === undefined || isUnitInError ? undefined : convertResult(checked, declared, context, hidden?.repairs);
+  const converted =
+    checked === undefined || isUnitInError ? undefined : convertResult(checked, declared, context, hidden?.repairs);
   const unit = declared ?? converted?.unit;
   const isInError = converted === undefined || context.waitsFor.length > 0 || context.remarks.some(isErrorRemark);
   const symbols = draft.symbols ?? [];
@@ -206,17 +215,46 @@ function settle(spec: LineSpec, draft: Draft, declared: Unit | undefined, contex
   const { remarks, waitsFor } = context;
   const typedDigits = draft.typedDigits;
   if (unit === undefined)
-    return { unit, isFitted, plan, typedDigits, isEmpty: false, isInError, looksAround: context.looksAround, waitsFor, symbols, remarks };
+    return {
+      unit,
+      isFitted,
+      plan,
+      typedDigits,
+      isEmpty: false,
+      isInError,
+      looksAround: context.looksAround,
+      waitsFor,
+      symbols,
+      remarks,
+    };
   const net = checked === undefined ? undefined : powerMeaning(checked);
   const kind = attributeKind(spec, unit, draft.tree?.type === 'literal' ? undefined : net, checked);
   const side = attributeSide(spec, unit, kind, net);
-  const isBareNumber = isDimensionless(unit.form === 'rate' ? [0, 1, 0, 0, 0] : unit.dimension) && unit.word === '1' && declared === undefined;
+  const isBareNumber =
+    isDimensionless(unit.form === 'rate' ? [0, 1, 0, 0, 0] : unit.dimension) &&
+    unit.word === '1' &&
+    declared === undefined;
   const sortIsPure = isBareNumber && (checked?.type.form === 'linear' ? checked.type.sort !== 'ratio' : true);
   const type = exportedType(spec, unit, kind, net, checked, sortIsPure);
   sayLineRemarks({ spec, unit, kind, net, type, plan, isInError, tree: draft.tree, checked, context });
   const constant = sortIsPure && draft.bareFigure !== undefined ? draft.bareFigure : undefined;
   const { looksAround } = context;
-  return { unit, isFitted, plan, type, kind, side, constant, typedDigits, isEmpty: false, isInError, remarks, looksAround, waitsFor, symbols };
+  return {
+    unit,
+    isFitted,
+    plan,
+    type,
+    kind,
+    side,
+    constant,
+    typedDigits,
+    isEmpty: false,
+    isInError,
+    remarks,
+    looksAround,
+    waitsFor,
+    symbols,
+  };
 }
 
 /** S − N − I in a line in dB: beside the levels added, what is left has not the unit declared. */
@@ -230,7 +268,11 @@ function sayInverseLevel(checked: Checked & { type: DecibelType }, declared: Uni
 const NO_FIGURE = constantPlan(NaN);
 
 /** The checked expression of a line, for its working; undefined when it is empty or cannot be read. */
-export function inspectLine(spec: LineSpec, scope: Scope, read: ReadEntry = readEntry(spec.entry)): Checked | undefined {
+export function inspectLine(
+  spec: LineSpec,
+  scope: Scope,
+  read: ReadEntry = readEntry(spec.entry),
+): Checked | undefined {
   if (read.form === 'empty') return undefined;
   const context = new Context(spec.entry, scope);
   const declared = spec.unit === undefined ? undefined : findUnit(spec.unit);
@@ -238,88 +280,5 @@ export function inspectLine(spec: LineSpec, scope: Scope, read: ReadEntry = read
   return checked === undefined ? undefined : consume(checked, context);
 }
 
-const isErrorRemark = ({ code, applies }: Remark): boolean => applies === undefined && CATALOGUE[code].severity === 'error';
-
-/** The kind that the name says before the unit is known: enough to know a loss from a level. */
-function nameKind(spec: LineSpec): QuantityKind | undefined {
-  return assumeFromName(spec.symbol, spec.label, present(findUnit('dB'), 'dB'))?.kind;
-}
-
-/** The meaning of a result as of its power-like quantity. */
-function powerMeaning(checked: Checked): Meaning | undefined {
-  const { type } = checked;
-  if (type.form === 'linear') return isFieldLike(type) ? squared(type.meaning) : type.meaning;
-  return type.form === 'decibel' ? type.meaning : undefined;
-}
-
-/** Kind: as declared, else as the name says, else as the expression's net tells, else as the unit suggests. */
-function attributeKind(spec: LineSpec, unit: Unit, net: Meaning | undefined, checked: Checked | undefined): AttributedKind | undefined {
-  if (spec.quantity !== undefined) return { kind: spec.quantity, origin: 'declared' };
-  const named = assumeFromName(spec.symbol, spec.label, unit);
-  if (named !== undefined) return { kind: named.kind, origin: 'name' };
-  if (net !== undefined && unit.form !== 'rate') {
-    const told = kindOfTerms(checked) ?? kindOfNet(net, isDimensionless(unit.dimension))?.kind;
-    const isTemperature = unit.defaultKind === 'temperature' && told === 'level';
-    if (told !== undefined && fitsUnit(told, unit) && isSaid(net, checked)) return { kind: isTemperature ? 'temperature' : told, origin: 'expression' };
-  }
-  return unit.defaultKind === undefined ? undefined : { kind: unit.defaultKind, origin: 'unit' };
-}
-
-/** True when the expression tells something: not a lone term about which nothing is known, nor a plain number. */
-function isSaid(net: Meaning, checked: Checked | undefined): boolean {
-  const isZero = [net.w, net.u, net.f, net.l].every((exponent) => Math.abs(exponent) < 1e-9);
-  if (!isZero) return true;
-  if (checked?.type.form !== 'decibel') return false;
-  if (checked.kind !== undefined) return true;
-  return termsOf(checked, '').some(({ kind, type }) => kind !== undefined || (type.meaning !== undefined && type.meaning.declared));
-}
-
-const fitsUnit = (kind: QuantityKind, unit: Unit): boolean =>
-  kind === 'gain' || kind === 'loss' || kind === 'noise figure'
-    ? unit.form === 'decibel' && isDimensionless(unit.dimension)
-    : unit.defaultKind === undefined || unit.defaultKind === kind || unit.defaultKind === 'bandwidth' || kind === 'level';
-
-/** A call's own kind; a gain or a loss for sums of such: losses less gains are a loss. */
-function kindOfTerms(checked: Checked | undefined): QuantityKind | undefined {
-  if (checked === undefined) return undefined;
-  if (checked.terms === undefined) return checked.kind;
-  const { terms } = checked;
-  // Terms about which nothing is known, such as a literal in dB, go with the rest.
-  const known = terms.filter(({ kind, type }) => kind !== undefined || type.meaning?.declared === true);
-  const isLossLike = known.every(({ kind, coefficient }) => (kind === 'loss' && coefficient > 0) || (kind === 'gain' && coefficient < 0));
-  return isLossLike && known.some(({ kind }) => kind === 'loss') ? 'loss' : undefined;
-}
-
-function attributeSide(spec: LineSpec, unit: Unit, kind: AttributedKind | undefined, net: Meaning | undefined): AttributedSide | undefined {
-  if (spec.side !== undefined) return { side: spec.side, origin: 'declared' };
-  if (kind?.kind !== 'level') return undefined;
-  const named = assumeFromName(spec.symbol, spec.label, unit);
-  if (named?.side !== undefined) return { side: named.side, origin: 'name' };
-  const told = net === undefined ? undefined : kindOfNet(net, false)?.side;
-  return told === undefined ? undefined : { side: told, origin: 'expression' };
-}
-
-/** The line as others meet it. Assumed kinds count; assumed sides count as not said. */
-function exportedType(
-  spec: LineSpec, unit: Unit, kind: AttributedKind | undefined, net: Meaning | undefined, checked: Checked | undefined, isPure: boolean,
-): LinearType | DecibelType | RateType {
-  const type = typeOfUnit(unit, exportedMeaning(spec, unit, kind, net), isPure);
-  if (type.form === 'rate' || checked === undefined || (checked.type.form !== 'decibel' && checked.type.form !== 'linear')) return type;
-  const { bandwidth, noiseTemperature } = checked.type;
-  const degree = type.form === 'linear' && checked.type.form === 'linear' ? checked.type.degree : 0;
-  if (bandwidth === undefined && noiseTemperature === undefined && degree === 0) return type;
-  return type.form === 'linear' ? { ...type, bandwidth, noiseTemperature, degree } : { ...type, bandwidth, noiseTemperature };
-}
-
-function exportedMeaning(spec: LineSpec, unit: Unit, kind: AttributedKind | undefined, net: Meaning | undefined): Meaning {
-  if (spec.quantity !== undefined) {
-    const netSide = net === undefined ? undefined : kindOfNet(net, false)?.side;
-    return meaningOf(spec.quantity, spec.side ?? (spec.quantity === 'level' ? netSide : undefined), true);
-  }
-  if (kind?.kind === 'level' && spec.side !== undefined) return meaningOf('level', spec.side, true);
-  if (kind?.origin === 'name' && kind.kind !== 'level') return meaningOf(kind.kind, undefined, false);
-  const isLevel = net !== undefined && Math.abs(net.w + net.u + net.l - 1) < 1e-9;
-  if (kind?.kind === 'level') return isLevel ? resolveMeaning(net) : meaningOf('level', undefined, false);
-  if (net !== undefined) return resolveMeaning(net);
-  return kind === undefined ? (unit.word === 'dB' ? UNSAID : meaningOfUnit(unit)) : meaningOf(kind.kind, undefined, false);
-}
+const isErrorRemark = ({ code, applies }: Remark): boolean =>
+  applies === undefined && CATALOGUE[code].severity === 'error';

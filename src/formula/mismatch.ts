@@ -1,7 +1,16 @@
 /** A result that does not have the declared unit: what is missing, and what to write. */
 import {
-  combineDimensions, ENTROPY, FREQUENCY, IMPEDANCE, isDimensionless, POWER, raiseDimension, sameDimension, TEMPERATURE,
-  type Dimension, type Unit,
+  combineDimensions,
+  ENTROPY,
+  FREQUENCY,
+  IMPEDANCE,
+  isDimensionless,
+  POWER,
+  raiseDimension,
+  sameDimension,
+  TEMPERATURE,
+  type Dimension,
+  type Unit,
 } from '../quantity';
 import type { Repair } from '../findings';
 import { asFactor, type Context } from './context';
@@ -12,16 +21,26 @@ import type { Tree } from './tree';
 import type { Checked, DecibelType, LinearType } from './types';
 
 /** Makes the finding unit-mismatch (or field-and-power, or rate-without-length) for a line's result. */
-export function sayUnitMismatch(checked: Checked & { type: DecibelType | LinearType }, declared: Unit, context: Context, hidden: readonly Repair[] = []): void {
+export function sayUnitMismatch(
+  checked: Checked & { type: DecibelType | LinearType },
+  declared: Unit,
+  context: Context,
+  hidden: readonly Repair[] = [],
+): void {
   const { tree, type } = checked;
   const found = type.form === 'decibel' ? type.dimension : powerDimension(type);
   const wanted = declared.form === 'rate' ? undefined : declared.dimension;
   const extra = wanted === undefined ? undefined : combineDimensions(found, squareOfRoot(wanted, declared), -1);
-  const isImpedance = extra !== undefined && (sameDimension(extra, IMPEDANCE) || sameDimension(extra, raiseDimension(IMPEDANCE, -1)));
+  const isImpedance =
+    extra !== undefined && (sameDimension(extra, IMPEDANCE) || sameDimension(extra, raiseDimension(IMPEDANCE, -1)));
   const repairs = [
     ...hidden,
-    ...(extra !== undefined && sameDimension(extra, raiseDimension(FREQUENCY, -1)) && hidden.length === 0 ? bandwidthLiteral(checked, context) : []),
-    ...(isImpedance && type.form === 'linear' && tree.type === 'literal' ? [context.rewrite(tree, `(${context.textOf(tree)})^2 / (50 ohm)`)] : []),
+    ...(extra !== undefined && sameDimension(extra, raiseDimension(FREQUENCY, -1)) && hidden.length === 0
+      ? bandwidthLiteral(checked, context)
+      : []),
+    ...(isImpedance && type.form === 'linear' && tree.type === 'literal'
+      ? [context.rewrite(tree, `(${context.textOf(tree)})^2 / (50 ohm)`)]
+      : []),
     ...(extra === undefined || type.form !== 'decibel' || hidden.length > 0 ? [] : factorRepairs(tree, extra, context)),
     ...(type.form === 'decibel' ? powerSumRepairs(checked, context, wanted) : []),
     unitRepair(type),
@@ -47,11 +66,15 @@ function bandwidthLiteral(checked: Checked, context: Context): Repair[] {
 }
 
 const squareOfRoot = (dimension: Dimension, unit: Unit): Dimension =>
-  unit.form === 'linear' ? powerDimension({ form: 'linear', dimension, degree: 0, sort: 'ratio', meaning: undefined }) : dimension;
+  unit.form === 'linear'
+    ? powerDimension({ form: 'linear', dimension, degree: 0, sort: 'ratio', meaning: undefined })
+    : dimension;
 
 function missing(extra: Dimension | undefined, form: 'decibel' | 'linear'): { missing?: string } {
   if (extra === undefined || form !== 'decibel') return {};
-  const name = FACTORS.find(({ dimension }) => sameDimension(extra, dimension) || sameDimension(extra, raiseDimension(dimension, -1)))?.name;
+  const name = FACTORS.find(
+    ({ dimension }) => sameDimension(extra, dimension) || sameDimension(extra, raiseDimension(dimension, -1)),
+  )?.name;
   return name === undefined ? {} : { missing: `${name} is missing or one too many.` };
 }
 
@@ -66,8 +89,11 @@ const FACTORS = [
 function factorRepairs(tree: Tree, extra: Dimension, context: Context): (Repair | undefined)[] {
   const text = context.textOf(tree);
   const withTerm = (sign: '+' | '-', term: string | undefined): Repair | undefined =>
-    term === undefined ? undefined : { kind: 'entry', title: `${sign} ${term}`, entry: context.replace(tree, `${text} ${sign} ${term}`) };
-  const is = (dimension: Dimension, exponent: number): boolean => sameDimension(extra, raiseDimension(dimension, exponent));
+    term === undefined
+      ? undefined
+      : { kind: 'entry', title: `${sign} ${term}`, entry: context.replace(tree, `${text} ${sign} ${term}`) };
+  const is = (dimension: Dimension, exponent: number): boolean =>
+    sameDimension(extra, raiseDimension(dimension, exponent));
   if (is(FREQUENCY, 1)) return [withTerm('-', context.bandwidthTerm())];
   if (is(FREQUENCY, -1)) return [withTerm('+', context.bandwidthTerm())];
   if (is(ENTROPY, 1)) return [withTerm('-', 'db(k_B)')];
@@ -83,12 +109,17 @@ function powerSumRepairs(checked: Checked, context: Context, wanted: Dimension |
   const negative = terms.filter((term) => term.coefficient < 0 && isLevel(term));
   if (negative.length < 2 || wanted === undefined || !isDimensionless(wanted)) return [];
   const grouped = groupedAsPowers(terms, negative, 'powersum', context);
-  return grouped === undefined ? [] : [{ kind: 'entry', title: grouped.title, entry: context.replace(checked.tree, grouped.text) }];
+  return grouped === undefined
+    ? []
+    : [{ kind: 'entry', title: grouped.title, entry: context.replace(checked.tree, grouped.text) }];
 }
 
 /** The unit that the result has, if it has a word. */
 function unitRepair(type: DecibelType | LinearType): Repair {
-  const unit = type.form === 'decibel' ? fittingDecibelUnit(type.dimension, type.offsetDb, [type.unitHint]) : fittingLinearUnit(type.dimension, [type.unitHint]);
+  const unit =
+    type.form === 'decibel'
+      ? fittingDecibelUnit(type.dimension, type.offsetDb, [type.unitHint])
+      : fittingLinearUnit(type.dimension, [type.unitHint]);
   return { kind: 'unit', title: `unit ${unit.word}`, unit: unit.word };
 }
 

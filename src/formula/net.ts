@@ -1,7 +1,5 @@
 /** The net meaning of a decibel sum, and which of its terms are levels. */
-import {
-  combineMeanings, isDimensionless, meaningOf, NEUTRAL, POWER, sameDimension, type Meaning,
-} from '../quantity';
+import { combineMeanings, isDimensionless, meaningOf, NEUTRAL, POWER, sameDimension, type Meaning } from '../quantity';
 import type { SumTerm } from './types';
 
 /** The net meaning as judged: full-scale levels beside levels of power are ratios; what is not known weighs by dimension. */

@@ -11,10 +11,17 @@ const near = (a: number, b: number): boolean => Math.abs(a - b) < 1e-9;
 const isPositive = (value: number): boolean => value > 0;
 
 const isNoiseFigure = ({ kind, type }: SumTerm): boolean =>
-  kind === 'noise figure' || (type.meaning !== undefined && near(type.meaning.f, 1) && near(type.meaning.l + type.meaning.u + type.meaning.w, 0));
+  kind === 'noise figure' ||
+  (type.meaning !== undefined && near(type.meaning.f, 1) && near(type.meaning.l + type.meaning.u + type.meaning.w, 0));
 
 /** Makes the notes that a sum deserves. */
-export function sayNotes(checked: Checked, terms: readonly SumTerm[], net: Meaning, context: Context, line: LineOfSum | undefined): void {
+export function sayNotes(
+  checked: Checked,
+  terms: readonly SumTerm[],
+  net: Meaning,
+  context: Context,
+  line: LineOfSum | undefined,
+): void {
   const say = (grouped: Grouped): { kind: 'entry'; title: string; entry: string } => ({
     kind: 'entry',
     title: grouped.title,
@@ -49,17 +56,35 @@ function refersBack(terms: readonly SumTerm[], line: LineOfSum | undefined): boo
   if (line !== undefined && (REQUIREMENT.test(line.symbol) || REQUIREMENT.test(line.label))) return true;
   const levels = terms.filter((term) => term.coefficient > 0 && isLevel(term));
   if (levels.some(({ symbol }) => symbol !== undefined && REQUIREMENT.test(symbol))) return true;
-  const hasRatio = terms.some(({ coefficient, type: { meaning } }) => coefficient > 0 && meaning !== undefined && near(meaning.w, 1) && near(meaning.u, -1));
+  const hasRatio = terms.some(
+    ({ coefficient, type: { meaning } }) =>
+      coefficient > 0 && meaning !== undefined && near(meaning.w, 1) && near(meaning.u, -1),
+  );
   if (hasRatio && levels.length > 0) return true;
   const gains = terms.filter(({ kind, type }) => kind === 'gain' && isDimensionless(type.dimension));
   const losses = terms.filter(({ kind }) => kind === 'loss');
-  return gains.length > 0 && gains.every(({ coefficient }) => coefficient < 0) && losses.every(({ coefficient }) => coefficient > 0);
+  return (
+    gains.length > 0 &&
+    gains.every(({ coefficient }) => coefficient < 0) &&
+    losses.every(({ coefficient }) => coefficient > 0)
+  );
 }
 
-function sayLossAdded(checked: Checked, terms: readonly SumTerm[], net: Meaning, context: Context, line: LineOfSum | undefined, say: Say): void {
+function sayLossAdded(
+  checked: Checked,
+  terms: readonly SumTerm[],
+  net: Meaning,
+  context: Context,
+  line: LineOfSum | undefined,
+  say: Say,
+): void {
   const isLevelSum = near(net.w + net.u + net.l, 1);
   const isGain =
-    near(net.w, 0) && near(net.u, 0) && near(net.l, 0) && checked.type.form === 'decibel' && isDimensionless(checked.type.dimension) &&
+    near(net.w, 0) &&
+    near(net.u, 0) &&
+    near(net.l, 0) &&
+    checked.type.form === 'decibel' &&
+    isDimensionless(checked.type.dimension) &&
     terms.some(({ kind, coefficient }) => kind === 'gain' && coefficient > 0);
   if (!(isLevelSum || isGain) || line?.kind === 'loss' || refersBack(terms, line)) return;
   for (const term of terms) {
@@ -81,10 +106,18 @@ function sayFigures(checked: Checked, terms: readonly SumTerm[], net: Meaning, c
     context.say('nf-plus-loss', checked.tree, {
       facts: { figure: figure.text, loss: loss.text },
       repairs: [
-        say(withReplacedTerms(terms, [figure, loss], `cascade_nf(passive_nf(${loss.text}, T_0), -${asFactor(loss.tree, loss.text)}, ${figure.text})`)),
+        say(
+          withReplacedTerms(
+            terms,
+            [figure, loss],
+            `cascade_nf(passive_nf(${loss.text}, T_0), -${asFactor(loss.tree, loss.text)}, ${figure.text})`,
+          ),
+        ),
       ],
     });
-  const wanted = terms.find((term) => term.coefficient > 0 && isLevel(term) && term.isDeclared && term.side === 'wanted');
+  const wanted = terms.find(
+    (term) => term.coefficient > 0 && isLevel(term) && term.isDeclared && term.side === 'wanted',
+  );
   const hasNoise = terms.some((term) => term.coefficient > 0 && isLevel(term) && term !== wanted);
   if (wanted !== undefined && !hasNoise)
     context.say('figure-on-wanted', figure.tree, {

@@ -147,7 +147,10 @@ function compileSum(terms: readonly PlanTerm[], constant: number, figures: Figur
       return () => ka * (figures.values[a] as number) + kb * (figures.values[b] as number) + constant;
     if (slots.length === 3)
       return () =>
-        ka * (figures.values[a] as number) + kb * (figures.values[b] as number) + kc * (figures.values[c] as number) + constant;
+        ka * (figures.values[a] as number) +
+        kb * (figures.values[b] as number) +
+        kc * (figures.values[c] as number) +
+        constant;
   }
   const coefficients = terms.map(({ coefficient }) => coefficient);
   const compiled = terms.map(({ plan }) => compilePlan(plan, figures));

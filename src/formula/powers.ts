@@ -1,6 +1,12 @@
 /** Powers: xⁿ of linear quantities, and the idiom 10^(x/10), which is the linear value of decibels. */
 import {
-  combineMeanings, isDimensionless, NEUTRAL, NO_DIMENSION, raiseDimension, UNSAID, type Dimension,
+  combineMeanings,
+  isDimensionless,
+  NEUTRAL,
+  NO_DIMENSION,
+  raiseDimension,
+  UNSAID,
+  type Dimension,
 } from '../quantity';
 import type { Check } from './check';
 import { broken, type Context } from './context';
@@ -20,24 +26,36 @@ export function checkPower(tree: BinaryTree, context: Context, check: Check): Ch
   if (exponent.type.form === 'decibel') return powerOfTen(tree, base, { ...exponent, type: exponent.type }, context);
   if (base.type.form === 'decibel' || base.type.form === 'rate')
     return context.stop('decibels-multiplied', tree, {
-      facts: { what: `${context.textOf(base.tree)} is in decibels and is raised to a power; decibels are multiplied where powers are raised` },
+      facts: {
+        what: `${context.textOf(base.tree)} is in decibels and is raised to a power; decibels are multiplied where powers are raised`,
+      },
       repairs:
-        base.type.form === 'decibel' ? [context.rewrite(tree, `lin(${context.textOf(base.tree)}) ^ ${context.textOf(exponent.tree)}`)] : [],
+        base.type.form === 'decibel'
+          ? [context.rewrite(tree, `lin(${context.textOf(base.tree)}) ^ ${context.textOf(exponent.tree)}`)]
+          : [],
     });
   if (base.constant === 10 && tree.right.type === 'literal' && tree.right.unit !== null)
     return context.stop('unit-mismatch', exponent.tree, {
-      facts: { what: `The exponent ${context.textOf(exponent.tree)}`, found: describeType(exponent.type), declared: 'a plain number' },
-      repairs: [context.rewrite(tree, `1e${context.textOf(exponent.tree)}`)],
-    });
-  if (base.type.form !== 'linear' || exponent.type.form !== 'linear' || !isDimensionless(exponent.type.dimension))
-    return context.stop(exponent.type.form === 'linear' && base.type.form === 'linear' ? 'unit-mismatch' : 'wrong-arguments', exponent.tree, {
       facts: {
         what: `The exponent ${context.textOf(exponent.tree)}`,
         found: describeType(exponent.type),
         declared: 'a plain number',
       },
-      repairs: [],
+      repairs: [context.rewrite(tree, `1e${context.textOf(exponent.tree)}`)],
     });
+  if (base.type.form !== 'linear' || exponent.type.form !== 'linear' || !isDimensionless(exponent.type.dimension))
+    return context.stop(
+      exponent.type.form === 'linear' && base.type.form === 'linear' ? 'unit-mismatch' : 'wrong-arguments',
+      exponent.tree,
+      {
+        facts: {
+          what: `The exponent ${context.textOf(exponent.tree)}`,
+          found: describeType(exponent.type),
+          declared: 'a plain number',
+        },
+        repairs: [],
+      },
+    );
   return raise(tree, { ...base, type: base.type }, exponent, context);
 }
 
@@ -55,7 +73,13 @@ function raise(tree: BinaryTree, base: Checked & { type: LinearType }, exponent:
         },
         repairs: [],
       });
-    const type: LinearType = { form: 'linear', dimension: NO_DIMENSION, degree: 0, sort: 'pure', meaning: base.constant === undefined ? undefined : UNSAID };
+    const type: LinearType = {
+      form: 'linear',
+      dimension: NO_DIMENSION,
+      degree: 0,
+      sort: 'pure',
+      meaning: base.constant === undefined ? undefined : UNSAID,
+    };
     return { tree, type, plan, parts };
   }
   const type: LinearType = {
@@ -73,7 +97,12 @@ function raise(tree: BinaryTree, base: Checked & { type: LinearType }, exponent:
  * 10^(X/10) is lin(X), and 10^(X/20) its root: with E = X/10 the power 10^E is q_E^10, whatever sum X is.
  * Only decibels divided by 10 or 20 (or times 0.1 or 0.05) are taken; anything else is a mistake.
  */
-function powerOfTen(tree: BinaryTree, base: Checked, exponent: Checked & { type: DecibelType }, context: Context): Checked {
+function powerOfTen(
+  tree: BinaryTree,
+  base: Checked,
+  exponent: Checked & { type: DecibelType },
+  context: Context,
+): Checked {
   const { type } = exponent;
   const text = context.textOf(exponent.tree);
   const dimension = raiseDimension(type.dimension, 10);
@@ -83,7 +112,9 @@ function powerOfTen(tree: BinaryTree, base: Checked, exponent: Checked & { type:
   if (base.constant !== 10 || !(isTenth || isPath)) {
     return context.stop('decibels-multiplied', tree, {
       facts: { what: `${text} is in decibels and stands in an exponent` },
-      repairs: [context.rewrite(tree, base.constant === 10 ? `lin(${text})` : `${context.textOf(base.tree)} ^ lin(${text})`)],
+      repairs: [
+        context.rewrite(tree, base.constant === 10 ? `lin(${text})` : `${context.textOf(base.tree)} ^ lin(${text})`),
+      ],
     });
   }
   // The sum counts once, whether it was divided by 10 or by 20.
@@ -103,7 +134,13 @@ function powerOfTen(tree: BinaryTree, base: Checked, exponent: Checked & { type:
     noiseTemperature: type.noiseTemperature,
     unitHint: termsOf(exponent, text).find(({ type: { unitHint } }) => unitHint !== undefined)?.type.unitHint,
   };
-  return { tree, type: result, plan: { op: 'linear', of: scalePlan(shiftPlan(exponent.plan, type.offsetDb), 10) }, reference: 10 ** type.offsetDb, parts: [exponent] };
+  return {
+    tree,
+    type: result,
+    plan: { op: 'linear', of: scalePlan(shiftPlan(exponent.plan, type.offsetDb), 10) },
+    reference: 10 ** type.offsetDb,
+    parts: [exponent],
+  };
 }
 
 /** Exponents that rounding has moved off whole and half numbers, put back. */

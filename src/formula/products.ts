@@ -3,20 +3,35 @@
  * 20·log10(x), which are decibels of x and of x².
  */
 import {
-  AREA, combineDimensions, combineMeanings, ENTROPY, FREQUENCY, isDimensionless, isRootPower, LENGTH, NEUTRAL, NO_DIMENSION,
-  POWER_DENSITY, raiseDimension, sameDimension, sameMeaning, TEMPERATURE, UNSAID, type Dimension,
+  AREA,
+  combineDimensions,
+  combineMeanings,
+  ENTROPY,
+  FREQUENCY,
+  isDimensionless,
+  isRootPower,
+  LENGTH,
+  NEUTRAL,
+  NO_DIMENSION,
+  POWER_DENSITY,
+  sameDimension,
+  sameMeaning,
+  TEMPERATURE,
+  UNSAID,
+  type Dimension,
 } from '../quantity';
 import type { Check } from './check';
 import { asFactor, broken, type Context } from './context';
-import { decibelsOf, describeType, isFieldLike, squared, termsOf } from './forms';
-import { scalePlan, shiftPlan, type Plan } from './plan';
+import { describeType, termsOf } from './forms';
+import { shiftPlan, type Plan } from './plan';
+import { checkLogarithmIdiom } from './logarithms';
 import { decibelSum, scaleTerms } from './sums';
 import type { BinaryTree, Tree } from './tree';
 import type { Checked, DecibelType, LinearType, NumberSort, Origin } from './types';
 
 /** Checks `a * b`. */
 export function checkProduct(tree: BinaryTree, context: Context, check: Check): Checked {
-  const idiom = logarithmIdiom(tree, context, check);
+  const idiom = checkLogarithmIdiom(tree, context, check);
   if (idiom !== undefined) return idiom;
   const left = check(tree.left, context);
   const right = check(tree.right, context);
@@ -48,7 +63,12 @@ export function checkQuotient(tree: BinaryTree, context: Context, check: Check):
       parts: [left, right],
     };
   if (left.type.form === 'rate' && right.type.form === 'linear' && isDimensionless(right.type.dimension))
-    return { tree, type: left.type, plan: { op: 'quotient', left: left.plan, right: right.plan }, parts: [left, right] };
+    return {
+      tree,
+      type: left.type,
+      plan: { op: 'quotient', left: left.plan, right: right.plan },
+      parts: [left, right],
+    };
   return refuse(tree, left, right, context);
 }
 
@@ -71,19 +91,24 @@ function multiplyLinear(tree: BinaryTree, left: Linear, right: Linear, exponent:
       left.type.meaning === undefined || right.type.meaning === undefined
         ? undefined
         : combineMeanings(left.type.meaning, right.type.meaning, exponent),
-    unitHint: [left.type, right.type].find((part) => sameDimension(part.dimension, dimension) && part.unitHint !== undefined)?.unitHint,
+    unitHint: [left.type, right.type].find(
+      (part) => sameDimension(part.dimension, dimension) && part.unitHint !== undefined,
+    )?.unitHint,
     bandwidth: exponent === 1 ? bandwidthOfProduct(left, right, context) : undefined,
     noiseTemperature: exponent === 1 ? temperatureOfProduct(left, right, context) : undefined,
   };
   const constant =
-    left.constant === undefined || right.constant === undefined ? undefined : left.constant * right.constant ** exponent;
+    left.constant === undefined || right.constant === undefined
+      ? undefined
+      : left.constant * right.constant ** exponent;
   const plan: Plan = { op: exponent === 1 ? 'product' : 'quotient', left: left.plan, right: right.plan };
   return { tree, type, plan, constant, parts: [left, right] };
 }
 
 /** `1 mW * 10^(P/10)`, with P in dBm, as textbooks write it: the power itself, for P carries its reference already. */
 function timesItsReference(literal: Linear, power: Linear): Checked | undefined {
-  if (literal.tree.type !== 'literal' || power.reference === undefined || literal.plan.op !== 'constant') return undefined;
+  if (literal.tree.type !== 'literal' || power.reference === undefined || literal.plan.op !== 'constant')
+    return undefined;
   const isSame = sameDimension(literal.type.dimension, power.type.dimension) && !isDimensionless(power.type.dimension);
   return isSame && Math.abs(literal.plan.value / power.reference - 1) < 1e-9 ? power : undefined;
 }
@@ -108,15 +133,24 @@ const DENSITIES = [POWER_DENSITY, ENTROPY];
 
 /** The bandwidth that a linear density has been multiplied by. */
 function bandwidthOfProduct(left: Linear, right: Linear, context: Context): Origin | undefined {
-  for (const [width, density] of [[left, right], [right, left]] as const) {
-    if (sameDimension(width.type.dimension, FREQUENCY) && DENSITIES.some((known) => sameDimension(known, density.type.dimension)))
+  for (const [width, density] of [
+    [left, right],
+    [right, left],
+  ] as const) {
+    if (
+      sameDimension(width.type.dimension, FREQUENCY) &&
+      DENSITIES.some((known) => sameDimension(known, density.type.dimension))
+    )
       return originOf(width, context);
   }
   return left.type.bandwidth ?? right.type.bandwidth;
 }
 
 function temperatureOfProduct(left: Linear, right: Linear, context: Context): Origin | undefined {
-  for (const [temperature, boltzmann] of [[left, right], [right, left]] as const) {
+  for (const [temperature, boltzmann] of [
+    [left, right],
+    [right, left],
+  ] as const) {
     const isBoltzmann = boltzmann.tree.type === 'symbol' && boltzmann.tree.name === 'k_B';
     if (isBoltzmann && sameDimension(temperature.type.dimension, TEMPERATURE)) return originOf(temperature, context);
   }
@@ -129,7 +163,13 @@ export function originOf(part: { readonly tree: Tree; readonly plan: Plan }, con
 }
 
 /** number × decibel: a power of the quantity; figures and exponents scale. */
-function multiplyDecibel(tree: BinaryTree, factor: Linear, decibel: Decibel, divide: boolean, context: Context): Checked {
+function multiplyDecibel(
+  tree: BinaryTree,
+  factor: Linear,
+  decibel: Decibel,
+  divide: boolean,
+  context: Context,
+): Checked {
   if (!isDimensionless(factor.type.dimension)) {
     if (divide && sameDimension(factor.type.dimension, LENGTH) && isDimensionless(decibel.type.dimension))
       return {
@@ -143,8 +183,14 @@ function multiplyDecibel(tree: BinaryTree, factor: Linear, decibel: Decibel, div
   if (factor.constant !== undefined) {
     const by = divide ? 1 / factor.constant : factor.constant;
     if (!Number.isFinite(by))
-      return context.stop('not-finite', tree, { facts: { what: context.textOf(tree), because: 'a division by zero' }, repairs: [] });
-    return { ...decibelSum(tree, scaleTerms(termsOf(decibel, context.textOf(decibel.tree)), by), [factor, decibel]), ...(by > 0 ? kept(decibel) : {}) };
+      return context.stop('not-finite', tree, {
+        facts: { what: context.textOf(tree), because: 'a division by zero' },
+        repairs: [],
+      });
+    return {
+      ...decibelSum(tree, scaleTerms(termsOf(decibel, context.textOf(decibel.tree)), by), [factor, decibel]),
+      ...(by > 0 ? kept(decibel) : {}),
+    };
   }
   const neutral = decibel.type.meaning !== undefined && sameMeaning(decibel.type.meaning, NEUTRAL);
   if (!isDimensionless(decibel.type.dimension))
@@ -152,7 +198,12 @@ function multiplyDecibel(tree: BinaryTree, factor: Linear, decibel: Decibel, div
       facts: {
         what: `${context.textOf(decibel.tree)} is a level of ${describeType(decibel.type)} and can be multiplied only by a bare number, since its dimension is raised to it`,
       },
-      repairs: [context.rewrite(tree, `${asFactor(factor.tree, context.textOf(factor.tree))} ${divide ? '/' : '*'} lin(${context.textOf(decibel.tree)})`)],
+      repairs: [
+        context.rewrite(
+          tree,
+          `${asFactor(factor.tree, context.textOf(factor.tree))} ${divide ? '/' : '*'} lin(${context.textOf(decibel.tree)})`,
+        ),
+      ],
     });
   const full = shiftPlan(decibel.plan, decibel.type.offsetDb);
   const plan: Plan = divide
@@ -170,15 +221,25 @@ function multiplyDecibel(tree: BinaryTree, factor: Linear, decibel: Decibel, div
 }
 
 /** A multiple of a loss is a loss. */
-const kept = (decibel: Decibel): Pick<Checked, 'kind' | 'isDeclared'> => ({ kind: decibel.kind, isDeclared: decibel.isDeclared });
+const kept = (decibel: Decibel): Pick<Checked, 'kind' | 'isDeclared'> => ({
+  kind: decibel.kind,
+  isDeclared: decibel.isDeclared,
+});
 
 function multiplyRate(tree: BinaryTree, factor: Linear, rate: Checked, context: Context): Checked {
   if (rate.type.form !== 'rate') return broken(tree);
   if (isDimensionless(factor.type.dimension))
-    return { tree, type: rate.type, plan: { op: 'product', left: factor.plan, right: rate.plan }, parts: [factor, rate] };
+    return {
+      tree,
+      type: rate.type,
+      plan: { op: 'product', left: factor.plan, right: rate.plan },
+      parts: [factor, rate],
+    };
   if (!sameDimension(factor.type.dimension, LENGTH)) return refuse(tree, rate, factor, context);
   const lengths: Plan =
-    rate.type.lengthM === 1 ? factor.plan : { op: 'quotient', left: factor.plan, right: { op: 'constant', value: rate.type.lengthM } };
+    rate.type.lengthM === 1
+      ? factor.plan
+      : { op: 'quotient', left: factor.plan, right: { op: 'constant', value: rate.type.lengthM } };
   return {
     tree,
     type: { form: 'decibel', dimension: NO_DIMENSION, offsetDb: 0, scale: 1, meaning: NEUTRAL },
@@ -195,14 +256,19 @@ function refuse(tree: BinaryTree, left: Checked, right: Checked, context: Contex
   if (rate !== undefined) {
     const length = context.lengthTerm();
     return context.stop('rate-without-length', tree, {
-      facts: { rate: context.textOf(rate.tree), where: `in a ${tree.operator === '*' ? 'product' : 'quotient'} with ${describeType(rate === left ? right.type : left.type)}` },
+      facts: {
+        rate: context.textOf(rate.tree),
+        where: `in a ${tree.operator === '*' ? 'product' : 'quotient'} with ${describeType(rate === left ? right.type : left.type)}`,
+      },
       repairs: length === undefined ? [] : [context.rewrite(tree, `${context.textOf(rate.tree)} * ${length}`)],
     });
   }
   const odd = [left, right].find(({ type }) => type.form === 'truth' || type.form === 'text');
   if (odd !== undefined)
     return context.stop('wrong-arguments', odd.tree, {
-      facts: { what: `${context.textOf(odd.tree)} is ${describeType(odd.type)} and cannot be ${tree.operator === '*' ? 'multiplied' : 'divided'}` },
+      facts: {
+        what: `${context.textOf(odd.tree)} is ${describeType(odd.type)} and cannot be ${tree.operator === '*' ? 'multiplied' : 'divided'}`,
+      },
       repairs: [],
     });
   const both = left.type.form === 'decibel' && right.type.form === 'decibel';
@@ -226,93 +292,3 @@ function refuse(tree: BinaryTree, left: Checked, right: Checked, context: Contex
 /** The tree itself when it is the whole entry, so that a repair needs no brackets. */
 const wholeOf = (context: Context, tree: Tree): Tree | undefined =>
   context.textOf(tree).length === context.entry.trim().length ? tree : undefined;
-
-/** x/(1 u) inside a logarithm: the type of decibels of x over u, as ISO 80000-1 writes levels. */
-export function overWrittenReference(argument: Checked, size: number): DecibelType | undefined {
-  const { tree, type, parts } = argument;
-  const [above, below] = parts;
-  if (tree.type !== 'binary' || tree.operator !== '/' || above?.type.form !== 'linear' || below?.tree.type !== 'literal') return undefined;
-  if (type.form !== 'linear' || !isDimensionless(type.dimension) || below.tree.figure !== 1 || below.plan.op !== 'constant') return undefined;
-  const field = isFieldLike(above.type);
-  if (isDimensionless(above.type.dimension) || (size === 10 && field)) return undefined;
-  // 20 log10 of a quantity that is no field stands for its square.
-  const dimension = size === 20 ? raiseDimension(above.type.dimension, 2) : above.type.dimension;
-  return {
-    form: 'decibel',
-    dimension,
-    offsetDb: size * Math.log10(below.plan.value),
-    scale: 1,
-    meaning: size === 20 ? squared(above.type.meaning) : above.type.meaning,
-    bandwidth: above.type.bandwidth,
-    noiseTemperature: above.type.noiseTemperature,
-  };
-}
-
-/** A literal number with its sign, or undefined. */
-function literalFactor(tree: Tree): number | undefined {
-  if (tree.type === 'literal' && tree.unit === null) return tree.figure;
-  if (tree.type === 'negation') {
-    const operand = literalFactor(tree.operand);
-    return operand === undefined ? undefined : -operand;
-  }
-  if (tree.type === 'binary' && tree.operator === '*') {
-    const left = literalFactor(tree.left);
-    const right = literalFactor(tree.right);
-    return left === undefined || right === undefined ? undefined : left * right;
-  }
-  return undefined;
-}
-
-const isLog10 = (tree: Tree): tree is Tree & { type: 'call' } =>
-  tree.type === 'call' && tree.name === 'log10' && tree.parameters.length === 1;
-
-/** 10*log10(x) and 20*log10(x), in either order and with either sign; undefined when the tree is no such thing. */
-function logarithmIdiom(tree: BinaryTree, context: Context, check: Check): Checked | undefined {
-  const [factorTree, log] = isLog10(tree.right) ? [tree.left, tree.right] : [tree.right, tree.left];
-  if (!isLog10(log)) return undefined;
-  const factor = literalFactor(factorTree);
-  const argumentTree = log.parameters[0];
-  if (factor === undefined || argumentTree === undefined) return undefined;
-  const size = Math.abs(factor);
-  if (size !== 10 && size !== 20) return undefined;
-  const argument = check(argumentTree, context);
-  const text = context.textOf(argumentTree);
-  if (argument.type.form === 'decibel')
-    return context.stop('decibels-multiplied', tree, {
-      facts: { what: `${text} is in decibels already, and its logarithm is taken` },
-      repairs: [context.rewrite(tree, asFactor(argumentTree, text))],
-    });
-  if (argument.type.form !== 'linear') return argument.type.form === 'broken' ? broken(tree) : undefined;
-  const { type } = argument;
-  if (size === 10 && isFieldLike(type)) {
-    if (!isDimensionless(type.dimension))
-      return context.stop('log-of-dimension', tree, {
-        facts: {
-          function: '10*log10, which is the decibel of a power,',
-          argument: text,
-          found: `${describeType(type)}, a voltage, current or field`,
-        },
-        repairs: [context.rewrite(tree, `db(${text})`)],
-      });
-    context.say('field-ratio-in-power-log', tree, {
-      facts: { what: context.textOf(tree) },
-      repairs: [context.rewrite(tree, `${factor < 0 ? '-' : ''}db(${text})`)],
-    });
-  }
-  const decibels: Plan = { op: 'decibels', of: argument.plan, zeroIsNoPower: false };
-  const isHalf = size === 10;
-  const result = isHalf && !isFieldLike(type)
-    ? decibelsOf({ type, plan: argument.plan }, false)
-    : {
-        type: {
-          form: 'decibel' as const,
-          dimension: isHalf ? NO_DIMENSION : raiseDimension(type.dimension, 2),
-          offsetDb: 0,
-          scale: 1,
-          meaning: isHalf ? type.meaning : squared(type.meaning),
-        },
-        plan: isHalf ? decibels : scalePlan(decibels, 2),
-      };
-  const decibel: Checked = { tree, ...result, overReference: overWrittenReference(argument, size), parts: [argument] };
-  return factor < 0 ? decibelSum(tree, scaleTerms(termsOf(decibel, context.textOf(tree)), -1), [argument]) : decibel;
-}

@@ -35,7 +35,12 @@ const pieceOf = ({ coefficient, text, tree }: SumTerm): { coefficient: number; t
 });
 
 /** Puts some terms of a sum together in a call; the call stands where the first of them stood. */
-function grouped(terms: readonly SumTerm[], chosen: readonly SumTerm[], call: string, sign: number): Grouped | undefined {
+function grouped(
+  terms: readonly SumTerm[],
+  chosen: readonly SumTerm[],
+  call: string,
+  sign: number,
+): Grouped | undefined {
   const [first] = chosen;
   if (first === undefined) return undefined;
   const rest = terms.filter((term) => !chosen.includes(term)).map(pieceOf);
@@ -46,7 +51,10 @@ function grouped(terms: readonly SumTerm[], chosen: readonly SumTerm[], call: st
 
 /** Levels in a power sum (or in phase), as many times as their coefficients say; undefined for broken multiples. */
 export function groupedAsPowers(
-  terms: readonly SumTerm[], levels: readonly SumTerm[], name: 'powersum' | 'fieldsum', context: Context,
+  terms: readonly SumTerm[],
+  levels: readonly SumTerm[],
+  name: 'powersum' | 'fieldsum',
+  context: Context,
 ): Grouped | undefined {
   const texts: string[] = [];
   // Of levels and densities the densities have the more seconds; they come in a bandwidth first.
@@ -65,18 +73,29 @@ export function groupedAsPowers(
 /** Ratios combined by ratiosum. */
 export function groupedAsRatios(terms: readonly SumTerm[], ratios: readonly SumTerm[]): Grouped | undefined {
   if (ratios.some(({ coefficient }) => !near(Math.abs(coefficient), 1))) return undefined;
-  return grouped(terms, ratios, `ratiosum(${ratios.map(({ text }) => text).join(', ')})`, Math.sign(ratios[0]?.coefficient ?? 1));
+  return grouped(
+    terms,
+    ratios,
+    `ratiosum(${ratios.map(({ text }) => text).join(', ')})`,
+    Math.sign(ratios[0]?.coefficient ?? 1),
+  );
 }
 
 /** Noise figures as a cascade: the gain ahead of each later stage is the one named like its predecessor, else the first gain. */
-export function cascadeOfFigures(terms: readonly SumTerm[], figures: readonly SumTerm[], context: Context): Grouped | undefined {
-  const gains = context.allLines().filter(
-    ({ kind, unit, symbol, label, isDeclared }) =>
-      kind === 'gain' &&
-      unit.form === 'decibel' &&
-      isDimensionless(unit.dimension) &&
-      (isDeclared || unit.defaultKind === 'gain' || /^G/.test(symbol) || /\bgain\b/i.test(label)),
-  );
+export function cascadeOfFigures(
+  terms: readonly SumTerm[],
+  figures: readonly SumTerm[],
+  context: Context,
+): Grouped | undefined {
+  const gains = context
+    .allLines()
+    .filter(
+      ({ kind, unit, symbol, label, isDeclared }) =>
+        kind === 'gain' &&
+        unit.form === 'decibel' &&
+        isDimensionless(unit.dimension) &&
+        (isDeclared || unit.defaultKind === 'gain' || /^G/.test(symbol) || /\bgain\b/i.test(label)),
+    );
   const gainAfter = (figure: SumTerm): string | undefined => {
     const suffix = (figure.symbol ?? '').replace(/^NF_?/, '');
     const named = gains.find(({ symbol }) => suffix !== '' && symbol.replace(/^G_?/, '') === suffix);
@@ -95,7 +114,10 @@ export function cascadeOfFigures(terms: readonly SumTerm[], figures: readonly Su
 }
 
 /** The sum with the sign of one term turned, the first for which `isRight` holds and the dimension stays. */
-export function withFlippedTerm(terms: readonly SumTerm[], isRight: (changed: readonly SumTerm[]) => boolean): Grouped | undefined {
+export function withFlippedTerm(
+  terms: readonly SumTerm[],
+  isRight: (changed: readonly SumTerm[]) => boolean,
+): Grouped | undefined {
   for (const term of [...terms].reverse()) {
     if (!isDimensionless(term.type.dimension)) continue;
     const changed = terms.map((other) => (other === term ? { ...other, coefficient: -other.coefficient } : other));
@@ -114,11 +136,18 @@ export function withoutTerm(terms: readonly SumTerm[], left: SumTerm): Grouped {
 
 /** The sum with the sign of one term turned. */
 export function withTurnedTerm(terms: readonly SumTerm[], turned: SumTerm): Grouped {
-  const text = writeSum(terms.map((term) => pieceOf(term === turned ? { ...term, coefficient: -term.coefficient } : term)));
+  const text = writeSum(
+    terms.map((term) => pieceOf(term === turned ? { ...term, coefficient: -term.coefficient } : term)),
+  );
   return { text, title: text };
 }
 
 /** The sum with some terms replaced by one text. */
-export function withReplacedTerms(terms: readonly SumTerm[], replaced: readonly SumTerm[], text: string, sign = 1): Grouped {
+export function withReplacedTerms(
+  terms: readonly SumTerm[],
+  replaced: readonly SumTerm[],
+  text: string,
+  sign = 1,
+): Grouped {
   return grouped(terms, replaced, text, sign) ?? { text, title: text };
 }

@@ -15,11 +15,23 @@ export const ENTRY_LIMIT = 4096;
 export const DEPTH_LIMIT = 64;
 
 export type Token =
-  | { readonly type: 'literal'; readonly start: number; readonly end: number; readonly figure: number; readonly unit: Unit | null }
+  | {
+      readonly type: 'literal';
+      readonly start: number;
+      readonly end: number;
+      readonly figure: number;
+      readonly unit: Unit | null;
+    }
   | { readonly type: 'text'; readonly start: number; readonly end: number; readonly text: string }
   | { readonly type: 'symbol'; readonly start: number; readonly end: number; readonly name: string }
   /** A function's name with its opening bracket; `nameEnd` is where the name ends. */
-  | { readonly type: 'function'; readonly start: number; readonly end: number; readonly name: string; readonly nameEnd: number }
+  | {
+      readonly type: 'function';
+      readonly start: number;
+      readonly end: number;
+      readonly name: string;
+      readonly nameEnd: number;
+    }
   | { readonly type: 'sign'; readonly start: number; readonly end: number; readonly sign: string };
 
 export interface Scan {
@@ -38,7 +50,17 @@ const NAME = /\p{L}[\p{L}\p{M}\p{N}_]*(?:\.\p{L}[\p{L}\p{M}\p{N}_]*)*/uy;
 const TEXT = /"([^"]*)"/y;
 const SPACE = /\s/;
 const SIGNS = new Set(['+', '-', '*', '/', '^', '(', ')', ',', ';', '=', '<', '>']);
-const SIGN_SPELLINGS: Readonly<Record<string, string>> = { '−': '-', '–': '-', '×': '*', '·': '*', '⋅': '*', '÷': '/', '≤': '<=', '≥': '>=', '≠': '<>' };
+const SIGN_SPELLINGS: Readonly<Record<string, string>> = {
+  '−': '-',
+  '–': '-',
+  '×': '*',
+  '·': '*',
+  '⋅': '*',
+  '÷': '/',
+  '≤': '<=',
+  '≥': '>=',
+  '≠': '<>',
+};
 
 const fault = (start: number, end: number, sentence: string): { ok: false; fault: EntryFault } =>
   fail({ place: { start, end }, sentence });
@@ -46,7 +68,11 @@ const fault = (start: number, end: number, sentence: string): { ok: false; fault
 /** Splits an entry into tokens and its shape. Faults tell the place and what to do. */
 export function scanEntry(text: string): Result<Scan, EntryFault> {
   if (text.length > ENTRY_LIMIT)
-    return fault(0, text.length, `The entry has ${String(text.length)} characters; at most ${String(ENTRY_LIMIT)} are read. Split it over several lines.`);
+    return fault(
+      0,
+      text.length,
+      `The entry has ${String(text.length)} characters; at most ${String(ENTRY_LIMIT)} are read. Split it over several lines.`,
+    );
   const tokens: Token[] = [];
   let shape = '';
   let depth = 0;
@@ -106,7 +132,8 @@ export function scanEntry(text: string): Result<Scan, EntryFault> {
     if (sign === '=' && tokens.length === 0)
       return fault(0, 1, 'An entry begins with a quantity or a symbol; leave the = sign out.');
     if (sign === '(' && ++depth > DEPTH_LIMIT) return tooDeep(at);
-    if (sign === ')' && --depth < 0) return fault(at, end, 'This bracket closes nothing: an opening bracket is missing before it.');
+    if (sign === ')' && --depth < 0)
+      return fault(at, end, 'This bracket closes nothing: an opening bracket is missing before it.');
     if (sign === '-' && isPrefixPosition(tokens)) {
       const literal = signedLiteral(text, at, end);
       if (literal !== undefined) {
@@ -123,9 +150,14 @@ export function scanEntry(text: string): Result<Scan, EntryFault> {
   }
   const loose = tokens.findIndex((token, index) => token.type !== 'sign' && endsOperand(tokens[index - 1]));
   if (loose >= 0)
-    return fault(tokens[loose]?.start ?? 0, tokens[loose]?.end ?? 0, 'An operator such as +, − or * is missing before this.');
+    return fault(
+      tokens[loose]?.start ?? 0,
+      tokens[loose]?.end ?? 0,
+      'An operator such as +, − or * is missing before this.',
+    );
   if (depth > 0) return fault(text.length, text.length, 'A bracket is not closed.');
-  if (tokens.length === 0) return fault(0, text.length, 'The entry is empty: write a quantity such as 43 dBm, or an expression.');
+  if (tokens.length === 0)
+    return fault(0, text.length, 'The entry is empty: write a quantity such as 43 dBm, or an expression.');
   return ok({ tokens, shape });
 }
 
@@ -163,7 +195,8 @@ function scanLiteral(text: string, at: number, start: number, sign: 1 | -1): Res
   if (!Number.isFinite(figure)) return fault(at, end, 'The number is too large.');
   const unitAt = text[end] === ' ' || text[end] === '\u00a0' || text[end] === '\u202f' ? end + 1 : end;
   const found = matchUnit(text, unitAt);
-  if (found !== undefined) return ok({ type: 'literal', start, end: found.end, figure: sign * figure, unit: found.unit });
+  if (found !== undefined)
+    return ok({ type: 'literal', start, end: found.end, figure: sign * figure, unit: found.unit });
   NAME.lastIndex = unitAt;
   const word = NAME.exec(text)?.[0];
   if (word !== undefined) {
@@ -172,7 +205,10 @@ function scanLiteral(text: string, at: number, start: number, sign: 1 | -1): Res
     return fault(
       unitAt,
       end,
-      `“${word}” is no unit known here${nearest === undefined ? '' : `; is it ${nearest}`}? To multiply by a symbol write ${number} * ${word}.`.replace('here?', 'here.'),
+      `“${word}” is no unit known here${nearest === undefined ? '' : `; is it ${nearest}`}? To multiply by a symbol write ${number} * ${word}.`.replace(
+        'here?',
+        'here.',
+      ),
     );
   }
   return ok({ type: 'literal', start, end, figure: sign * figure, unit: null });
@@ -197,7 +233,11 @@ const PLAIN = new RegExp(`^(${PLAIN_NUMBER})(?: ?(\\S.*))?$`, 'u');
 export function readPlainQuantity(text: string): { figure: number; unit: Unit | null; digits: number } | undefined {
   const first = text.charCodeAt(0);
   if ((first >= 65 && first <= 90) || (first >= 97 && first <= 122)) return undefined;
-  const clean = text.trim().replace(/[\u00a0\u202f]/g, ' ').replace(/^[\u2212\u2013]/, '-').replace(/^([+-]) +/, '$1');
+  const clean = text
+    .trim()
+    .replace(/[\u00a0\u202f]/g, ' ')
+    .replace(/^[\u2212\u2013]/, '-')
+    .replace(/^([+-]) +/, '$1');
   const match = PLAIN.exec(clean);
   const number = (match?.[1] ?? '').replace(/[ '\u2019]/g, '').replace(',', '.');
   if (match === null || !/\d/.test(number)) return undefined;

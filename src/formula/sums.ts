@@ -5,8 +5,18 @@
 import { assert } from '../base';
 import type { Repair } from '../findings';
 import {
-  combineDimensions, combineMeanings, describeDimension, isDimensionless, NEUTRAL, NO_DIMENSION, POWER, POWER_DENSITY, FREQUENCY,
-  sameDimension, sameMeaning, UNSAID,
+  combineDimensions,
+  combineMeanings,
+  describeDimension,
+  isDimensionless,
+  NEUTRAL,
+  NO_DIMENSION,
+  POWER,
+  POWER_DENSITY,
+  FREQUENCY,
+  sameDimension,
+  sameMeaning,
+  UNSAID,
 } from '../quantity';
 import type { Check } from './check';
 import { asFactor, broken, type Context } from './context';
@@ -60,7 +70,10 @@ function addRates(tree: Tree, parts: readonly SignedPart[], context: Context): C
     const length = context.lengthTerm();
     return context.stop('rate-without-length', first.tree, {
       facts: { rate: context.textOf(first.tree), where: 'in a sum of decibels' },
-      repairs: length === undefined ? [] : [context.rewrite(first.tree, `${asFactor(first.tree, context.textOf(first.tree))} * ${length}`)],
+      repairs:
+        length === undefined
+          ? []
+          : [context.rewrite(first.tree, `${asFactor(first.tree, context.textOf(first.tree))} * ${length}`)],
     });
   }
   const { lengthM, unitHint } = first.type;
@@ -68,18 +81,29 @@ function addRates(tree: Tree, parts: readonly SignedPart[], context: Context): C
     coefficient: checked.type.form === 'rate' ? (sign * lengthM) / checked.type.lengthM : 0,
     plan: checked.plan,
   }));
-  return { tree, type: { form: 'rate', lengthM, unitHint }, plan: { op: 'sum', terms, constant: 0 }, parts: parts.map(({ checked }) => checked) };
+  return {
+    tree,
+    type: { form: 'rate', lengthM, unitHint },
+    plan: { op: 'sum', terms, constant: 0 },
+    parts: parts.map(({ checked }) => checked),
+  };
 }
 
 function addDecibels(tree: Tree, parts: readonly SignedPart[], context: Context): Checked {
-  const linear = parts.filter(({ checked }) => checked.type.form === 'linear' && !isDimensionless(checked.type.dimension));
+  const linear = parts.filter(
+    ({ checked }) => checked.type.form === 'linear' && !isDimensionless(checked.type.dimension),
+  );
   if (linear.length > 0) return mixedForms(linear, parts, tree, context);
   const terms = parts.flatMap(({ sign, checked }) =>
     checked.type.form === 'decibel'
       ? scaleTerms(termsOf(checked, context.textOf(checked.tree)), sign)
       : [numberTerm(checked, sign, context)],
   );
-  return decibelSum(tree, terms, parts.map(({ checked }) => checked));
+  return decibelSum(
+    tree,
+    terms,
+    parts.map(({ checked }) => checked),
+  );
 }
 
 /** A plain number in a decibel sum counts as decibels. Logarithms with other factors than 10 and 20 do so without remark. */
@@ -111,7 +135,10 @@ export function decibelSum(tree: Tree, terms: readonly SumTerm[], parts: readonl
     dimension = combineDimensions(dimension, type.dimension, coefficient);
     offsetDb += coefficient * type.offsetDb;
     scale = Math.max(scale, Math.abs(coefficient) * type.scale);
-    meaning = meaning === undefined || type.meaning === undefined ? undefined : combineMeanings(meaning, type.meaning, coefficient);
+    meaning =
+      meaning === undefined || type.meaning === undefined
+        ? undefined
+        : combineMeanings(meaning, type.meaning, coefficient);
   }
   const sameUnit = terms.find(({ coefficient, type }) => coefficient === 1 && sameDimension(type.dimension, dimension));
   const type: DecibelType = {
@@ -162,14 +189,19 @@ function onlyOrigin(terms: readonly SumTerm[], attribute: 'bandwidth' | 'noiseTe
 function bandwidthOfSum(terms: readonly SumTerm[], dimension: SumTerm['type']['dimension']): Origin | undefined {
   if (isDimensionless(dimension)) return bandwidthOfRatio(terms);
   if (!sameDimension(dimension, POWER)) return undefined;
-  const density = terms.some(({ coefficient, type }) => coefficient === 1 && sameDimension(type.dimension, POWER_DENSITY));
+  const density = terms.some(
+    ({ coefficient, type }) => coefficient === 1 && sameDimension(type.dimension, POWER_DENSITY),
+  );
   const widths = terms.filter(({ coefficient, type }) => coefficient === 1 && sameDimension(type.dimension, FREQUENCY));
   const [width] = widths;
   if (density && width !== undefined && widths.length === 1)
     return {
       key: JSON.stringify(width.plan) + String(width.type.offsetDb),
       text: width.text,
-      plan: { op: 'linear', of: { op: 'sum', terms: [{ coefficient: 1, plan: width.plan }], constant: width.type.offsetDb } },
+      plan: {
+        op: 'linear',
+        of: { op: 'sum', terms: [{ coefficient: 1, plan: width.plan }], constant: width.type.offsetDb },
+      },
     };
   return onlyOrigin(terms, 'bandwidth');
 }
@@ -233,14 +265,20 @@ function addLinear(tree: Tree, parts: readonly SignedPart[], context: Context): 
   const told = typed.filter(({ checked }) => checked.constant === undefined);
   const judged = told.length === 0 ? typed : told;
   const agree = judged.every(
-    ({ type }) => type.meaning !== undefined && first.type.meaning !== undefined && judged[0]?.type.meaning !== undefined && sameMeaning(type.meaning, judged[0].type.meaning),
+    ({ type }) =>
+      type.meaning !== undefined &&
+      first.type.meaning !== undefined &&
+      judged[0]?.type.meaning !== undefined &&
+      sameMeaning(type.meaning, judged[0].type.meaning),
   );
   const all = told.length === typed.length;
   const sorts = new Set(typed.map(({ type }) => type.sort));
   const type: LinearType = {
     form: 'linear',
     dimension: first.type.dimension,
-    degree: judged.every(({ type: { degree } }) => degree === judged[0]?.type.degree) ? (judged[0]?.type.degree ?? 0) : 0,
+    degree: judged.every(({ type: { degree } }) => degree === judged[0]?.type.degree)
+      ? (judged[0]?.type.degree ?? 0)
+      : 0,
     sort: sorts.has('ratio') ? 'ratio' : sorts.has('figure') ? 'figure' : 'pure',
     meaning: agree && (all || told.length === 0) ? judged[0]?.type.meaning : isNeutral(typed) ? NEUTRAL : undefined,
     unitHint: typed.find(({ type: { unitHint } }) => unitHint !== undefined)?.type.unitHint,
@@ -282,4 +320,3 @@ export function checkNegation(tree: NegationTree, context: Context, check: Check
       });
   }
 }
-

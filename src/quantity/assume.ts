@@ -4,14 +4,15 @@
  */
 import { POWER, POWER_DENSITY, isDimensionless, sameDimension } from './dimension';
 import type { QuantityKind, Side } from './kinds';
-import type { Unit } from './units';
+import type { Unit } from './unit';
 
 interface Assumption {
   readonly kind: QuantityKind;
   readonly side?: Side;
 }
 
-const SIGNAL_RATIO = /^(SNR|CNR|CIR|SIR|SINR|CINR|SNIR|SINAD|SNDR|CN|C_N|CN0|CN_0|C_N0|C_N_0|CI|C_I|EbN0|EbNo|Eb_N0|EbN_0|E_b_N_0|Eb_No|EsN0|EsNo|Es_N0|EsN_0|C_over_N|C_over_N0|C_over_I|S_N|S_over_N|Eb_over_N0|Es_over_N0)(_.*|\d*)$/i;
+const SIGNAL_RATIO =
+  /^(SNR|CNR|CIR|SIR|SINR|CINR|SNIR|SINAD|SNDR|CN|C_N|CN0|CN_0|C_N0|C_N_0|CI|C_I|EbN0|EbNo|Eb_N0|EbN_0|E_b_N_0|Eb_No|EsN0|EsNo|Es_N0|EsN_0|C_over_N|C_over_N0|C_over_I|S_N|S_over_N|Eb_over_N0|Es_over_N0)(_.*|\d*)$/i;
 const NOISE_FIGURE = /^NF(_.*|\d*)$/;
 const LOSS = /^(L|FSPL|FSL|ACLR|ACS|ACIR|A_rain|A_gas|A_atm)(_.*|\d*)$/;
 const GAIN = /^G(_.*|\d*)$/;
@@ -20,13 +21,15 @@ const UNWANTED = /^(N|I)(_.*|\d*)$/;
 const WANTED = /^(S|C)(_.*|\d*)$/;
 const MARGIN = /margin|headroom|reserve|backoff|back-off|degradation|improvement|rise|delta|difference/i;
 /** What a signal ratio's name goes on with when it is a difference of such ratios and no ratio itself. */
-const DIFFERENCE = /_(loss|gap|penalty|offset|allowance|step|change|correction|corr|impl|implementation|gain|deg)(_.*)?$/i;
+const DIFFERENCE =
+  /_(loss|gap|penalty|offset|allowance|step|change|correction|corr|impl|implementation|gain|deg)(_.*)?$/i;
 const INSIDE_ONE_SIDE = /^(I_N|I_over_N|INR|IoverN)(_.*|\d*)$/i;
 
 const LABEL_LOSS = /\b(loss|losses|attenuation|aclr|acs|rejection|isolation)\b/i;
 const LABEL_GAIN = /\bgain\b/i;
 const LABEL_NOISE_FIGURE = /\bnoise figure\b/i;
-const LABEL_SIGNAL_RATIO = /\b(snr|cnr|cir|sir|sinr|signal[- ]to[- ]|carrier[- ]to[- ]|c\/n0?|c\/i|s\/n|eb\/n0|es\/n0|eb\/no|c\/n₀|eb\/n₀|es\/n₀)/i;
+const LABEL_SIGNAL_RATIO =
+  /\b(snr|cnr|cir|sir|sinr|signal[- ]to[- ]|carrier[- ]to[- ]|c\/n0?|c\/i|s\/n|eb\/n0|es\/n0|eb\/no|c\/n₀|eb\/n₀|es\/n₀)/i;
 const LABEL_IMPAIRMENT = /\b(evm|error vector magnitude|spur|spurious)\b/i;
 const LABEL_UNWANTED = /\b(noise|interference|interferer|distortion)\b/i;
 const LABEL_WANTED = /\b(wanted|signal|carrier)\b/i;

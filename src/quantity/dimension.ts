@@ -69,8 +69,18 @@ export function isRootPower(dimension: Dimension): boolean {
 }
 
 const SUPERSCRIPT: Readonly<Record<string, string>> = {
-  '0': '⁰', '1': '¹', '2': '²', '3': '³', '4': '⁴', '5': '⁵', '6': '⁶', '7': '⁷', '8': '⁸', '9': '⁹',
-  '-': '⁻', '.': '·',
+  '0': '⁰',
+  '1': '¹',
+  '2': '²',
+  '3': '³',
+  '4': '⁴',
+  '5': '⁵',
+  '6': '⁶',
+  '7': '⁷',
+  '8': '⁸',
+  '9': '⁹',
+  '-': '⁻',
+  '.': '·',
 };
 
 const superscript = (n: number): string =>

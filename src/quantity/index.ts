@@ -4,6 +4,8 @@
  */
 export * from './kinds';
 export * from './dimension';
+export * from './unit';
+export { SI_PREFIXES, UNIT_WORDS } from './unit-table';
 export * from './units';
 export * from './meaning';
 export * from './assume';

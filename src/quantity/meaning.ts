@@ -65,16 +65,31 @@ export function sameMeaning(a: Meaning, b: Meaning): boolean {
   return near(a.w, b.w) && near(a.u, b.u) && near(a.f, b.f) && near(a.l, b.l);
 }
 
-const ALLOWED: readonly (readonly [number, number])[] = [[0, 0], [1, 0], [0, 1], [1, -1], [-1, 1], [0, -1], [-1, 0]];
+const ALLOWED: readonly (readonly [number, number])[] = [
+  [0, 0],
+  [1, 0],
+  [0, 1],
+  [1, -1],
+  [-1, 1],
+  [0, -1],
+  [-1, 0],
+];
 
 const isAllowed = (w: number, u: number): boolean => ALLOWED.some(([aw, au]) => near(w, aw) && near(u, au));
 
 /** The ways to give sides to the levels whose side is not said. Fractional nets are tried at both ends alone. */
 function resolutions({ w, u, l }: Meaning): (readonly [number, number])[] {
   const steps = Math.abs(l);
-  if (!near(steps, Math.round(steps))) return [[w + l, u], [w, u + l]];
+  if (!near(steps, Math.round(steps)))
+    return [
+      [w + l, u],
+      [w, u + l],
+    ];
   const sign = Math.sign(l);
-  return Array.from({ length: Math.round(steps) + 1 }, (_, wanted) => [w + sign * wanted, u + sign * (steps - wanted)] as const);
+  return Array.from(
+    { length: Math.round(steps) + 1 },
+    (_, wanted) => [w + sign * wanted, u + sign * (steps - wanted)] as const,
+  );
 }
 
 /** True when the net is one that budgets have, for some choice of the sides not said. */

@@ -3,7 +3,9 @@
  * the unit is free to take one. Exact values are for files and the command line; these texts are for reading.
  */
 import { describeDimension, isDimensionless, isRootPower, raiseDimension, type Dimension } from './dimension';
-import { findUnit, SI_PREFIXES, type DecibelUnit, type Unit } from './units';
+import type { DecibelUnit, Unit } from './unit';
+import { SI_PREFIXES } from './unit-table';
+import { findUnit } from './units';
 
 export interface WrittenFigure {
   readonly text: string;
@@ -29,11 +31,14 @@ export function writeFigure(value: number, unit: Unit, options: WritingOptions =
   const word = unit.word === '1' ? '' : unit.word;
   if (value === -Infinity) return { text: NO_POWER_TEXT, unit: '' };
   if (unit.form !== 'linear') return { text: withMinus(value.toFixed(options.digits ?? 2), options), unit: word };
-  if (options.isFitted === true && unit.form === 'linear' && unit.factor === 1 && unit.shift === 0 && word !== '') {
+  if (options.isFitted === true && unit.factor === 1 && unit.shift === 0 && word !== '') {
     const prefixed = withPrefix(value, word, options.digits);
     return { text: withMinus(prefixed.text, options), unit: prefixed.unit };
   }
-  const significant = Math.max(options.digits ?? 4, options.digits === undefined ? Math.min(options.typedDigits ?? 0, 15) : 0);
+  const significant = Math.max(
+    options.digits ?? 4,
+    options.digits === undefined ? Math.min(options.typedDigits ?? 0, 15) : 0,
+  );
   return { text: withMinus(writeSignificant(value, significant), options), unit: word };
 }
 
@@ -58,7 +63,9 @@ export function writeSignificant(value: number, significant = 4): string {
   if (size >= 1e-3 && size < 10 ** Math.max(6, significant)) return plainDecimal(rounded, significant);
   const exponent = Math.floor(Math.log10(size) / 3) * 3;
   const mantissa = Number((rounded / 10 ** exponent).toPrecision(significant));
-  const power = String(exponent).replace(/\d/g, (digit) => SUPERSCRIPT_DIGITS[Number(digit)] ?? digit).replace('-', '⁻');
+  const power = String(exponent)
+    .replace(/\d/g, (digit) => SUPERSCRIPT_DIGITS[Number(digit)] ?? digit)
+    .replace('-', '⁻');
   return `${plainDecimal(mantissa, significant)}×10${power}`;
 }
 
@@ -121,7 +128,9 @@ export function linearFigure(value: number, unit: Unit): WrittenFigure | undefin
   const linear = linearValue(value, unit);
   if (linear === undefined || !Number.isFinite(linear.value)) return undefined;
   if (linear.unit === '1') return { text: writeSignificant(linear.value), unit: '×' };
-  return linearBase(unit).prefixes ? withPrefix(linear.value, linear.unit) : { text: writeSignificant(linear.value), unit: linear.unit };
+  return linearBase(unit).prefixes
+    ? withPrefix(linear.value, linear.unit)
+    : { text: writeSignificant(linear.value), unit: linear.unit };
 }
 
 /** A value in a base unit with the SI prefix that leaves one to three digits before the point. */
@@ -131,6 +140,7 @@ export function withPrefix(value: number, baseWord: string, significant = 4): Wr
   const exponent = Math.floor(Math.log10(Math.abs(rounded)) / 3) * 3;
   const prefix = SI_PREFIXES.find(([, power]) => power === exponent);
   const word = prefix === undefined ? undefined : prefix[0] + baseWord;
-  if (prefix === undefined || word === undefined || findUnit(word) === undefined) return { text: writeSignificant(value, significant), unit: baseWord };
+  if (prefix === undefined || word === undefined || findUnit(word) === undefined)
+    return { text: writeSignificant(value, significant), unit: baseWord };
   return { text: writeSignificant(value / Number(`1e${String(prefix[1])}`), significant), unit: word };
 }

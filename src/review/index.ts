@@ -3,5 +3,6 @@
  * that stand beside results. Reads evaluations; changes nothing.
  */
 export * from './working';
+export type * from './working-types';
 export * from './recorded';
 export * from './cautions';

@@ -49,16 +49,23 @@ function baseline(lines: readonly HandLine[]): Baseline {
 }
 
 const figure = (value: number): HandLine => ({ inputs: [], run: () => value });
-const less = (input: number, by: number): HandLine => ({ inputs: [input], run: (values) => (values[input] as number) - by });
+const less = (input: number, by: number): HandLine => ({
+  inputs: [input],
+  run: (values) => (values[input] as number) - by,
+});
 
 /** As sheets.chain. */
 export function handChain(count: number): Baseline {
-  return baseline(Array.from({ length: count }, (_, index) => (index === 0 ? figure(10) : less(index - 1, (index % 10) / 100))));
+  return baseline(
+    Array.from({ length: count }, (_, index) => (index === 0 ? figure(10) : less(index - 1, (index % 10) / 100))),
+  );
 }
 
 /** As sheets.fanOut. */
 export function handFanOut(count: number): Baseline {
-  return baseline(Array.from({ length: count }, (_, index) => (index === 0 ? figure(10) : less(0, (index % 97) + 0.5))));
+  return baseline(
+    Array.from({ length: count }, (_, index) => (index === 0 ? figure(10) : less(0, (index % 97) + 0.5))),
+  );
 }
 
 /** As sheets.lattice, with the plain power sum. */
@@ -72,7 +79,8 @@ export function handLattice(rows: number, width: number): Baseline {
       const b = (row - 1) * width + ((column + 1) % width);
       return {
         inputs: [a, b],
-        run: (values: Float64Array) => 10 * Math.log10(10 ** ((values[a] as number) / 10) + 10 ** ((values[b] as number) / 10)) - 3,
+        run: (values: Float64Array) =>
+          10 * Math.log10(10 ** ((values[a] as number) / 10) + 10 ** ((values[b] as number) / 10)) - 3,
       };
     }),
   );

@@ -78,17 +78,50 @@ const settling: number[] = [];
 const rows = 100;
 const width = COUNT / rows;
 const results = [
-  measure({ name: 'chain', sheet: chain(COUNT), hand: handChain(COUNT), edited: 0, entries: ['11 dBm', '12 dBm'], figures: [11, 12] }),
-  measure({ name: 'fan-out', sheet: fanOut(COUNT), hand: handFanOut(COUNT), edited: 0, entries: ['11 dBm', '12 dBm'], figures: [11, 12] }),
-  measure({ name: 'lattice', sheet: lattice(rows, width), hand: handLattice(rows, width), edited: 0, entries: ['-90 dBm', '-91 dBm'], figures: [-90, -91] }),
-  measure({ name: 'ten of 10,000', sheet: tens(COUNT), hand: handTens(COUNT), edited: 5000, entries: ['11 dBm', '12 dBm'], figures: [11, 12] }),
+  measure({
+    name: 'chain',
+    sheet: chain(COUNT),
+    hand: handChain(COUNT),
+    edited: 0,
+    entries: ['11 dBm', '12 dBm'],
+    figures: [11, 12],
+  }),
+  measure({
+    name: 'fan-out',
+    sheet: fanOut(COUNT),
+    hand: handFanOut(COUNT),
+    edited: 0,
+    entries: ['11 dBm', '12 dBm'],
+    figures: [11, 12],
+  }),
+  measure({
+    name: 'lattice',
+    sheet: lattice(rows, width),
+    hand: handLattice(rows, width),
+    edited: 0,
+    entries: ['-90 dBm', '-91 dBm'],
+    figures: [-90, -91],
+  }),
+  measure({
+    name: 'ten of 10,000',
+    sheet: tens(COUNT),
+    hand: handTens(COUNT),
+    edited: 5000,
+    entries: ['11 dBm', '12 dBm'],
+    figures: [11, 12],
+  }),
 ];
 
 const sixty = budget();
 const evaluation = new Evaluation(sixty);
 let current = sixty;
 const sixtyEdit = time((round) => {
-  const change = { kind: 'set-line', lineId: 'l3', field: 'entry', value: round % 2 === 0 ? '15 dBm' : '16 dBm' } as const;
+  const change = {
+    kind: 'set-line',
+    lineId: 'l3',
+    field: 'entry',
+    value: round % 2 === 0 ? '15 dBm' : '16 dBm',
+  } as const;
   current = applyChange(current, change).worksheet;
   evaluation.edit(current, [change]);
 }, 200);

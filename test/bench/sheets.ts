@@ -20,7 +20,9 @@ const line = (index: number, symbol: string, entry: string, unit?: string): Line
 export function chain(count: number): Worksheet {
   return sheet(
     Array.from({ length: count }, (_, index) =>
-      index === 0 ? line(0, 'P_0', '10 dBm', 'dBm') : line(index, `P_${String(index)}`, `P_${String(index - 1)} - 0.0${String(index % 10)} dB`, 'dBm'),
+      index === 0
+        ? line(0, 'P_0', '10 dBm', 'dBm')
+        : line(index, `P_${String(index)}`, `P_${String(index - 1)} - 0.0${String(index % 10)} dB`, 'dBm'),
     ),
   );
 }
@@ -29,7 +31,9 @@ export function chain(count: number): Worksheet {
 export function fanOut(count: number): Worksheet {
   return sheet(
     Array.from({ length: count }, (_, index) =>
-      index === 0 ? line(0, 'P_0', '10 dBm', 'dBm') : line(index, `P_${String(index)}`, `P_0 - ${String(index % 97)}.5 dB`, 'dBm'),
+      index === 0
+        ? line(0, 'P_0', '10 dBm', 'dBm')
+        : line(index, `P_${String(index)}`, `P_0 - ${String(index % 97)}.5 dB`, 'dBm'),
     ),
   );
 }
@@ -41,7 +45,9 @@ export function lattice(rows: number, width: number): Worksheet {
       const row = Math.floor(index / width);
       const column = index % width;
       const above = (offset: number): string => `P_${String((row - 1) * width + ((column + offset) % width))}`;
-      return row === 0 ? line(index, `P_${String(index)}`, `-${String(100 + column)} dBm`, 'dBm') : line(index, `P_${String(index)}`, `powersum(${above(0)}, ${above(1)}) - 3 dB`, 'dBm');
+      return row === 0
+        ? line(index, `P_${String(index)}`, `-${String(100 + column)} dBm`, 'dBm')
+        : line(index, `P_${String(index)}`, `powersum(${above(0)}, ${above(1)}) - 3 dB`, 'dBm');
     }),
   );
 }
@@ -51,17 +57,34 @@ export function tens(count: number): Worksheet {
   return sheet(
     Array.from({ length: count }, (_, index) => {
       const first = index - (index % 10);
-      return index === first ? line(index, `P_${String(index)}`, `${String(index % 50)} dBm`, 'dBm') : line(index, `P_${String(index)}`, `P_${String(first)} - ${String(index % 10)} dB`, 'dBm');
+      return index === first
+        ? line(index, `P_${String(index)}`, `${String(index % 50)} dBm`, 'dBm')
+        : line(index, `P_${String(index)}`, `P_${String(first)} - ${String(index % 10)} dB`, 'dBm');
     }),
   );
 }
 
 const BUDGET: readonly (readonly [symbol: string, entry: string, unit?: string])[] = [
-  ['f', '868 MHz'], ['d', '12 km'], ['B', '125 kHz'], ['P_tx', '14 dBm', 'dBm'], ['L_feed', '1.1 dB'], ['G_tx', '2.15 dBi'],
-  ['EIRP', 'P_tx - L_feed + G_tx', 'dBm'], ['L_fs', 'free_space_loss(d, f)', 'dB'], ['L_fade', '8 dB'], ['G_rx', '5 dBi'],
-  ['P_rx', 'EIRP - L_fs - L_fade + G_rx', 'dBm'], ['NF', '6 dB'], ['N', 'thermal_noise(T_0, B) + NF', 'dBm'],
-  ['I_1', '-118 dBm', 'dBm'], ['I_2', '-121 dBm', 'dBm'], ['N_tot', 'powersum(N, I_1, I_2)', 'dBm'], ['SINR', 'P_rx - N_tot', 'dB'],
-  ['SINR_req', '3 dB'], ['M', 'SINR - SINR_req', 'dB'], ['CN0', 'P_rx - N + db(B)', 'dBHz'],
+  ['f', '868 MHz'],
+  ['d', '12 km'],
+  ['B', '125 kHz'],
+  ['P_tx', '14 dBm', 'dBm'],
+  ['L_feed', '1.1 dB'],
+  ['G_tx', '2.15 dBi'],
+  ['EIRP', 'P_tx - L_feed + G_tx', 'dBm'],
+  ['L_fs', 'free_space_loss(d, f)', 'dB'],
+  ['L_fade', '8 dB'],
+  ['G_rx', '5 dBi'],
+  ['P_rx', 'EIRP - L_fs - L_fade + G_rx', 'dBm'],
+  ['NF', '6 dB'],
+  ['N', 'thermal_noise(T_0, B) + NF', 'dBm'],
+  ['I_1', '-118 dBm', 'dBm'],
+  ['I_2', '-121 dBm', 'dBm'],
+  ['N_tot', 'powersum(N, I_1, I_2)', 'dBm'],
+  ['SINR', 'P_rx - N_tot', 'dB'],
+  ['SINR_req', '3 dB'],
+  ['M', 'SINR - SINR_req', 'dB'],
+  ['CN0', 'P_rx - N + db(B)', 'dBHz'],
 ];
 
 /** Three links of twenty lines: a budget of ordinary size. */
@@ -70,7 +93,15 @@ export function budget(): Worksheet {
   return sheet(
     links.flatMap((link, number) =>
       BUDGET.map(([symbol, entry, unit], index) =>
-        line(number * BUDGET.length + index, `${symbol}_${link}`, entry.replace(/\b(f|d|B|P_tx|L_feed|G_tx|EIRP|L_fs|L_fade|G_rx|P_rx|NF|N|I_1|I_2|N_tot|SINR|SINR_req)\b(?!\()/g, `$1_${link}`), unit),
+        line(
+          number * BUDGET.length + index,
+          `${symbol}_${link}`,
+          entry.replace(
+            /\b(f|d|B|P_tx|L_feed|G_tx|EIRP|L_fs|L_fade|G_rx|P_rx|NF|N|I_1|I_2|N_tot|SINR|SINR_req)\b(?!\()/g,
+            `$1_${link}`,
+          ),
+          unit,
+        ),
       ),
     ),
   );

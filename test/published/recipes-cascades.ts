@@ -119,7 +119,8 @@ export const CASCADE_RECIPES: readonly Recipe[] = [
   },
   {
     ids: /^cas-pozar-radio$/,
-    lines: () => `T_REC_K = noise_temperature(cascade_nf(3 dB, 20 dB, 7 dB, -6 dB, 1.1 dB))
+    // The book takes the amplifier's 3 dB as the factor 2.
+    lines: () => `T_REC_K = noise_temperature(cascade_nf(db(2), 20 dB, 7 dB, -6 dB, 1.1 dB))
                   T_TL_K = 300 K*(lin(1.5 dB) - 1)
                   T_A_K = 0.9*200 K + (1 - 0.9)*300 K
                   T_SYS_K = T_A_K + T_TL_K + lin(1.5 dB)*T_REC_K

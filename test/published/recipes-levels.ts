@@ -30,7 +30,7 @@ export const LEVEL_RECIPES: readonly Recipe[] = [
   { ids: /^notation-dBd$/, lines: (i) => `gain_dBi | dBi = ${number(i, 'gain_dBd')} dBd` },
   { ids: /^notation-dBW-dBm$/, lines: (i) => `dBm | dBm = ${number(i, 'dBW')} dBW` },
   {
-    ids: /^lvl-0dBm-/,
+    ids: /^(prose-)?lvl-0dBm-/,
     lines: (i) => `P = ${number(i, 'P_dBm')} dBm
                    dBuV | dBµV = P + db(${number(i, 'Z_ohm')} ohm)`,
   },

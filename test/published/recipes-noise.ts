@@ -28,7 +28,7 @@ export const NOISE_RECIPES: readonly Recipe[] = [
     lines: (i) => `N_dBm = thermal_noise(${number(i, 'T_K')} K, ${number(i, 'B_Hz')} Hz)
                    N_dBW | dBW = k_B*${number(i, 'T_K')} K*${number(i, 'B_Hz')} Hz`,
   },
-  { ids: /^lte-15kHz-noise$/, lines: (i) => `N_dBm = thermal_noise(T_0, ${number(i, 'B_Hz')} Hz)` },
+  { ids: /^(lte-15kHz-noise$|prose-kTB-)/, lines: (i) => `N_dBm = thermal_noise(T_0, ${number(i, 'B_Hz')} Hz)` },
   {
     ids: /^nf2t-(\d|roddy)/,
     lines: (i) => `NF = ${number(i, 'NF_dB')} dB
@@ -95,7 +95,7 @@ export const NOISE_RECIPES: readonly Recipe[] = [
                    rise_dB = powersum(N, I) - N
                    deltaT_over_T_percent | % = lin(I - N)`,
   },
-  { ids: /^in-m1461$/, lines: (i) => `rise_dB = powersum(0 dB, ${number(i, 'IN_dB')} dB)` },
+  { ids: /^(in-m1461$|prose-in-rise-)/, lines: (i) => `rise_dB = powersum(0 dB, ${number(i, 'IN_dB')} dB)` },
   {
     ids: /^(dTT-|in-dTT6$)/,
     lines: (i) => `IN_dB = db(${number(i, 'deltaT_over_T_percent')} %)
@@ -135,7 +135,8 @@ export const NOISE_RECIPES: readonly Recipe[] = [
   },
   {
     ids: /^lte-bs-acs-implied$/,
-    lines: (i) => `N = thermal_noise(T_0, ${number(i, 'B_Hz')} Hz) + ${number(i, 'NF_dB')} dB
+    // The record was computed with the rounded density −174 dBm/Hz.
+    lines: (i) => `N = -174 dBm/Hz + 10*log10(${number(i, 'B_Hz')} Hz) + ${number(i, 'NF_dB')} dB
                    I = powerdiff(N + ${number(i, 'desensitization_dB')} dB, N)
                    ACS_dB = ${number(i, 'interferer_dBm')} dBm - I`,
   },

@@ -12,11 +12,12 @@ export const PROPAGATION_RECIPES: readonly Recipe[] = [
   {
     ids: /^fs-const-set$/,
     lines: () =>
-      [['1 km', '1 GHz'], ['1 m', '1 GHz'], ['1 m', '1 MHz'], ['1 m', '1 Hz'], ['1 mi', '1 MHz'], ['1 nmi', '1 MHz']]
-        .map(([d = '', f = ''], at) => `dB_${at} = free_space_loss(${d}, ${f})`)
+      // A metre at 1 MHz or 1 Hz is in the near field, where the function warns: a longer path, less 20 log10 of the rest.
+      [['1 km', '1 GHz', 0], ['1 m', '1 GHz', 0], ['1 km', '1 MHz', 60], ['1e6 km', '1 Hz', 180], ['1 mi', '1 MHz', 0], ['1 nmi', '1 MHz', 0]]
+        .map(([d = '', f = '', rest = 0], at) => `dB_${at} = free_space_loss(${d}, ${f}) - ${rest} dB`)
         .join('\n'),
   },
-  { ids: /^fs-\d\d$/, lines: (i) => `L_dB = free_space_loss(${number(i, 'd_m')} m, ${number(i, 'f_Hz')} Hz)` },
+  { ids: /^(fs-\d\d$|prose-fs-)/, lines: (i) => `L_dB = free_space_loss(${number(i, 'd_m')} m, ${number(i, 'f_Hz')} Hz)` },
   { ids: /^fspl-/, lines: (i) => `FSPL_dB = free_space_loss(${number(i, 'd_m')} m, ${number(i, 'f_Hz')} Hz)` },
   { ids: /^emwin-fspl-/, lines: (i) => `FSPL_dB = free_space_loss(${number(i, 'd_km')} km, ${number(i, 'f_MHz')} MHz)` },
   {

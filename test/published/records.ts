@@ -44,10 +44,14 @@ export interface Figure {
   readonly value: number;
 }
 
-/** The figures of a record; a list under `key` gives `key_0`, `key_1` … What is no number is left to the recipe's `without`. */
+/**
+ * The figures of a record; a list under `key` gives `key_0`, `key_1` …, a quantity such as `1 mW` its number. What is no figure
+ * is left to the recipe's `without`.
+ */
 export function figuresOf(record: PublishedRecord): readonly Figure[] {
   return Object.entries(record.expected).flatMap(([key, value]): Figure[] => {
     if (typeof value === 'number') return [{ key, value }];
+    if (typeof value === 'string' && /^\d+ /.test(value)) return [{ key, value: Number.parseFloat(value) }];
     if (!Array.isArray(value)) return [];
     return value.flatMap((one: unknown, index): Figure[] => (typeof one === 'number' ? [{ key: `${key}_${index}`, value: one }] : []));
   });
@@ -65,7 +69,7 @@ export function allowedError({ tolerance }: PublishedRecord, { key, value }: Fig
   const exact = 1e-12 * Math.max(size, 1e-30);
   if (typeof tolerance === 'string') {
     if (tolerance === 'exact') return exact;
-    const words = /^([\d.e+-]+) (dB|%|m)\b/.exec(tolerance);
+    const words = /^([\d.e+-]+) (dB|%|m)(?![\w])/.exec(tolerance);
     if (words === null) throw new Error(`the tolerance “${tolerance}” has no known form`);
     const figure = Number(words[1]);
     if (words[2] === '%') return (figure / 100) * size;

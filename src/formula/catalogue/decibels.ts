@@ -1,6 +1,14 @@
 /** Decibel functions: between the forms, and combining on purpose. */
 import {
-  fieldSum, isDimensionless, meanPower, meaningOf, powerDifference, powerSum, reciprocalSum, FREQUENCY, sameDimension,
+  fieldSum,
+  isDimensionless,
+  meanPower,
+  meaningOf,
+  powerDifference,
+  powerSum,
+  reciprocalSum,
+  FREQUENCY,
+  sameDimension,
   type Meaning,
 } from '../../quantity';
 import { align } from '../alignment';
@@ -8,11 +16,12 @@ import { sayBandwidthsDiffer } from '../bandwidths';
 import { broken, type Context } from '../context';
 import { decibelsOf, describeType, isFieldLike, linearOf } from '../forms';
 import { shiftPlan, type Plan } from '../plan';
-import { originOf, overWrittenReference } from '../products';
+import { overWrittenReference } from '../logarithms';
+import { originOf } from '../products';
 import type { CallTree } from '../tree';
 import type { Checked, DecibelType } from '../types';
 import { quantityParameter, type FunctionEntry, type StructuralFunction } from './entry';
-import { commonMeaning } from './mathematics';
+import { commonMeaning } from './mathematics-shared';
 
 const DEFINITION = 'definition of the decibel, ISO 80000-1 and IEC 60027-3';
 
@@ -54,14 +63,21 @@ const toLinear: StructuralFunction = {
   example: 'lin(3 dBm)',
   check: (tree, [operand], context) => {
     if (operand === undefined || operand.type.form === 'broken') return broken(tree);
-    if (operand.type.form === 'decibel') return { tree, ...linearOf({ type: operand.type, plan: operand.plan }), parts: [operand] };
+    if (operand.type.form === 'decibel')
+      return { tree, ...linearOf({ type: operand.type, plan: operand.plan }), parts: [operand] };
     const text = context.textOf(operand.tree);
     if (operand.type.form === 'linear' && isDimensionless(operand.type.dimension) && operand.type.sort !== 'ratio') {
       context.say('number-as-decibels', operand.tree, {
         facts: { number: text, decibels: `${text} dB` },
         repairs: operand.tree.type === 'literal' ? [context.rewrite(operand.tree, `${text} dB`)] : [],
       });
-      const ratio: DecibelType = { form: 'decibel', dimension: operand.type.dimension, offsetDb: 0, scale: 1, meaning: operand.type.meaning };
+      const ratio: DecibelType = {
+        form: 'decibel',
+        dimension: operand.type.dimension,
+        offsetDb: 0,
+        scale: 1,
+        meaning: operand.type.meaning,
+      };
       return { tree, ...linearOf({ type: ratio, plan: operand.plan }), parts: [operand] };
     }
     return refuse(tree, operand, 'decibels', context, operand.type.form === 'linear' ? text : undefined);
@@ -81,8 +97,12 @@ type Combine = (figures: readonly number[]) => number;
 function combinedMeaning(operands: readonly Checked[], type: DecibelType): Meaning | undefined {
   const common = commonMeaning(operands);
   if (common !== undefined) return { ...common, f: 0 };
-  const meanings = operands.map(({ type: part }) => (part.form === 'decibel' || part.form === 'linear' ? part.meaning : undefined));
-  const allLevels = meanings.every((meaning) => meaning !== undefined && Math.abs(meaning.w + meaning.u + meaning.l - 1) < 1e-9);
+  const meanings = operands.map(({ type: part }) =>
+    part.form === 'decibel' || part.form === 'linear' ? part.meaning : undefined,
+  );
+  const allLevels = meanings.every(
+    (meaning) => meaning !== undefined && Math.abs(meaning.w + meaning.u + meaning.l - 1) < 1e-9,
+  );
   if (allLevels) {
     const sides = new Set(meanings.map((meaning) => `${String(meaning?.w)},${String(meaning?.u)}`));
     const [first] = meanings;
@@ -93,7 +113,12 @@ function combinedMeaning(operands: readonly Checked[], type: DecibelType): Meani
 
 /** Functions over powers of one dimension: operands in decibels or linear; the result in decibels. */
 const combining = (
-  name: string, text: string, formula: string, source: string, combine: Combine, example: string,
+  name: string,
+  text: string,
+  formula: string,
+  source: string,
+  combine: Combine,
+  example: string,
 ): StructuralFunction => ({
   form: 'structural',
   name,
@@ -108,18 +133,30 @@ const combining = (
   check: (tree, operands, context) => combinePowers(tree, operands, context, name, combine),
 });
 
-function combinePowers(tree: CallTree, operands: readonly Checked[], context: Context, name: string, combine: Combine): Checked {
+function combinePowers(
+  tree: CallTree,
+  operands: readonly Checked[],
+  context: Context,
+  name: string,
+  combine: Combine,
+): Checked {
   const alignment = align(tree, operands, context, true);
   if (alignment?.type.form !== 'decibel') return broken(tree);
-  sayBandwidthsDiffer(operands.map((operand) => ({ tree: operand.tree, text: context.textOf(operand.tree), type: operand.type })), context);
+  sayBandwidthsDiffer(
+    operands.map((operand) => ({ tree: operand.tree, text: context.textOf(operand.tree), type: operand.type })),
+    context,
+  );
   const plan: Plan = { op: 'apply', name, compute: (...figures) => combine(figures), parameters: alignment.plans };
-  const bandwidths = operands.map(({ type }) => (type.form === 'decibel' || type.form === 'linear' ? type.bandwidth : undefined));
+  const bandwidths = operands.map(({ type }) =>
+    type.form === 'decibel' || type.form === 'linear' ? type.bandwidth : undefined,
+  );
   const [bandwidth] = bandwidths;
   const type: DecibelType = {
     ...alignment.type,
     scale: 1,
     meaning: combinedMeaning(operands, alignment.type),
-    bandwidth: bandwidth !== undefined && bandwidths.every((other) => other?.key === bandwidth.key) ? bandwidth : undefined,
+    bandwidth:
+      bandwidth !== undefined && bandwidths.every((other) => other?.key === bandwidth.key) ? bandwidth : undefined,
     noiseTemperature: undefined,
   };
   return { tree, type, plan, parts: operands };
@@ -202,14 +239,18 @@ const rebase: StructuralFunction = {
   example: 'rebase(-100 dBm, 1 MHz, 180 kHz)',
   check: (tree, [level, from, to], context) => {
     if (level === undefined || from === undefined || to === undefined) return broken(tree);
-    if (level.type.form !== 'decibel') return level.type.form === 'broken' ? broken(tree) : refuse(tree, level, 'a level in decibels first', context);
+    if (level.type.form !== 'decibel')
+      return level.type.form === 'broken' ? broken(tree) : refuse(tree, level, 'a level in decibels first', context);
     const widths: { plan: Plan; tree: Checked['tree'] }[] = [];
     for (const width of [from, to]) {
       const { type } = width;
       if (type.form === 'broken') return broken(tree);
       if ((type.form !== 'linear' && type.form !== 'decibel') || !sameDimension(type.dimension, FREQUENCY))
         return refuse(tree, width, 'bandwidths in Hz', context);
-      widths.push({ plan: type.form === 'linear' ? width.plan : { op: 'linear', of: shiftPlan(width.plan, type.offsetDb) }, tree: width.tree });
+      widths.push({
+        plan: type.form === 'linear' ? width.plan : { op: 'linear', of: shiftPlan(width.plan, type.offsetDb) },
+        tree: width.tree,
+      });
     }
     const [narrow, wide] = widths;
     if (narrow === undefined || wide === undefined) return broken(tree);
@@ -220,7 +261,10 @@ const rebase: StructuralFunction = {
         op: 'sum',
         terms: [
           { coefficient: 1, plan: level.plan },
-          { coefficient: 1, plan: { op: 'decibels', of: { op: 'quotient', left: wide.plan, right: narrow.plan }, zeroIsNoPower: false } },
+          {
+            coefficient: 1,
+            plan: { op: 'decibels', of: { op: 'quotient', left: wide.plan, right: narrow.plan }, zeroIsNoPower: false },
+          },
         ],
         constant: 0,
       },
@@ -234,10 +278,31 @@ const rebase: StructuralFunction = {
 export const DECIBEL_FUNCTIONS: readonly FunctionEntry[] = [
   toDecibels,
   toLinear,
-  combining('powersum', 'The total of powers that do not interfere: incoherent addition.', '10 log₁₀ Σ 10^(xᵢ/10)', DEFINITION, powerSum, 'powersum(-100 dBm, -97 dBm)'),
+  combining(
+    'powersum',
+    'The total of powers that do not interfere: incoherent addition.',
+    '10 log₁₀ Σ 10^(xᵢ/10)',
+    DEFINITION,
+    powerSum,
+    'powersum(-100 dBm, -97 dBm)',
+  ),
   difference,
-  combining('fieldsum', 'The total of fields in phase: the worst case for coherent contributions.', '20 log₁₀ Σ 10^(xᵢ/20)', DEFINITION, fieldSum, 'fieldsum(-100 dBm, -100 dBm)'),
-  combining('meanpower', 'The mean of powers.', '10 log₁₀((Σ 10^(xᵢ/10))/n)', DEFINITION, meanPower, 'meanpower(0 dBm, -30 dBm)'),
+  combining(
+    'fieldsum',
+    'The total of fields in phase: the worst case for coherent contributions.',
+    '20 log₁₀ Σ 10^(xᵢ/20)',
+    DEFINITION,
+    fieldSum,
+    'fieldsum(-100 dBm, -100 dBm)',
+  ),
+  combining(
+    'meanpower',
+    'The mean of powers.',
+    '10 log₁₀((Σ 10^(xᵢ/10))/n)',
+    DEFINITION,
+    meanPower,
+    'meanpower(0 dBm, -30 dBm)',
+  ),
   ratios,
   rebase,
 ];

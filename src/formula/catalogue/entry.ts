@@ -92,5 +92,10 @@ export function fewestArguments(entry: FunctionEntry): number {
   return entry.parameters.filter(({ default: standard }) => standard === undefined).length;
 }
 
-export const quantityParameter = (name: string, text: string): Parameter => ({ name, text, takes: 'quantity', unit: '' });
+export const quantityParameter = (name: string, text: string): Parameter => ({
+  name,
+  text,
+  takes: 'quantity',
+  unit: '',
+});
 export const numberParameter = (name: string, text: string): Parameter => ({ name, text, takes: 'number', unit: '1' });

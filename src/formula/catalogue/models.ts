@@ -1,15 +1,31 @@
 /** Functions from `radio`: noise, cascade, propagation, capacity. Adding a function is adding one entry to such a list. */
 import {
-  capacityBitPerS, cascadeNoiseFigureDb, freeSpaceLossDb, isBeyondNearField, noiseDensityDbmPerHz, noiseFigureDb,
-  noiseTemperatureK, passiveNoiseFigureDb, thermalNoiseDbm,
+  capacityBitPerS,
+  cascadeNoiseFigureDb,
+  freeSpaceLossDb,
+  isBeyondNearField,
+  noiseDensityDbmPerHz,
+  noiseFigureDb,
+  noiseTemperatureK,
+  passiveNoiseFigureDb,
+  thermalNoiseDbm,
 } from '../../radio';
 import type { OrdinaryFunction, Parameter } from './entry';
 
 const temperature = (name: string, text: string, standard?: string): Parameter => ({
-  name, text, takes: 'temperature', unit: 'K', ...(standard === undefined ? {} : { default: standard }),
+  name,
+  text,
+  takes: 'temperature',
+  unit: 'K',
+  ...(standard === undefined ? {} : { default: standard }),
 });
 
-const ordinary = (entry: Omit<OrdinaryFunction, 'form' | 'repeats' | 'compute'> & { repeats?: number; compute: (...values: never[]) => number }): OrdinaryFunction => ({
+const ordinary = (
+  entry: Omit<OrdinaryFunction, 'form' | 'repeats' | 'compute'> & {
+    repeats?: number;
+    compute: (...values: never[]) => number;
+  },
+): OrdinaryFunction => ({
   ...entry,
   form: 'ordinary',
   repeats: entry.repeats ?? 0,
@@ -35,7 +51,10 @@ export const NOISE_FUNCTIONS: readonly OrdinaryFunction[] = [
   ordinary({
     name: 'thermal_noise',
     group: 'Noise',
-    parameters: [temperature('T', 'noise temperature'), { name: 'B', text: 'bandwidth', takes: 'bandwidth', unit: 'Hz' }],
+    parameters: [
+      temperature('T', 'noise temperature'),
+      { name: 'B', text: 'bandwidth', takes: 'bandwidth', unit: 'Hz' },
+    ],
     text: 'Thermal noise power in a bandwidth.',
     formula: 'N = k·T·B',
     source: 'ITU-R P.372, section 2; k of the SI Brochure, 9th edition 2019',
@@ -77,7 +96,10 @@ export const NOISE_FUNCTIONS: readonly OrdinaryFunction[] = [
   ordinary({
     name: 'passive_nf',
     group: 'Noise',
-    parameters: [{ name: 'L', text: 'loss', takes: 'loss', unit: 'dB' }, temperature('T', 'physical temperature', 'T_0')],
+    parameters: [
+      { name: 'L', text: 'loss', takes: 'loss', unit: 'dB' },
+      temperature('T', 'physical temperature', 'T_0'),
+    ],
     text: 'Noise figure of a passive loss at a physical temperature.',
     formula: 'F = 1 + (L − 1)·T/T₀',
     source: 'definition of noise factor for an attenuator in thermal equilibrium; common practice',
@@ -123,7 +145,11 @@ export const PROPAGATION_FUNCTIONS: readonly OrdinaryFunction[] = [
     compute: freeSpaceLossDb,
     resultUnit: 'dB',
     resultKind: 'loss',
-    validity: { range: 'distances beyond the near field, d ≥ λ/2π', parameter: 'd', holds: isBeyondNearField as (...values: number[]) => boolean },
+    validity: {
+      range: 'distances beyond the near field, d ≥ λ/2π',
+      parameter: 'd',
+      holds: isBeyondNearField,
+    },
   }),
 ];
 

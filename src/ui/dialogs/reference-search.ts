@@ -13,11 +13,7 @@ export type Chapter = FunctionGroup | 'Constants' | 'Units';
 const GROUPS: readonly FunctionGroup[] = [...new Set(FUNCTIONS.map((entry) => entry.group))];
 
 /** The chapters that have something in them, in order. */
-export const CHAPTERS: readonly Chapter[] = [
-  ...GROUPS,
-  'Constants',
-  'Units',
-];
+export const CHAPTERS: readonly Chapter[] = [...GROUPS, 'Constants', 'Units'];
 
 /** What a search found. */
 export interface ReferenceFinds {

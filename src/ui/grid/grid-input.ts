@@ -20,7 +20,14 @@ export function cellAt(target: EventTarget | null): Cell | undefined {
 
 /** A key in the grid: an action of the key table, or the first character of an entry. */
 export function onGridKey(model: GridModel, event: KeyboardEvent): void {
-  if (event.defaultPrevented || event.isComposing || model.editing !== null || model.menuRow !== null) return;
+  if (
+    event.defaultPrevented ||
+    event.isComposing ||
+    model.editing !== null ||
+    model.menuRow !== null ||
+    model.unitMenu !== null
+  )
+    return;
   if (cellAt(event.target) === undefined) return;
   const pressesButton = event.target instanceof HTMLButtonElement && (event.key === 'Enter' || event.key === ' ');
   if (pressesButton && !event.altKey && !event.ctrlKey) return;
@@ -57,6 +64,12 @@ export function onGridPress(model: GridModel, event: MouseEvent): void {
   if (row === undefined) return;
   // The secondary button on a selection leaves it as it is, for the menu.
   if (event.button === 2 && row.kind === 'line' && model.selectedLineIds.includes(row.line.id)) return;
+  const unit = event.target.closest<HTMLElement>('[data-unit]');
+  if (unit !== null && event.button === 0 && !event.shiftKey && row.kind === 'line') {
+    model.put(at);
+    model.unitMenu = { lineId: row.line.id, anchor: unit };
+    return;
+  }
   const isAgain = model.hasFocus && model.cursor.row === at.row && model.cursor.cell === at.cell;
   const opens = event.button === 0 && !event.shiftKey && isEditable(row, at.cell);
   model.put(at, { extend: event.shiftKey });

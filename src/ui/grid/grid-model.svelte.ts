@@ -42,6 +42,8 @@ export class GridModel {
   editing = $state.raw<Editing | null>(null);
   /** The row whose menu is open, or null. */
   menuRow = $state<string | null>(null);
+  /** The line whose unit is being chosen, and the element beside which that happens; or null. */
+  unitMenu = $state.raw<{ readonly lineId: string; readonly anchor: HTMLElement } | null>(null);
   /** The cell where a run of Tab began, or null: Enter goes back below it. */
   runStart: CellName | null = null;
 

@@ -152,7 +152,7 @@ export class GridView {
     const isAbove = top < this.scrollTop;
     const isBelow = bottom > this.scrollTop + room;
     if (amid && (isAbove || isBelow)) this.#scrollTo(top - room / 3);
-    else if (isAbove) this.#scrollTo(index === 1 ? 0 : top);
+    else if (isAbove) this.#scrollTo(top);
     else if (isBelow) this.#scrollTo(bottom - room + 8);
     this.#anchor = { row: key, offset: top - this.scrollTop };
   }

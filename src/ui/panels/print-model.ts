@@ -54,10 +54,11 @@ export interface PrintDocument {
 
 /** Gathers what is printed. */
 export function printDocument(worksheet: Worksheet, source: PrintSource): PrintDocument {
-  const endnotes: string[] = [];
+  const numbers = new Map<string, number>();
   const noteNumber = (text: string): number => {
-    const known = endnotes.indexOf(text);
-    return known >= 0 ? known + 1 : endnotes.push(text);
+    const known = numbers.get(text) ?? numbers.size + 1;
+    numbers.set(text, known);
+    return known;
   };
   const sections = worksheet.sections.map((section) => ({
     id: section.id,
@@ -73,7 +74,7 @@ export function printDocument(worksheet: Worksheet, source: PrintSource): PrintD
     sections,
     required,
     findings: [...groups.error, ...groups.warning, ...groups.note, ...groups.accepted],
-    endnotes,
+    endnotes: [...numbers.keys()],
     workings: required.flatMap(({ line }) => workingsOf(worksheet.cases, line, source)),
     radiates: lines.some((line) => line.radiates),
   };
@@ -90,7 +91,9 @@ function printLine(
     const entry = overrideIn(line, one.id);
     return entry === undefined ? [] : [{ caseName: one.name, entry }];
   });
-  const notes = [line.source && `Source: ${line.source}`, line.note].flatMap((text) => (text ? [noteNumber(text)] : []));
+  const notes = [line.source && `Source: ${line.source}`, line.note].flatMap((text) =>
+    text ? [noteNumber(text)] : [],
+  );
   const radiates = readings.some(({ figure }) =>
     tellsRadiation(line, figure.state === 'value' ? figure.unit : undefined),
   );

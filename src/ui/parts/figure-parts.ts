@@ -24,6 +24,7 @@ export function figureParts(figure: Figure, digits?: number): FigureParts {
     case 'value': {
       const options = {
         minus: '−' as const,
+        isFitted: figure.isFitted,
         ...(digits === undefined ? {} : { digits }),
         ...(figure.digits === undefined ? {} : { typedDigits: figure.digits }),
       };

@@ -29,7 +29,9 @@ describe('About', () => {
   it('links every licence that is served, and no other', () => {
     render(AboutDialog, { version: '1.2.3', onClose: vi.fn() });
     const linked = screen.getAllByRole('link').map((link) => link.getAttribute('href'));
-    const served = readdirSync(resolve(import.meta.dirname, '../../../static/licences')).map((name) => `licences/${name}`);
+    const served = readdirSync(resolve(import.meta.dirname, '../../../static/licences')).map(
+      (name) => `licences/${name}`,
+    );
     expect(linked.sort()).toEqual(served.sort());
   });
 });

@@ -26,10 +26,11 @@ describe('the overview', () => {
     ];
     render(KeysDialog, { groups, onClose: vi.fn() });
     const dialog = screen.getByRole('dialog', { name: 'Keys' });
-    expect(within(dialog).getAllByRole('heading', { level: 3 }).map((title) => title.textContent)).toEqual([
-      'Moving',
-      'The page',
-    ]);
+    expect(
+      within(dialog)
+        .getAllByRole('heading', { level: 3 })
+        .map((title) => title.textContent),
+    ).toEqual(['Moving', 'The page']);
     const does = within(dialog).getByText('Do again');
     expect(does.previousElementSibling?.textContent.replace(/\s+/g, ' ').trim()).toBe('Ctrl+Y or Ctrl+Shift+Z');
     expect(dialog.querySelectorAll('kbd')).toHaveLength(6);

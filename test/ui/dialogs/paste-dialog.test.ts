@@ -17,7 +17,8 @@ function show(text = TABLE) {
   return { onConfirm, onClose };
 }
 
-const column = (number: number) => screen.getByRole<HTMLSelectElement>('combobox', { name: `Column ${String(number)} is` });
+const column = (number: number) =>
+  screen.getByRole<HTMLSelectElement>('combobox', { name: `Column ${String(number)} is` });
 const lines = () => screen.getByRole('region', { name: /^What they become/ });
 const entries = () =>
   within(lines())

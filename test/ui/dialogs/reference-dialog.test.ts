@@ -10,8 +10,10 @@ import { knowModalDialogs } from './modal';
 knowModalDialogs();
 afterEach(cleanup);
 
-const namesOf = (search: string, ...chapter: Parameters<typeof searchReference> extends [string, ...infer R] ? R : never) =>
-  searchReference(search, ...chapter).groups.flatMap(({ entries }) => entries.map(({ name }) => name));
+const namesOf = (
+  search: string,
+  ...chapter: Parameters<typeof searchReference> extends [string, ...infer R] ? R : never
+) => searchReference(search, ...chapter).groups.flatMap(({ entries }) => entries.map(({ name }) => name));
 
 describe('searching the reference', () => {
   it('finds everything when nothing is asked for', () => {

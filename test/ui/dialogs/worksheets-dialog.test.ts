@@ -20,7 +20,15 @@ const worksheet = (id: string, more: Partial<WorksheetEntry> = {}): WorksheetEnt
 });
 
 const copy = (rev: number): CopyEntry => ({
-  ...{ rev, worksheetId: 'a', title: 'Sheet a', savedAt: NOW - rev * HOUR, size: 900, lineCount: rev, quarantined: null },
+  ...{
+    rev,
+    worksheetId: 'a',
+    title: 'Sheet a',
+    savedAt: NOW - rev * HOUR,
+    size: 900,
+    lineCount: rev,
+    quarantined: null,
+  },
 });
 
 function makeActions() {
@@ -40,11 +48,20 @@ function show(entries: readonly WorksheetEntry[], actions: WorksheetActions = ma
   return { onClose, ...render(WorksheetsDialog, given) };
 }
 
-const press = (name: string | RegExp) => fireEvent.click(screen.getByRole('button', { name }));
+/** As a person does: the button has the focus when it is pressed. */
+const press = (name: string | RegExp) => {
+  const button = screen.getByRole('button', { name, hidden: true });
+  button.focus();
+  return fireEvent.click(button);
+};
 
 describe('the list', () => {
   it('shows what is kept, the last saved first, with what is known of each', async () => {
-    const { rerender } = show([worksheet('a', { savedAt: NOW - 5 * HOUR }), worksheet('b'), worksheet('c', { deletedAt: NOW })]);
+    const { rerender } = show([
+      worksheet('a', { savedAt: NOW - 5 * HOUR }),
+      worksheet('b'),
+      worksheet('c', { deletedAt: NOW }),
+    ]);
     const list = screen.getByRole('region', { name: 'Kept in this browser' });
     const titles = within(list).getAllByRole('button', { name: /^Sheet/ });
     expect(titles.map((title) => title.textContent)).toEqual(['Sheet b', 'Sheet a']);
@@ -135,6 +152,7 @@ describe('deeds', () => {
     expect(screen.queryByRole('textbox')).toBeNull();
     expect(actions.rename).not.toHaveBeenCalled();
     expect(onClose).not.toHaveBeenCalled();
+    await vi.waitFor(() => expect(document.activeElement?.getAttribute('aria-label')).toBe('Rename “Sheet a”'));
   });
 
   it('takes no empty title', async () => {
@@ -155,6 +173,7 @@ describe('the trash', () => {
     await press('Delete “Sheet a”');
     await rerender({ entries: [worksheet('a', { deletedAt: NOW }), worksheet('b')] });
     expect(screen.getByRole('status').textContent).toContain('“Sheet a” is in the trash.');
+    await vi.waitFor(() => expect(document.activeElement?.textContent).toBe('Undo'));
     await press('Undo');
     expect(actions.restore.mock.calls).toEqual([['a']]);
     await rerender({ entries: [worksheet('a'), worksheet('b')] });
@@ -165,19 +184,20 @@ describe('the trash', () => {
     const actions = makeActions();
     show([worksheet('a', { deletedAt: NOW - HOUR })], actions);
     expect(screen.getByText('In the trash (1)')).toBeDefined();
-    await fireEvent.click(screen.getByRole('button', { name: 'Restore “Sheet a”', hidden: true }));
+    await press('Restore “Sheet a”');
     expect(actions.restore.mock.calls).toEqual([['a']]);
   });
 
   it('is emptied only after asking once more', async () => {
     const actions = makeActions();
     show([worksheet('a', { deletedAt: NOW - HOUR })], actions);
-    await fireEvent.click(screen.getByRole('button', { name: 'Empty the trash…', hidden: true }));
+    await press('Empty the trash…');
     expect(screen.getByText(/Delete 1 worksheet with their earlier states\? This cannot be undone\./)).toBeDefined();
-    await fireEvent.click(screen.getByRole('button', { name: 'Keep', hidden: true }));
+    await vi.waitFor(() => expect(document.activeElement?.textContent).toBe('Keep'));
+    await press('Keep');
     expect(actions.emptyTrash).not.toHaveBeenCalled();
-    await fireEvent.click(screen.getByRole('button', { name: 'Empty the trash…', hidden: true }));
-    await fireEvent.click(screen.getByRole('button', { name: 'Delete for good', hidden: true }));
+    await press('Empty the trash…');
+    await press('Delete for good');
     expect(actions.emptyTrash).toHaveBeenCalledTimes(1);
   });
 });

@@ -14,7 +14,10 @@ const runs = (...pieces: Piece[]): string[] => runsOf(pieces).map(written);
 
 describe('what is kept together in a line of text', () => {
   it('a separator with what it follows, a bracket with what it precedes', () => {
-    expect(runs(text('powersum'), text('('), symbol('N'), text(', '), symbol('I'), text(')'))).toEqual(['powersum(N,', 'I)']);
+    expect(runs(text('powersum'), text('('), symbol('N'), text(', '), symbol('I'), text(')'))).toEqual([
+      'powersum(N,',
+      'I)',
+    ]);
   });
 
   it('a prefix sign with what it stands before, not an operator', () => {

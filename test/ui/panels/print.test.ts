@@ -20,7 +20,7 @@ describe('what is printed', () => {
 
   it('holds every line in every case, in order', () => {
     const lines = print.sections.flatMap((section) => section.lines ?? []);
-    expect(lines.map(({ line }) => line.id)).toEqual(['p', 'l', 'e', 'n', 'i', 'bad', 'good', 'w', 's']);
+    expect(lines.map(({ line }) => line.id)).toEqual(['p', 'l', 'e', 'n', 'i', 'bad', 'good', 'w', 'r1', 'r2', 's']);
     expect(lines.every(({ readings }) => readings.length === SHEET.cases.length)).toBe(true);
     expect(lines[0]?.overrides).toEqual([{ caseName: 'Storm', entry: '13 dBm' }]);
   });
@@ -48,7 +48,10 @@ describe('what is printed', () => {
       ['SINR', ['Calm']],
       ['SINR', ['Storm']],
     ]);
-    const alike = printDocument({ ...SHEET, cases: SHEET.cases }, { ...source, working: (id) => source.working(id, 'calm') });
+    const alike = printDocument(
+      { ...SHEET, cases: SHEET.cases },
+      { ...source, working: (id) => source.working(id, 'calm') },
+    );
     expect(alike.workings.map(({ working, caseNames }) => [working.symbol, caseNames])).toEqual([
       ['EIRP', ['Calm', 'Storm']],
       ['SINR', ['Calm', 'Storm']],

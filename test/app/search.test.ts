@@ -1,0 +1,47 @@
+// Searching lines, and going round the matches.
+import { describe, expect, it } from 'vitest';
+
+import { matchesOf, nextMatch } from '../../src/app/search';
+import { sheet } from './support';
+
+const worksheet = sheet([
+  ['P_tx', 'Transmit power', '14 dBm', { source: 'data sheet of the buoy' }],
+  ['I_ferry', 'Ferry telemetry', '-112 dBm', { byCase: { storm: '-109.5 dBm' } }],
+  ['N_tot', 'Both', 'powersum(N, I_ferry)', { note: 'Buoy alone' }],
+]);
+
+describe('matches', () => {
+  it.each([
+    [
+      'ferry',
+      [
+        { lineId: 'I_ferry', field: 'symbol' },
+        { lineId: 'N_tot', field: 'entry' },
+      ],
+    ],
+    [
+      'BUOY',
+      [
+        { lineId: 'P_tx', field: 'source' },
+        { lineId: 'N_tot', field: 'note' },
+      ],
+    ],
+    ['109.5', [{ lineId: 'I_ferry', field: 'entry' }]],
+    ['  ', []],
+    ['nowhere', []],
+  ] as const)('%s', (text, matches) => {
+    expect(matchesOf(worksheet, text)).toEqual(matches);
+  });
+});
+
+describe('going round', () => {
+  it.each([
+    [0, -1, 1, -1],
+    [3, -1, 1, 0],
+    [3, -1, -1, 2],
+    [3, 2, 1, 0],
+    [3, 0, -1, 2],
+  ] as const)('%i matches from %i by %i', (count, from, direction, to) => {
+    expect(nextMatch(count, from, direction)).toBe(to);
+  });
+});
