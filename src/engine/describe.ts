@@ -2,6 +2,7 @@
 import { CATALOGUE, type Facts, type Finding, type Repair } from '../findings';
 import { evaluatePlan, type Figures, type Remark, type Scope } from '../formula';
 import { writeQuantity, writeSignificant } from '../quantity';
+import { loopPath } from './graph';
 import type { Node } from './node';
 import { rawFigure } from './raw-figure';
 import type { Figure, Reading } from './reading';
@@ -13,7 +14,7 @@ export function remarksOf(node: Node, figures: Figures, value?: number): readonl
   const own = result.remarks.filter(
     ({ applies }) => applies === undefined || applies.test(evaluatePlan(applies.plan, figures)),
   );
-  if (barred?.code === 'loop') return [{ code: 'loop', facts: { path: barred.path.join(' → ') }, repairs: [] }];
+  if (barred?.code === 'loop') return [{ code: 'loop', facts: { path: loopPath(node) }, repairs: [] }];
   const late = [...own];
   if (barred?.code === 'duplicate-symbol')
     late.unshift({ code: 'duplicate-symbol', facts: { name: node.line.symbol, holder: barred.holder }, repairs: [] });

@@ -39,7 +39,7 @@ export class Evaluation {
     this.graph = buildGraph(worksheet, undefined, this.figuring.newSlot);
     this.byId = new Map(this.graph.lines.map((line) => [line.id, line]));
     this.figuring.setOrder(this.graph.order);
-    this.settleStale(this.graph.order, new Set());
+    this.settleStale(this.graph.order, new Set(), true);
     this.figuring.run([]);
   }
 
@@ -81,15 +81,14 @@ export class Evaluation {
     this.byId.set(line.id, line);
     const stale: Node[] = [];
     for (const node of nodes.values()) {
+      const symbols = node.symbols;
       node.take(line, entryOf(line, node.caseId));
       if (!node.isStale) continue;
-      const inputs = inputsOf(this.graph, node);
-      if (inputs.length !== node.inputs.length || inputs.some((input, index) => input !== node.inputs[index]))
-        return undefined;
+      if (!sameSymbols(symbols, node.symbols)) return undefined;
       stale.push(node);
     }
     const touched = new Set<string>([line.id]);
-    this.settleStale(stale, touched);
+    this.settleStale(stale, touched, stale.length > 0);
     return this.finish(touched, false);
   }
 
@@ -103,9 +102,12 @@ export class Evaluation {
     this.figuring.release(dropped);
     this.figuring.setOrder(this.graph.order);
     const touched = new Set<string>();
+    // Lines that lost a node of their own now read the shared one.
+    for (const { lineId } of dropped) if (this.byId.has(lineId)) touched.add(lineId);
     this.settleStale(
       this.graph.order.filter(({ isStale }) => isStale),
       touched,
+      true,
     );
     return this.finish(touched, true);
   }
@@ -132,24 +134,21 @@ export class Evaluation {
   }
 
   /** Checks stale nodes, inputs first, and those whose inputs now look different; then those that looked around. */
-  private settleStale(stale: readonly Node[], touched: Set<string>): void {
-    if (stale.length === 0) return;
+  private settleStale(stale: readonly Node[], touched: Set<string>, mayLookDifferent: boolean): void {
     const open = [...stale].sort((a, b) => a.rank - b.rank);
     const queued = new Set(open);
-    let anyInfoChanged = false;
     for (let at = 0; at < open.length; at++) {
       const node = open[at] as Node;
       queued.delete(node);
       touched.add(node.lineId);
       if (!this.checkNode(node)) continue;
-      anyInfoChanged = true;
       for (const user of node.users) {
         if (queued.has(user) || user.rank < node.rank) continue;
         queued.add(user);
         insertByRank(open, user, at + 1);
       }
     }
-    if (this.around.size === 0 || !(anyInfoChanged || stale.length > 0)) return;
+    if (!mayLookDifferent) return;
     for (const node of [...this.around]) {
       this.checkNode(node);
       touched.add(node.lineId);
@@ -260,7 +259,7 @@ export class Evaluation {
   private findingsIn(lineId: string, caseId: string): readonly Finding[] {
     const node = nodeIn(this.graph, lineId, caseId);
     if (node === undefined) return [];
-    const tryOut = (entry: string, unit?: string): Reading => this.tryOut(node, entry, unit).reading;
+    const tryOut = (entry: string, unit?: string): Reading => this.tryOut(node, caseId, entry, unit).reading;
     return remarksOf(node, this.figuring).map((remark) =>
       describeRemark(remark, node, this.figuring, tryOut, this.scopeOf(node.caseId)),
     );
@@ -270,8 +269,8 @@ export class Evaluation {
   preview(lineId: string, caseId: string, entry: string): Preview {
     const node = nodeIn(this.graph, lineId, caseId);
     if (node === undefined) return { reading: { figure: { state: 'empty' } }, findings: [] };
-    const tried = this.tryOut(node, entry);
-    const tryOut = (other: string, unit?: string): Reading => this.tryOut(node, other, unit).reading;
+    const tried = this.tryOut(node, caseId, entry);
+    const tryOut = (other: string, unit?: string): Reading => this.tryOut(node, caseId, other, unit).reading;
     return {
       reading: tried.reading,
       findings: remarksOf(tried.node, this.figuring, tried.value).map((remark) =>
@@ -281,21 +280,22 @@ export class Evaluation {
   }
 
   /** Evaluates another entry (or unit) in a node's place. It cannot see itself, so a loop of one is found here too. */
-  private tryOut(node: Node, entry: string, unit?: string): { reading: Reading; node: Node; value: number } {
-    const scope = this.scopeOf(node.caseId);
+  private tryOut(
+    node: Node,
+    caseId: string,
+    entry: string,
+    unit?: string,
+  ): { reading: Reading; node: Node; value: number } {
+    const scope = this.scopeOf(caseId);
     const line: Line = {
       ...node.line,
       ...(node.caseId === null ? { entry } : {}),
       ...(unit === undefined ? {} : { unit }),
     };
-    const trial = node.trial(line, entry);
+    const trial = node.trial(line, entry, caseId);
     trial.inputs = inputsOf(this.graph, trial);
     const usesItself = trial.inputs.includes(node) || trial.inputs.some((input) => restsUpon(input, node));
-    trial.barred = usesItself
-      ? { code: 'loop', path: [line.symbol, line.symbol] }
-      : node.barred?.code === 'loop'
-        ? undefined
-        : node.barred;
+    trial.barred = usesItself ? { code: 'loop' } : node.barred?.code === 'loop' ? undefined : node.barred;
     trial.result = checkLine(trial.spec(), scope, trial.read);
     const value =
       trial.barred === undefined ? settled(trial.compile(this.figuring)(), trial.result.unit?.form === 'decibel') : NaN;
@@ -338,6 +338,9 @@ export class Evaluation {
     return this.current.sections.flatMap((section) => (isLinesSection(section) ? section.lines : []));
   }
 }
+
+const sameSymbols = (a: readonly string[], b: readonly string[]): boolean =>
+  a.length === b.length && a.every((symbol, index) => symbol === b[index]);
 
 /** Keeps a worklist in rank order, from `from` on. */
 function insertByRank(open: Node[], node: Node, from: number): void {

@@ -188,28 +188,25 @@ function sortNodes(all: readonly Node[]): Node[] {
   };
   run();
   if (waiting.size > 0) {
-    for (const loop of findLoops([...waiting.keys()])) {
-      const path = loop.map(({ line }) => line.symbol);
-      for (const [index, node] of loop.entries()) {
-        node.barred = { code: 'loop', path: [...path.slice(index), ...path.slice(0, index), path[index] ?? ''] };
-        markStale(node);
-        waiting.delete(node);
-        ready.push(node);
-      }
+    for (const node of findLoops([...waiting.keys()])) {
+      node.barred = { code: 'loop' };
+      markStale(node);
+      waiting.delete(node);
+      ready.push(node);
     }
     run();
   }
   return order;
 }
 
-/** Tarjan's algorithm, without recursion: the strongly connected parts that are loops, each in the order of its uses. */
-function findLoops(nodes: readonly Node[]): Node[][] {
+/** Tarjan's algorithm, without recursion: the members of strongly connected parts that are loops. */
+function findLoops(nodes: readonly Node[]): Node[] {
   const among = new Set(nodes);
   const index = new Map<Node, number>();
   const low = new Map<Node, number>();
   const stack: Node[] = [];
   const onStack = new Set<Node>();
-  const loops: Node[][] = [];
+  const loops: Node[] = [];
   for (const start of nodes) {
     if (index.has(start)) continue;
     const frames: { node: Node; next: number }[] = [{ node: start, next: 0 }];
@@ -239,23 +236,41 @@ function findLoops(nodes: readonly Node[]): Node[][] {
         part.push(member);
         if (member === node) break;
       }
-      if (part.length > 1 || node.inputs.includes(node)) loops.push(asPath(part));
+      if (part.length > 1 || node.inputs.includes(node)) loops.push(...part.reverse());
     }
   }
   return loops;
 }
 
-/** Members of a loop in the order in which one uses the next, as far as one walk reaches them all. */
-function asPath(part: readonly Node[]): Node[] {
-  const left = new Set(part);
-  const path: Node[] = [];
-  let node = part.reduce((first, member) => (member.slot < first.slot ? member : first));
-  for (;;) {
-    path.push(node);
-    left.delete(node);
-    const next = node.inputs.find((input) => left.has(input));
-    if (next === undefined) break;
-    node = next;
+/** How far a loop is followed, and how many of its names are told. */
+const LOOP_SEARCH_LIMIT = 1000;
+const LOOP_NAMES_LIMIT = 8;
+
+/**
+ * A shortest way from a node of a loop back to itself, as symbols, first and last the same; of a very long loop its beginning.
+ * Ties go by the order of uses in the entry, so that the same worksheet always tells the same path.
+ */
+export function loopPath(node: Node): string {
+  const cameFrom = new Map<Node, Node>();
+  const open: Node[] = [node];
+  for (let at = 0; at < open.length && at < LOOP_SEARCH_LIMIT; at++) {
+    const member = open[at] as Node;
+    for (const input of member.inputs) {
+      // An entry that is tried out stands outside the graph: it meets itself as the line's present node.
+      if (input.lineId === node.lineId) return writePath(node, member, cameFrom);
+      if (cameFrom.has(input)) continue;
+      cameFrom.set(input, member);
+      open.push(input);
+    }
   }
-  return [...path, ...left];
+  const begun = open.slice(0, LOOP_NAMES_LIMIT).map(({ line }) => line.symbol);
+  return [...begun, '…', node.line.symbol].join(' → ');
+}
+
+function writePath(node: Node, last: Node, cameFrom: ReadonlyMap<Node, Node>): string {
+  const names: string[] = [];
+  for (let member: Node | undefined = last; member !== undefined && member !== node; member = cameFrom.get(member))
+    names.unshift(member.line.symbol);
+  const shown = names.length > LOOP_NAMES_LIMIT ? [...names.slice(0, LOOP_NAMES_LIMIT - 1), '…'] : names;
+  return [node.line.symbol, ...shown, node.line.symbol].join(' → ');
 }

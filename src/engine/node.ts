@@ -19,9 +19,7 @@ import {
 import type { Line } from '../worksheet';
 
 /** Why a line is withheld whatever its entry says. */
-export type Barred =
-  | { readonly code: 'duplicate-symbol'; readonly holder: string }
-  | { readonly code: 'loop'; readonly path: readonly string[] };
+export type Barred = { readonly code: 'duplicate-symbol'; readonly holder: string } | { readonly code: 'loop' };
 
 export class Node {
   readonly slot: number;
@@ -93,8 +91,8 @@ export class Node {
   }
 
   /** A node with another entry in this one's place, outside the graph. */
-  trial(line: Line, entry: string): Node {
-    return new Node(this.slot, line, this.caseId, entry);
+  trial(line: Line, entry: string, caseId: string): Node {
+    return new Node(this.slot, line, caseId, entry);
   }
 
   /** The checked expression, which is not kept, for the working. */

@@ -99,7 +99,13 @@ export interface Step {
 
 export const steps: fc.Arbitrary<Step> = fc.record({ which: fc.nat(999), a: fc.nat(999), b: fc.nat(999), draft: drafts });
 
-let fresh = 0;
+/** An id that no line has. */
+function newIdIn(lines: readonly Line[]): string {
+  const taken = new Set(lines.map(({ id }) => id));
+  let count = 0;
+  while (taken.has(`n${String(count)}`)) count++;
+  return `n${String(count)}`;
+}
 
 /** The changes that a step makes; none where the worksheet has nothing to do it with. */
 export function changesOf(worksheet: Worksheet, { which, a, b, draft }: Step): readonly Change[] {
@@ -109,7 +115,7 @@ export function changesOf(worksheet: Worksheet, { which, a, b, draft }: Step): r
   const section = sections[b % sections.length];
   const oneCase = worksheet.cases[b % worksheet.cases.length];
   if (section === undefined || oneCase === undefined) return [];
-  const newId = `n${String(fresh++)}`;
+  const newId = newIdIn(lines);
   const insert: Change = {
     kind: 'insert-line',
     sectionId: section.id,

@@ -64,17 +64,21 @@ export function onGridPress(model: GridModel, event: MouseEvent): void {
   if (row === undefined) return;
   // The secondary button on a selection leaves it as it is, for the menu.
   if (event.button === 2 && row.kind === 'line' && model.selectedLineIds.includes(row.line.id)) return;
-  const unit = event.target.closest<HTMLElement>('[data-unit]');
-  if (unit !== null && event.button === 0 && !event.shiftKey && row.kind === 'line') {
-    model.put(at);
-    model.unitMenu = { lineId: row.line.id, anchor: unit };
-    return;
-  }
   const isAgain = model.hasFocus && model.cursor.row === at.row && model.cursor.cell === at.cell;
-  const opens = event.button === 0 && !event.shiftKey && isEditable(row, at.cell);
+  const isOnUnit = event.target.closest('[data-unit]') !== null;
+  const opens = event.button === 0 && !event.shiftKey && !isOnUnit && isEditable(row, at.cell);
   model.put(at, { extend: event.shiftKey });
   if (opens && (isAgain || row.kind === 'add' || row.kind === 'new-section')) model.edit();
   else void model.focusCursor();
+}
+
+/** A click on the unit of a figure: the menu of units. */
+export function onGridClick(model: GridModel, event: MouseEvent): void {
+  const unit = event.target instanceof Element ? event.target.closest<HTMLElement>('[data-unit]') : null;
+  const at = cellAt(unit);
+  const row = at === undefined ? undefined : model.rows[model.indexOf(at.row)];
+  if (unit === null || row?.kind !== 'line' || event.shiftKey || model.editing !== null) return;
+  model.unitMenu = { lineId: row.line.id, anchor: unit };
 }
 
 /** The menu of a row in place of the browser's own; not in fields. */

@@ -125,3 +125,8 @@ export function casesAbreast(cases: readonly Case[]): { readonly name: string; r
     groups.push(numbered.slice(start, start + CASES_ABREAST));
   return groups;
 }
+
+/** An entry in the stretches between which it may be broken, after brackets and separators; a figure keeps its unit. */
+export function entryStretches(entry: string): string[] {
+  return entry.replace(/(?<=\d) (?=[\p{L}%°])/gu, '\u00a0').split(/(?<=[(,;])/);
+}

@@ -2,7 +2,7 @@ import { cleanup, render, screen, within } from '@testing-library/svelte';
 import { afterEach, describe, expect, it } from 'vitest';
 
 import { workingOf } from '../../../src/review';
-import { casesAbreast, printDocument, type PrintSource } from '../../../src/ui/panels/print-model';
+import { casesAbreast, entryStretches, printDocument, type PrintSource } from '../../../src/ui/panels/print-model';
 import PrintView from '../../../src/ui/panels/PrintView.svelte';
 import { evaluate, SHEET } from './sheet';
 
@@ -69,6 +69,12 @@ describe('many cases', () => {
     const groups = casesAbreast(cases);
     expect(groups.map((group) => group.length)).toEqual([5, 5, 2]);
     expect(groups.flat().map(({ index }) => index)).toEqual(cases.map((_, i) => i));
+  });
+});
+
+describe('an entry that is too long for its column', () => {
+  it('is broken after brackets and separators, not between a figure and its unit', () => {
+    expect(entryStretches('passive_nf(L, 290 K) + 2')).toEqual(['passive_nf(', 'L,', ' 290\u00a0K) + 2']);
   });
 });
 
