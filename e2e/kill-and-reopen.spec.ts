@@ -52,12 +52,12 @@ ownTest('every edit that was said to be saved is there after the browser was kil
   await expect(third.account.figure('P_rx')).toHaveText('−85.50 dBm');
 });
 
-ownTest('twelve times killed right after an edit was said to be saved: none is lost', async ({ startAgain }) => {
+ownTest('five times killed right after an edit was said to be saved: none is lost', async ({ startAgain }) => {
   const sheet = await startAgain();
   await sheet.account.draft('x', 'Counter', '0 dB');
   await sheet.expectSaved();
   let running = sheet;
-  for (let round = 1; round <= 12; round++) {
+  for (let round = 1; round <= 5; round++) {
     await running.account.retype('x', 'entry', `${String(round)} dB`);
     await running.expectSaved();
     running = await startAgain();

@@ -2,12 +2,12 @@
  * Conversions done by hand on top of the automatic one: `P_w + 30` in a line in dBm where P_w is in dBW. The line's unit
  * converts already, so the figure is off by the difference of the references.
  */
-import { isDimensionless, type DecibelUnit } from '../quantity';
+import { isDimensionless, isRootPower, raiseDimension, type DecibelUnit } from '../quantity';
 import type { Context } from './context';
 import { isLevel } from './net';
 import { withoutTerm } from './repairs';
 import type { Tree } from './tree';
-import type { SumTerm } from './types';
+import type { DecibelType, SumTerm } from './types';
 
 const near = (a: number, b: number): boolean => Math.abs(a - b) < 0.06;
 
@@ -73,7 +73,8 @@ export function sayFactorInLogarithm(terms: readonly SumTerm[], declared: Decibe
       continue;
     const factor = [argument.left, argument.right].find((side) => side.type === 'literal' && side.unit === null);
     if (factor?.type !== 'literal' || (argument.operator === '/' && factor === argument.left)) continue;
-    const step = (argument.operator === '*' ? 10 : -10) * Math.log10(factor.figure);
+    const step =
+      (argument.operator === '*' ? 1 : -1) * logarithmFactor(term.tree, term.type) * Math.log10(factor.figure);
     if (near(step, 0) || !near(step, -declared.offsetDb)) continue;
     const quantity = factor === argument.left ? argument.right : argument.left;
     context.say('constant-hides-unit', argument, {
@@ -87,6 +88,35 @@ export function sayFactorInLogarithm(terms: readonly SumTerm[], declared: Decibe
     return true;
   }
   return false;
+}
+
+/** 10 or 20: what the logarithm of a term is multiplied by. */
+function logarithmFactor(tree: Tree, type: DecibelType): number {
+  if (tree.type === 'binary')
+    for (const side of [tree.left, tree.right]) if (side.type === 'literal') return Math.abs(side.figure);
+  return isRootPower(raiseDimension(type.dimension, 0.5)) ? 20 : 10;
+}
+
+/**
+ * 10^(P/10)/1000 and lin(P)*0.001, with P in dBm: the milliwatt is taken off once more by hand. `reference` is that of P.
+ */
+export function sayReferenceTwice(
+  tree: Tree,
+  power: { readonly tree: Tree; readonly reference?: number | undefined },
+  factor: number,
+  context: Context,
+): void {
+  const { reference } = power;
+  if (reference === undefined || Math.abs(Math.log10(reference)) < 0.01 || Math.abs(factor / reference - 1) > 1e-6)
+    return;
+  context.say('constant-hides-unit', tree, {
+    facts: {
+      number: String(Number(factor.toPrecision(6))),
+      standsFor: 'the reference of the decibels, which their linear value has already',
+      closes: 'yes',
+    },
+    repairs: [context.rewrite(tree, context.textOf(power.tree))],
+  });
 }
 
 function argumentOfLogarithm(tree: Tree): Tree | undefined {

@@ -11,7 +11,7 @@ import { decibelSum, scaleTerms } from './sums';
 import type { BinaryTree, Tree } from './tree';
 import type { Checked, DecibelType } from './types';
 
-/** x/(1 u) inside a logarithm: the type of decibels of x over u, as ISO 80000-1 writes levels. */
+/** x/(1 u) inside a logarithm, u with a unit: the type of decibels of x over u, as ISO 80000-1 writes levels. */
 export function overWrittenReference(argument: Checked, size: number): DecibelType | undefined {
   const { tree, type, parts } = argument;
   const [above, below] = parts;
@@ -25,7 +25,7 @@ export function overWrittenReference(argument: Checked, size: number): DecibelTy
   if (
     type.form !== 'linear' ||
     !isDimensionless(type.dimension) ||
-    below.tree.figure !== 1 ||
+    !(below.tree.figure > 0) ||
     below.plan.op !== 'constant'
   )
     return undefined;

@@ -24,6 +24,7 @@ import type { Check } from './check';
 import { asFactor, broken, type Context } from './context';
 import { describeType, termsOf } from './forms';
 import { shiftPlan, type Plan } from './plan';
+import { sayReferenceTwice } from './hand-conversion';
 import { checkLogarithmIdiom } from './logarithms';
 import { decibelSum, scaleTerms } from './sums';
 import type { BinaryTree, Tree } from './tree';
@@ -81,6 +82,8 @@ type Decibel = Checked & { readonly type: DecibelType };
 function multiplyLinear(tree: BinaryTree, left: Linear, right: Linear, exponent: 1 | -1, context: Context): Checked {
   const written = exponent === 1 ? (timesItsReference(left, right) ?? timesItsReference(right, left)) : undefined;
   if (written !== undefined) return { ...written, tree, parts: [left, right] };
+  if (right.constant !== undefined) sayReferenceTwice(tree, left, right.constant ** exponent, context);
+  if (left.constant !== undefined && exponent === 1) sayReferenceTwice(tree, right, left.constant, context);
   const dimension = combineDimensions(left.type.dimension, right.type.dimension, exponent);
   const type: LinearType = {
     form: 'linear',

@@ -64,7 +64,12 @@ const toLinear: StructuralFunction = {
   check: (tree, [operand], context) => {
     if (operand === undefined || operand.type.form === 'broken') return broken(tree);
     if (operand.type.form === 'decibel')
-      return { tree, ...linearOf({ type: operand.type, plan: operand.plan }), parts: [operand] };
+      return {
+        tree,
+        ...linearOf({ type: operand.type, plan: operand.plan }),
+        reference: 10 ** (operand.type.offsetDb / 10),
+        parts: [operand],
+      };
     const text = context.textOf(operand.tree);
     if (operand.type.form === 'linear' && isDimensionless(operand.type.dimension) && operand.type.sort !== 'ratio') {
       context.say('number-as-decibels', operand.tree, {

@@ -21,7 +21,12 @@ export function caseOfColumn(column: string): string | undefined {
 }
 
 /** Least widths in CSS px; text columns share what is left. */
-const WIDTHS = { margin: 66, symbol: 92, label: 140, entry: 180, value: 122, requirement: 136, source: 130, note: 130 };
+const ROOMY = { margin: 66, symbol: 92, label: 140, entry: 180, value: 122, requirement: 136, source: 130, note: 130 };
+
+/** The same where there are so many cases that the account would have to be scrolled sideways. */
+const TIGHT = { ...ROOMY, label: 118, entry: 148 };
+
+type Widths = typeof ROOMY;
 
 /** Below this width of the whole page, a line is set in two rows. */
 export const NARROW_WIDTH = 700;
@@ -41,43 +46,43 @@ export interface ColumnsInput {
 export function columnsOf({ worksheet, choices, width, narrow, caseId }: ColumnsInput): readonly Column[] {
   if (narrow) return ['margin', 'symbol', 'label', caseColumn(caseId), 'entry', 'requirement'];
   const fixed: Column[] = ['margin', 'symbol', 'label', 'entry', ...worksheet.cases.map((one) => caseColumn(one.id))];
-  let room = width - fixed.reduce((sum, column) => sum + leastWidth(column), 0);
+  let room = width - totalOf(fixed, ROOMY);
   const optional: OptionalColumn[] = ['requirement', 'source', 'note'];
   const shown = optional.filter((column) => {
     if (choices[column] === 'hidden') return false;
-    room -= WIDTHS[column];
+    room -= ROOMY[column];
     return choices[column] === 'shown' || room >= 60;
   });
   return [...fixed, ...shown];
 }
 
-function leastWidth(column: Column): number {
-  return caseOfColumn(column) === undefined ? WIDTHS[column as keyof typeof WIDTHS] : WIDTHS.value;
+function widthOf(column: Column, widths: Widths): number {
+  return caseOfColumn(column) === undefined ? widths[column as keyof Widths] : widths.value;
 }
 
-/** The value of `grid-template-columns`. */
-export function gridTemplate(columns: readonly Column[]): string {
+function totalOf(columns: readonly Column[], widths: Widths): number {
+  return columns.reduce((sum, column) => sum + widthOf(column, widths), 0);
+}
+
+const widthsFor = (columns: readonly Column[], width: number): Widths =>
+  totalOf(columns, ROOMY) <= width ? ROOMY : TIGHT;
+
+/** The value of `grid-template-columns` for columns in a width in CSS px. */
+export function gridTemplate(columns: readonly Column[], width: number): string {
+  const widths = widthsFor(columns, width);
+  const shares: Partial<Record<Column, string>> = { label: '1.1fr', entry: '1.5fr', source: '0.8fr', note: '0.8fr' };
   return columns
     .map((column) => {
-      const least = leastWidth(column);
-      switch (column) {
-        case 'label':
-          return `minmax(${String(least)}px, 1.1fr)`;
-        case 'entry':
-          return `minmax(${String(least)}px, 1.5fr)`;
-        case 'source':
-        case 'note':
-          return `minmax(${String(least)}px, 0.8fr)`;
-        default:
-          return `${String(least)}px`;
-      }
+      const least = `${String(widthOf(column, widths))}px`;
+      const share = shares[column];
+      return share === undefined ? least : `minmax(${least}, ${share})`;
     })
     .join(' ');
 }
 
-/** The least width of the whole account, in CSS px. */
-export function leastTotal(columns: readonly Column[]): number {
-  return columns.reduce((sum, column) => sum + leastWidth(column), 0);
+/** The least width of the whole account in a width, both in CSS px. */
+export function leastTotal(columns: readonly Column[], width: number): number {
+  return totalOf(columns, widthsFor(columns, width));
 }
 
 /** The cells of a row, in the order of the arrow keys. */

@@ -85,8 +85,8 @@ export class GridModel {
     }),
   );
 
-  readonly template = $derived.by(() => gridTemplate(this.columns));
-  readonly leastWidth = $derived.by(() => (this.narrow ? 0 : leastTotal(this.columns)));
+  readonly template = $derived.by(() => gridTemplate(this.columns, this.view.width));
+  readonly leastWidth = $derived.by(() => (this.narrow ? 0 : leastTotal(this.columns, this.view.width)));
 
   readonly rows: readonly Row[] = $derived.by(() =>
     rowsOf({

@@ -37,8 +37,16 @@ describe('columns', () => {
 
   it('fit their width where there is room', () => {
     const columns = columnsOf(input);
-    expect(leastTotal(columns)).toBeLessThanOrEqual(930);
-    expect(gridTemplate(columns).match(/px/g)).toHaveLength(columns.length);
+    expect(leastTotal(columns, 930)).toBeLessThanOrEqual(930);
+    expect(gridTemplate(columns, 930).match(/px/g)).toHaveLength(columns.length);
+  });
+
+  it('are narrower where there are more cases', () => {
+    const cases = ['calm', 'storm', 'night'].map((id) => ({ id, name: id }));
+    const columns = columnsOf({ ...input, worksheet: { ...worksheet, cases } });
+    expect(columns).toHaveLength(8);
+    expect(leastTotal(columns, 930)).toBeLessThanOrEqual(930);
+    expect(leastTotal(columns, 1500)).toBeGreaterThan(930);
   });
 
   it('are named after their cases', () => {
