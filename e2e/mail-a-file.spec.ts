@@ -73,7 +73,7 @@ test('a file opened in a fresh profile, dropped there, and evaluated by the comm
   await sheet.open();
   await sheet.beginFromStarter('Harbour buoy uplink');
   // An edit of one's own, so that it is not the example that comes back.
-  await sheet.account.retype('SINR_req', 'entry', '6.25 dB');
+  await sheet.account.retype('L_quay', 'entry', '6.25 dB');
   await sheet.expectSaved();
   const sent = await sheet.account.readAll();
   expect(sent.length).toBeGreaterThanOrEqual(25);

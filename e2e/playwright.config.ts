@@ -36,6 +36,7 @@ export default defineConfig({
     trace: 'off',
     video: 'off',
     screenshot: 'off',
+    actionTimeout: 30_000,
     viewport: { width: 1280, height: 800 },
     launchOptions: { executablePath: process.env['CHROMIUM'] ?? '/usr/bin/chromium', args: chromiumFlags },
   },

@@ -1,6 +1,6 @@
 /** Starting the page: the store, the settings, and the worksheet that was open last. */
 import { WORKSHEET_VERSION } from '../exchange';
-import { openStore, type StoreTrouble } from '../store';
+import type { StoreTrouble } from '../store';
 import { Session } from './session.svelte';
 import { Settings } from './settings.svelte';
 import { worksheetOfThisTab } from './tab-memory';
@@ -8,6 +8,8 @@ import { worksheetOfThisTab } from './tab-memory';
 /** The session of this page, with the worksheet that this tab, or else the last one, had open; or with an empty one. */
 export async function startSession(): Promise<Session> {
   let session: Session | null = null;
+  // The database library is a fifth of all script: it comes by itself, so that the page does not wait for it to be read.
+  const { openStore } = await import('../store/open-store');
   const opened = await openStore({
     formatVersion: WORKSHEET_VERSION,
     onTrouble: (trouble) => {

@@ -261,8 +261,9 @@ export class GridModel {
     cell?.scrollIntoView({ block: 'nearest', inline: 'nearest' });
   }
 
-  /** True when the browser's focus is in the grid. */
+  /** True when the browser's focus is in a row of the grid, and not, for instance, in its headings. */
   get hasFocus(): boolean {
-    return this.view.scroller?.contains(document.activeElement) ?? false;
+    const row = document.activeElement?.closest('[data-row]') ?? null;
+    return row !== null && (this.view.scroller?.contains(row) ?? false);
   }
 }
