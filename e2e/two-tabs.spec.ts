@@ -81,7 +81,7 @@ test('two tabs on different worksheets are not in each other’s way', async ({ 
   await beginWorksheet(first);
   const { sheet: second } = await openTab(context);
   const worksheets = await second.showWorksheets();
-  await worksheets.dialog.getByRole('button', { name: 'New worksheet' }).click();
+  await worksheets.begin();
   await second.account.draft('Q', 'Another level', '-50 dBm');
   await second.expectSaved();
   await first.account.retype('G', 'entry', '21 dB');

@@ -146,6 +146,13 @@ export class WorksheetsDialog {
     this.entries = this.dialog.getByRole('region', { name: 'Kept in this browser' }).getByRole('listitem');
   }
 
+  /** Begins a new worksheet; the dialog closes. */
+  async begin(): Promise<void> {
+    // A worksheet that has not been named yet is listed under the same words, further down.
+    await this.dialog.getByRole('button', { name: 'New worksheet', exact: true }).first().click();
+    await expect(this.dialog).toBeHidden();
+  }
+
   /** The entry of a worksheet. */
   entry(title: string): Locator {
     return this.entries.filter({ has: this.dialog.page().getByRole('group', { name: `“${title}”`, exact: true }) });

@@ -3,12 +3,14 @@
 /** The candidate within a few keystrokes of `name`, case apart; undefined when none is close. */
 export function nearestName(name: string, candidates: Iterable<string>): string | undefined {
   const wanted = name.toLowerCase();
-  const allowed = Math.max(1, Math.floor(name.length / 3));
+  // Of one letter only the same in another case is near; of two the first letter has to be right.
+  const allowed = name.length === 1 ? 0 : Math.max(1, Math.floor(name.length / 3));
   let best: string | undefined;
   let bestDistance = allowed + 1;
   let bestExact = Infinity;
   for (const candidate of candidates) {
     if (Math.abs(candidate.length - name.length) > allowed) continue;
+    if (name.length === 2 && candidate[0]?.toLowerCase() !== wanted[0]) continue;
     const distance = editDistance(wanted, candidate.toLowerCase(), bestDistance);
     if (distance > bestDistance || distance > allowed) continue;
     // Of equally near ones the nearest in case as well: Mhz is MHz and not mHz.

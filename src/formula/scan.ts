@@ -247,6 +247,7 @@ export function readPlainQuantity(text: string): { figure: number; unit: Unit | 
   const digits = /^[+-]?0*\.?0*(\d*)\.?(\d*)/.exec(number);
   const significant = ((digits?.[1] ?? '') + (digits?.[2] ?? '')).length;
   if (word === undefined) return { figure, unit: null, digits: significant };
-  const unit = findUnit(word);
+  // The word 1 stands for plain numbers in a line's unit; behind a number it would be a slip.
+  const unit = word === '1' ? undefined : findUnit(word);
   return unit === undefined ? undefined : { figure, unit, digits: significant };
 }

@@ -21,10 +21,10 @@ export function caseOfColumn(column: string): string | undefined {
 }
 
 /** Least widths in CSS px; text columns share what is left. */
-const ROOMY = { margin: 66, symbol: 92, label: 140, entry: 180, value: 122, requirement: 136, source: 130, note: 130 };
+const ROOMY = { margin: 66, symbol: 92, label: 146, entry: 176, value: 126, requirement: 136, source: 130, note: 130 };
 
 /** The same where there are so many cases that the account would have to be scrolled sideways. */
-const TIGHT = { ...ROOMY, label: 118, entry: 148 };
+const TIGHT = { ...ROOMY, label: 114, entry: 140 };
 
 type Widths = typeof ROOMY;
 
@@ -70,7 +70,7 @@ const widthsFor = (columns: readonly Column[], width: number): Widths =>
 /** The value of `grid-template-columns` for columns in a width in CSS px. */
 export function gridTemplate(columns: readonly Column[], width: number): string {
   const widths = widthsFor(columns, width);
-  const shares: Partial<Record<Column, string>> = { label: '1.1fr', entry: '1.5fr', source: '0.8fr', note: '0.8fr' };
+  const shares: Partial<Record<Column, string>> = { label: '1.3fr', entry: '1.4fr', source: '0.8fr', note: '0.8fr' };
   return columns
     .map((column) => {
       const least = `${String(widthOf(column, widths))}px`;
