@@ -1,7 +1,8 @@
 // Writes that fail: the page says so plainly, the worksheet can be saved as a file, and a retry brings it into storage.
-import type { Page } from '@playwright/test';
+import type { CDPSession, Page } from '@playwright/test';
 
 import { expect, test } from './fixtures';
+import { profileTest } from './own-browser';
 import type { WorksheetPage } from './pages/worksheet-page';
 
 async function begin(sheet: WorksheetPage): Promise<void> {
@@ -31,20 +32,24 @@ async function expectRecovered(sheet: WorksheetPage): Promise<void> {
   await expect(sheet.account.cell('P', 'entry')).toHaveText('-81 dBm');
 }
 
-test('no room left in the browser’s storage', async ({ sheet, page }) => {
-  await begin(sheet);
-  const protocol = await page.context().newCDPSession(page);
-  const { origin } = new URL(page.url());
-  await protocol.send('Storage.overrideQuotaForOrigin', { origin, quotaSize: 1 });
-  // The browser goes by the room that it saw last for as long as the database is open.
-  await page.reload();
-  await sheet.expectReady();
+profileTest('no room left in the browser’s storage', async ({ startAgain, baseURL }) => {
+  const seed = await startAgain();
+  await seed.account.draft('P', 'Level', '-80 dBm');
+  await seed.expectSaved();
+
+  // The browser goes by the room that it has seen last for a while, so the room is taken away before the page is opened.
+  const { origin } = new URL(baseURL ?? '');
+  let protocol: CDPSession | undefined;
+  const sheet = await startAgain(async (page) => {
+    protocol = await page.context().newCDPSession(page);
+    await protocol.send('Storage.overrideQuotaForOrigin', { origin, quotaSize: 1 });
+  });
   await sheet.account.retype('P', 'entry', '-81 dBm');
   await expectTold(sheet, /no room left/);
   // Trying again while there is no room changes nothing.
-  await page.getByRole('button', { name: 'Try again' }).click();
+  await sheet.page.getByRole('button', { name: 'Try again' }).click();
   await expect(sheet.saveState).toHaveText('NOT saved');
-  await protocol.send('Storage.overrideQuotaForOrigin', { origin });
+  await protocol?.send('Storage.overrideQuotaForOrigin', { origin });
   await expectRecovered(sheet);
 });
 

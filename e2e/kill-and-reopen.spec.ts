@@ -1,32 +1,8 @@
 // What the page has said to be saved is there after the browser was killed without warning.
-import { expect, test } from './fixtures';
-import { startOwnBrowser, type OwnBrowser } from './own-browser';
-import { WorksheetPage } from './pages/worksheet-page';
+import { expect } from './fixtures';
+import { profileTest } from './own-browser';
 
-interface Fixtures {
-  /** Starts the browser on this test's profile; kills the one before. */
-  readonly startAgain: () => Promise<WorksheetPage>;
-}
-
-const ownTest = test.extend<Fixtures>({
-  startAgain: async ({ launchOptions, baseURL }, use, testInfo) => {
-    const profile = testInfo.outputPath('profile');
-    let running: OwnBrowser | undefined;
-    await use(async () => {
-      await running?.kill();
-      const { executablePath = '', args = [] } = launchOptions;
-      running = await startOwnBrowser({ executablePath, args, profile });
-      await running.page.setViewportSize({ width: 1280, height: 800 });
-      await running.page.goto(baseURL ?? '');
-      const sheet = new WorksheetPage(running.page);
-      await sheet.expectReady();
-      return sheet;
-    });
-    await running?.kill();
-  },
-});
-
-ownTest('every edit that was said to be saved is there after the browser was killed', async ({ startAgain }) => {
+profileTest('every edit that was said to be saved is there after the browser was killed', async ({ startAgain }) => {
   const sheet = await startAgain();
   const { account } = sheet;
   await account.draft('P_tx', 'Transmit power', '33 dBm');
@@ -52,7 +28,7 @@ ownTest('every edit that was said to be saved is there after the browser was kil
   await expect(third.account.figure('P_rx')).toHaveText('−85.50 dBm');
 });
 
-ownTest('five times killed right after an edit was said to be saved: none is lost', async ({ startAgain }) => {
+profileTest('five times killed right after an edit was said to be saved: none is lost', async ({ startAgain }) => {
   const sheet = await startAgain();
   await sheet.account.draft('x', 'Counter', '0 dB');
   await sheet.expectSaved();

@@ -5,22 +5,25 @@ import { createInterface } from 'node:readline';
 
 import { chromium, type Browser, type Page } from '@playwright/test';
 
+import { test } from './fixtures';
+import { WorksheetPage } from './pages/worksheet-page';
+
 /** A running browser with one page in it. */
-export interface OwnBrowser {
+interface OwnBrowser {
   readonly page: Page;
   /** Ends every process of the browser at once, without a chance to write anything. */
   readonly kill: () => Promise<void>;
 }
 
 /** How a browser of the test's own is started: as the other tests start theirs. */
-export interface OwnBrowserOptions {
+interface OwnBrowserOptions {
   readonly executablePath: string;
   readonly args: readonly string[];
   readonly profile: string;
 }
 
 /** Starts a browser on a profile, in a process group of its own. */
-export async function startOwnBrowser({ executablePath, args, profile }: OwnBrowserOptions): Promise<OwnBrowser> {
+async function startOwnBrowser({ executablePath, args, profile }: OwnBrowserOptions): Promise<OwnBrowser> {
   const flags = ['--headless', '--remote-debugging-port=0', `--user-data-dir=${profile}`, '--no-default-browser-check'];
   const process = spawn(executablePath, [...args, ...flags, 'about:blank'], {
     detached: true,
@@ -56,3 +59,31 @@ async function kill(process: ChildProcess, browser: Browser): Promise<void> {
   globalThis.process.kill(-process.pid, 'SIGKILL');
   await Promise.all([hasEnded, isGone]);
 }
+
+interface Fixtures {
+  /**
+   * Opens the page in a browser on this test's profile; kills the one before. `first` is done before the page is opened.
+   */
+  readonly startAgain: (first?: (page: Page) => Promise<void>) => Promise<WorksheetPage>;
+}
+
+/** A test that starts and kills browsers on a profile of its own. */
+export const profileTest = test.extend<Fixtures>({
+  startAgain: async ({ launchOptions, baseURL }, use, testInfo) => {
+    const profile = testInfo.outputPath('profile');
+    const { executablePath = '', args = [] } = launchOptions;
+    let running: OwnBrowser | undefined;
+    await use(async (first = () => Promise.resolve()) => {
+      await running?.kill();
+      running = await startOwnBrowser({ executablePath, args, profile });
+      const { page } = running;
+      await page.setViewportSize({ width: 1280, height: 800 });
+      await first(page);
+      await page.goto(baseURL ?? '');
+      const sheet = new WorksheetPage(page);
+      await sheet.expectReady();
+      return sheet;
+    });
+    await running?.kill();
+  },
+});

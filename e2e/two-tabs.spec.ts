@@ -82,6 +82,8 @@ test('two tabs on different worksheets are not in each other’s way', async ({ 
   const { sheet: second } = await openTab(context);
   const worksheets = await second.showWorksheets();
   await worksheets.begin();
+  await second.account.newLine().click();
+  await second.account.press('Escape');
   await second.account.draft('Q', 'Another level', '-50 dBm');
   await second.expectSaved();
   await first.account.retype('G', 'entry', '21 dB');

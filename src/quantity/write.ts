@@ -44,6 +44,8 @@ export function writeFigure(value: number, unit: Unit, options: WritingOptions =
 
 /** A figure and its unit in one text, for sentences. */
 export function writeQuantity(value: number, unit: Unit, options: WritingOptions = {}): string {
+  // Findings quote inputs too, and one of them may be withheld.
+  if (Number.isNaN(value) || value === Infinity) return 'a withheld figure';
   const { text, unit: word } = writeFigure(value, unit, options);
   return word === '' ? text : `${text} ${word}`;
 }
