@@ -73,6 +73,9 @@ const unitTests: ViteUserConfig = {
   resolve: { alias },
   test: {
     allowOnly: false,
+    // A slow machine is no failure: only a test that hangs runs into this.
+    testTimeout: 120_000,
+    hookTimeout: 120_000,
     server: { deps: { inline: ['hot-formula-parser'] } },
     coverage: { provider: 'v8', include: ['src/**/*.ts'], reportsDirectory: 'node_modules/.cache/coverage' },
     projects: [
