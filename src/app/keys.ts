@@ -83,7 +83,14 @@ export const KEY_BINDINGS: readonly KeyBinding[] = [
   binding('page', 'Moving', 'search', 'Search symbols, labels, entries, notes', '/', 'Ctrl+Shift+F'),
 
   binding('grid', 'Lines', 'edit', 'Edit the cell (typing replaces it); on a section, rename it', 'Enter', 'F2'),
-  binding('grid', 'Lines', 'clear', 'Clear the cell; in a case, use the line’s own entry again', 'Delete', 'Backspace'),
+  binding(
+    'grid',
+    'Lines',
+    'clear',
+    'Clear the cell (in a case, use the line’s own entry again); delete several selected lines',
+    'Delete',
+    'Backspace',
+  ),
   binding('grid', 'Lines', 'insert-below', 'New line below', 'Ctrl+Enter', 'Insert'),
   binding('grid', 'Lines', 'insert-above', 'New line above', 'Ctrl+Shift+Enter', 'Shift+Insert'),
   binding('grid', 'Lines', 'new-section', 'New section below this one', 'Ctrl+Alt+Enter'),

@@ -40,8 +40,7 @@ import { Sheet } from './sheet.svelte';
 export type Panel = 'working' | 'findings' | 'none';
 
 /** The dialogs of the page; one at a time is open. */
-export type DialogName =
-  'worksheets' | 'about' | 'functions' | 'keys' | 'cases' | 'paste' | 'accept' | 'import' | 'print';
+export type DialogName = 'worksheets' | 'about' | 'functions' | 'keys' | 'paste' | 'accept' | 'import';
 
 /** A wish to have the cursor somewhere; the grid fulfils it. */
 export interface FocusRequest {

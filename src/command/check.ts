@@ -2,6 +2,8 @@
 import type { Answer, ExitCode, World } from './answer';
 import { exitCodeOf, repairText } from './evaluate';
 import { nameOfLine, openFile, type Opened } from './open';
+import { oneLine } from './plain-text';
+import { boundText, standingText } from './requirement-text';
 
 /** Checks files; the exit code is the worst. */
 export function checkFiles(files: readonly string[], world: World): Answer {
@@ -26,21 +28,12 @@ function report({ file, evaluation }: Opened): { lines: string[]; exitCode: Exit
   });
   for (const line of evaluation.lines()) {
     if (line.requirement === undefined) continue;
-    const bound =
-      line.requirement.atLeast === undefined
-        ? `at most ${line.requirement.atMost}`
-        : `at least ${line.requirement.atLeast}`;
-    for (const { id } of cases) {
-      const { requirement } = evaluation.reading(line.id, id);
-      const standing =
-        requirement === undefined
-          ? 'not known, the value is withheld'
-          : `${requirement.met ? 'met' : 'NOT MET'}, margin ${requirement.margin.toFixed(2)} ${requirement.unit}`;
-      lines.push(`${file}: ${id}: ${nameOfLine(evaluation, line)}: requirement ${bound}: ${standing}`);
-    }
+    const head = `${nameOfLine(evaluation, line)}: requirement ${boundText(line.requirement)}`;
+    for (const { id } of cases)
+      lines.push(`${file}: ${id}: ${head}: ${standingText(evaluation.reading(line.id, id))}`);
   }
   return {
-    lines: lines.map((line) => line.replace(/\s*\n\s*/g, ' ')),
+    lines: lines.map(oneLine),
     exitCode: exitCodeOf({ evaluation, cases, lines: evaluation.lines(), findings }),
   };
 }

@@ -1,10 +1,11 @@
 /** `evaluate`: figures, requirements and findings of a worksheet, as text, JSON, Markdown or CSV. */
 import type { Evaluation, LineFinding, Reading } from '../engine';
 import { fittingLinearUnit } from '../formula';
-import { linearValue, type LinearUnit, type Unit } from '../quantity';
+import { alternativeUnits, linearValue, type LinearUnit, type Unit } from '../quantity';
 import type { Case, Line } from '../worksheet';
 import type { Answer, ExitCode, World } from './answer';
 import { chooseCases, lineWithSymbol, nameOfLine, openFile } from './open';
+import { isUnmet } from './requirement-text';
 import { writeCsv, writeMarkdown, writeText } from './tables';
 
 export const FORMATS = ['text', 'json', 'markdown', 'csv'] as const;
@@ -56,14 +57,11 @@ function write(selection: Selection, format: Format): string {
   }
 }
 
-/** 1 when an error finding or an unmet requirement is among what was chosen. */
+/** 1 when an error finding or a requirement that is not met, or not known to be, is among what was chosen. */
 export function exitCodeOf({ evaluation, cases, lines, findings }: Omit<Selection, 'linear'>): ExitCode {
   const hasError = findings.some(({ severity }) => severity === 'error');
-  const isUnmet = lines.some(
-    ({ id, requirement }) =>
-      requirement !== undefined && cases.some((one) => evaluation.reading(id, one.id).requirement?.met === false),
-  );
-  return hasError || isUnmet ? 1 : 0;
+  const hasUnmet = lines.some((line) => cases.some(({ id }) => isUnmet(line, evaluation.reading(line.id, id))));
+  return hasError || hasUnmet ? 1 : 0;
 }
 
 /** The object of the contract. Maps are built without a prototype, since symbols are text from a file. */
@@ -105,23 +103,24 @@ function lineAsJson(evaluation: Evaluation, line: Line, cases: readonly Case[]):
     unit,
     quantity: valued?.kind?.kind ?? null,
     side: valued?.side?.side ?? null,
-    cases: Object.fromEntries(cases.map(({ id }, index) => [id, caseAsJson(readings[index], unit)])),
+    cases: Object.fromEntries(cases.map(({ id }, index) => [id, caseAsJson(line, readings[index], unit)])),
   };
 }
 
-function caseAsJson(reading: Reading | undefined, unit: string | null): unknown {
+function caseAsJson(line: Line, reading: Reading | undefined, unit: string | null): unknown {
   const figure = reading?.figure;
+  const requirement = line.requirement === undefined ? {} : { requirement: requirementAsJson(reading) };
   if (figure?.state !== 'value') {
     return {
       value: null,
       linear: null,
       linearUnit: null,
       ...(figure?.state === 'waiting' ? { waitsFor: figure.roots } : {}),
+      ...requirement,
     };
   }
   const { value } = figure;
   const linear = linearValue(value, figure.unit) ?? siValue(value, figure.unit);
-  const finite = (number: number): number | null => (Number.isFinite(number) ? number : null);
   return {
     value: finite(value),
     ...(value === -Infinity ? { noPower: true } : {}),
@@ -129,16 +128,17 @@ function caseAsJson(reading: Reading | undefined, unit: string | null): unknown 
     ...(figure.unit.word === unit ? {} : { unit: figure.unit.word }),
     linear: finite(linear.value),
     linearUnit: linear.unit,
-    ...(reading?.requirement === undefined
-      ? {}
-      : {
-          requirement: {
-            met: reading.requirement.met,
-            margin: reading.requirement.margin,
-            unit: reading.requirement.unit,
-          },
-        }),
+    ...requirement,
   };
+}
+
+/** JSON has no infinities: they are null, as what is not known is. */
+const finite = (number: number): number | null => (Number.isFinite(number) ? number : null);
+
+function requirementAsJson(reading: Reading | undefined): unknown {
+  if (reading?.requirement === undefined) return { met: null, margin: null, unit: null };
+  const { met, margin, unit } = reading.requirement;
+  return { met, margin: finite(margin), unit };
 }
 
 /** A linear figure in the SI unit of its dimension; rates per metre. */
@@ -148,6 +148,11 @@ function siValue(value: number, unit: Unit): { value: number; unit: string } {
   return { value: value * unit.factor + unit.shift, unit: siWord(unit) };
 }
 
+/** The word of the SI unit: the one with a prefix less its prefix (kbit/s is bit/s, not Hz), else that of the dimension. */
 function siWord(unit: LinearUnit): string {
-  return unit.factor === 1 && unit.shift === 0 ? unit.word : fittingLinearUnit(unit.dimension, []).word;
+  if (unit.factor === 1 && unit.shift === 0) return unit.word;
+  const plain = alternativeUnits(unit).find(
+    (other) => other.form === 'linear' && other.factor === 1 && other.shift === 0 && unit.word.endsWith(other.word),
+  );
+  return plain?.word ?? fittingLinearUnit(unit.dimension, []).word;
 }

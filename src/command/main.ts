@@ -3,10 +3,11 @@ import { readFileSync } from 'node:fs';
 import { run } from './run';
 
 // A reader that stops early (`| head`) is no error.
-process.stdout.on('error', (error: NodeJS.ErrnoException) => {
-  if (error.code !== 'EPIPE') throw error;
-  process.exit();
-});
+for (const stream of [process.stdout, process.stderr])
+  stream.on('error', (error: NodeJS.ErrnoException) => {
+    if (error.code !== 'EPIPE') throw error;
+    process.exit();
+  });
 
 const answer = run(process.argv.slice(2), { readFile: (path) => readFileSync(path) });
 process.stderr.write(answer.messages);

@@ -7,6 +7,8 @@ import { linearFigure, linearValue, writeQuantity } from '../quantity';
 import { CAUTIONS } from '../review';
 import { isLinesSection, type Line } from '../worksheet';
 import type { Selection } from './evaluate';
+import { oneLine } from './plain-text';
+import { boundText, standingText } from './requirement-text';
 
 /** A figure in words, also when there is none. */
 export function figureText(figure: Figure, line: Line, linear: boolean): string {
@@ -36,21 +38,6 @@ interface Row {
   readonly cells: readonly string[];
 }
 
-const boundText = ({ requirement }: Line): string =>
-  requirement === undefined
-    ? ''
-    : requirement.atLeast !== undefined
-      ? `at least ${requirement.atLeast}`
-      : `at most ${requirement.atMost}`;
-
-function requirementText({ evaluation }: Selection, line: Line, caseId: string): string {
-  const reading = evaluation.reading(line.id, caseId).requirement;
-  if (line.requirement === undefined) return '';
-  if (reading === undefined) return 'not known';
-  const size = `${Math.abs(reading.margin).toFixed(2)} ${reading.unit}`;
-  return reading.met ? `met, margin ${size}` : `NOT MET, ${size} short`;
-}
-
 function rowsOf(selection: Selection, lines: readonly Line[]): Row[] {
   const { evaluation, cases, linear } = selection;
   return lines.map((line) => ({
@@ -60,7 +47,7 @@ function rowsOf(selection: Selection, lines: readonly Line[]): Row[] {
       line.label,
       ...cases.map(({ id }) => figureText(evaluation.reading(line.id, id).figure, line, linear)),
       requirementCell(selection, line),
-    ],
+    ].map(oneLine),
   }));
 }
 
@@ -68,19 +55,21 @@ function rowsOf(selection: Selection, lines: readonly Line[]): Row[] {
 function requirementCell(selection: Selection, line: Line): string {
   if (line.requirement === undefined) return '';
   const cases = selection.cases.map(
-    ({ id, name }) => `${selection.cases.length > 1 ? `${name}: ` : ''}${requirementText(selection, line, id)}`,
+    ({ id, name }) =>
+      `${selection.cases.length > 1 ? `${name}: ` : ''}${standingText(selection.evaluation.reading(line.id, id))}`,
   );
-  return `${boundText(line)}; ${cases.join('; ')}`;
+  return `${boundText(line.requirement)}; ${cases.join('; ')}`;
 }
 
-const headOf = ({ cases }: Selection): string[] => ['Symbol', 'Line', ...cases.map(({ name }) => name), 'Requirement'];
+const headOf = ({ cases }: Selection): string[] =>
+  ['Symbol', 'Line', ...cases.map(({ name }) => name), 'Requirement'].map(oneLine);
 
 /** Lines by section, sections without chosen lines left out. */
 function sectionsOf({ evaluation, lines }: Selection): { title: string; lines: readonly Line[] }[] {
   const chosen = new Set(lines);
   return evaluation.worksheet.sections
     .filter(isLinesSection)
-    .map(({ title, lines: all }) => ({ title, lines: all.filter((line) => chosen.has(line)) }))
+    .map(({ title, lines: all }) => ({ title: oneLine(title), lines: all.filter((line) => chosen.has(line)) }))
     .filter((section) => section.lines.length > 0);
 }
 
@@ -89,7 +78,8 @@ function findingTexts({ evaluation, findings, cases }: Selection): string[] {
     const line = evaluation.line(finding.lineId);
     const inCases = finding.caseIds.length === cases.length ? '' : ` (${finding.caseIds.join(', ')})`;
     const accepted = finding.accepted === undefined ? '' : ` Accepted: ${finding.accepted}`;
-    return `${finding.severity} ${finding.code}: ${line?.symbol || line?.label || finding.lineId}${inCases}: ${finding.message}${accepted}`;
+    const name = line?.symbol || line?.label || finding.lineId;
+    return oneLine(`${finding.severity} ${finding.code}: ${name}${inCases}: ${finding.message}${accepted}`);
   });
 }
 
@@ -113,7 +103,7 @@ export function writeText(selection: Selection): string {
       .trimEnd();
   const findings = findingTexts(selection);
   return [
-    selection.evaluation.worksheet.title,
+    oneLine(selection.evaluation.worksheet.title),
     '',
     write(head),
     ...sections.flatMap(({ title, rows }) => ['', title, ...rows.map(({ cells }) => write(cells))]),
@@ -124,7 +114,7 @@ export function writeText(selection: Selection): string {
   ].join('\n');
 }
 
-const escapeMarkdown = (text: string): string => text.replace(/[\\`*_[\]<>|#]/g, '\\$&').replace(/\s*\n\s*/g, ' ');
+const escapeMarkdown = (text: string): string => oneLine(text).replace(/[\\`*_[\]<>|#&~$]/g, '\\$&');
 
 /** A Markdown document: a table a section, findings and cautions as lists. */
 export function writeMarkdown(selection: Selection): string {
@@ -152,7 +142,8 @@ export function writeMarkdown(selection: Selection): string {
   ].join('\n');
 }
 
-const LOOKS_LIKE_FORMULA = /^[\s]*[=+\-@\t\r\n＝＋－＠]/;
+// Blanks and characters that are not seen may stand ahead of the sign.
+const LOOKS_LIKE_FORMULA = /^[\s\p{C}]*[=+\-@\t\r\n＝＋－＠]/u;
 
 const csvText = (text: string): string => csvCell(LOOKS_LIKE_FORMULA.test(text) ? `'${text}` : text);
 const csvCell = (text: string): string => (/[",\r\n]/.test(text) ? `"${text.replaceAll('"', '""')}"` : text);
@@ -196,9 +187,9 @@ export function writeCsv(selection: Selection): string {
                 csvText(other?.unit ?? ''),
               ]
             : []),
-          csvText(boundText(line)),
+          csvText(line.requirement === undefined ? '' : boundText(line.requirement)),
           requirement === undefined ? '' : requirement.met ? 'yes' : 'no',
-          requirement === undefined ? '' : String(requirement.margin),
+          requirement === undefined || !Number.isFinite(requirement.margin) ? '' : String(requirement.margin),
           csvText(requirement?.unit ?? ''),
           csvText(codes.join(' ')),
         ];

@@ -113,7 +113,8 @@ function refuseDimension(
   const [firstType] = types;
   const strayType = types[stray];
   if (first === undefined || operand === undefined || firstType === undefined || strayType === undefined) return;
-  if (differByBandwidth(firstType.dimension, strayType.dimension)) {
+  // Of powers, fluxes and fields, which hold the kilogram; C/N beside C/N₀ is a matter of dimension alone.
+  if (firstType.dimension[0] !== 0 && differByBandwidth(firstType.dimension, strayType.dimension)) {
     const level = levelDimension(types, firstType.dimension);
     const perHertz = (index: number): boolean => !sameDimension(types[index]?.dimension ?? level, level);
     const densities = operands.filter((_, index) => perHertz(index));

@@ -253,4 +253,5 @@ function wrongArgument(
   });
 }
 
-const article = (noun: string): string => `${/^[aeiou]/.test(noun) ? 'an' : 'a'} ${noun}`;
+const article = (noun: string): string =>
+  /^(its|the) /.test(noun) ? noun : `${/^[aeiou]/.test(noun) ? 'an' : 'a'} ${noun}`;

@@ -195,8 +195,17 @@ function scanLiteral(text: string, at: number, start: number, sign: 1 | -1): Res
   if (!Number.isFinite(figure)) return fault(at, end, 'The number is too large.');
   const unitAt = text[end] === ' ' || text[end] === '\u00a0' || text[end] === '\u202f' ? end + 1 : end;
   const found = matchUnit(text, unitAt);
-  if (found !== undefined)
+  if (found !== undefined) {
+    if (found.unit.form === 'linear' && /^\s*\^/.test(text.slice(found.end, found.end + 8))) {
+      const { word } = found.unit;
+      return fault(
+        at,
+        found.end,
+        `A power behind ${number} ${word} could be meant of the unit or of the whole. Write (${number} ${word})^2, or ${number} * (1 ${word})^2.`,
+      );
+    }
     return ok({ type: 'literal', start, end: found.end, figure: sign * figure, unit: found.unit });
+  }
   NAME.lastIndex = unitAt;
   const word = NAME.exec(text)?.[0];
   if (word !== undefined) {

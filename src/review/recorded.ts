@@ -8,17 +8,20 @@ import type { Worksheet } from '../worksheet';
 
 /** The values of required lines now, as the file records them; undefined when no line is required. */
 export function recordedValues(evaluation: Evaluation): Worksheet['recorded'] {
-  const recorded: Record<string, Record<string, string>> = {};
-  for (const { id, symbol, requirement } of evaluation.lines()) {
-    if (requirement === undefined || symbol === '' || evaluation.lineOf(symbol)?.id !== id) continue;
-    const values: Record<string, string> = {};
-    for (const { id: caseId } of evaluation.worksheet.cases) {
-      const text = valueText(evaluation, id, caseId);
-      if (text !== undefined) values[caseId] = text;
-    }
-    recorded[symbol] = values;
-  }
-  return Object.keys(recorded).length === 0 ? undefined : recorded;
+  const recorded = evaluation
+    .lines()
+    .filter(({ id, symbol, requirement }) => requirement !== undefined && evaluation.lineOf(symbol)?.id === id)
+    .map(({ id, symbol }) => [symbol, valuesOf(evaluation, id)] as const);
+  return recorded.length === 0 ? undefined : Object.fromEntries(recorded);
+}
+
+function valuesOf(evaluation: Evaluation, lineId: string): Readonly<Record<string, string>> {
+  return Object.fromEntries(
+    evaluation.worksheet.cases.flatMap(({ id: caseId }) => {
+      const text = valueText(evaluation, lineId, caseId);
+      return text === undefined ? [] : [[caseId, text] as const];
+    }),
+  );
 }
 
 function valueText(evaluation: Evaluation, lineId: string, caseId: string): string | undefined {

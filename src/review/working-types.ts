@@ -7,14 +7,15 @@ export type Piece =
   | { readonly type: 'symbol'; readonly symbol: string; readonly lineId?: string }
   | { readonly type: 'figure'; readonly text: string; readonly unit: string; readonly lineId?: string };
 
-export type StepTitle = 'in symbols' | 'with values' | 'in linear terms' | 'result';
+/** `as entered` heads quantities and entries that cannot be read, in place of `in symbols`. */
+export type StepTitle = 'as entered' | 'in symbols' | 'with values' | 'in linear terms' | 'result';
 
 export interface WorkingStep {
   readonly title: StepTitle;
   readonly pieces: readonly Piece[];
 }
 
-/** Something the line rests on. `share` is its part of a sum of powers, 0 to 1. */
+/** Something the line rests on. `share` is its part of a sum of powers; what is taken off has a negative one. */
 export interface WorkingTerm {
   readonly lineId?: string;
   readonly symbol: string;

@@ -28,7 +28,7 @@ const table = (record: PublishedRecord, means = false): string =>
   printed(record)
     .flatMap((line, at) => {
       const value = means ? (line.printed_mean ?? line.value) : line.value;
-      return value === null ? [] : [`b${at} = ${value} ${unitOf(line)} # ${line.name.replace(/@|=>|!/g, ' ')}`];
+      return value === null ? [] : [`b${at} = ${value} ${unitOf(line).replace(/^1$/, '')} # ${line.name.replace(/@|=>|!/g, ' ')}`];
     })
     .join('\n');
 

@@ -16,7 +16,7 @@ function show() {
   document.body.append(anchor);
   const item = (label: string) => ({ label, run: () => chosen(label) as unknown as undefined });
   const items = [item('Rename'), { ...item('Move'), disabled: true }, item('Remove')];
-  render(Menu, { items, label: 'Case', anchor, onclose: closed });
+  render(Menu, { props: { items, label: 'Case', anchor, onclose: closed } });
   return { chosen, closed, anchor };
 }
 
