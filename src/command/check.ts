@@ -29,8 +29,7 @@ function report({ file, evaluation }: Opened): { lines: string[]; exitCode: Exit
   for (const line of evaluation.lines()) {
     if (line.requirement === undefined) continue;
     const head = `${nameOfLine(evaluation, line)}: requirement ${boundText(line.requirement)}`;
-    for (const { id } of cases)
-      lines.push(`${file}: ${id}: ${head}: ${standingText(evaluation.reading(line.id, id))}`);
+    for (const { id } of cases) lines.push(`${file}: ${id}: ${head}: ${standingText(evaluation.reading(line.id, id))}`);
   }
   return {
     lines: lines.map(oneLine),

@@ -1,37 +1,60 @@
 /** `explain`: the working of a line, in words for a terminal. */
-import { workingOf, type Piece, type Working } from '../review';
-import type { Case } from '../worksheet';
+import type { LineFinding } from '../engine';
+import { RADIATION_CAUTION, tellsRadiation, workingOf, type Piece, type Working, type WorkingTerm } from '../review';
+import type { Case, Line } from '../worksheet';
 import type { Answer, World } from './answer';
 import { exitCodeOf } from './evaluate';
-import { chooseCases, lineWithSymbol, openFile } from './open';
+import { chooseCases, lineWithSymbol, nameOfLine, openFile } from './open';
+import { oneLine } from './plain-text';
+import { boundText, standingText } from './requirement-text';
 import { figureText } from './tables';
 
-/** The working of a line in the chosen cases, with its findings. */
+/** The working of a line in the chosen cases, with its findings. Cases in which nothing differs are told together. */
 export function explainLine(file: string, symbol: string, wanted: readonly string[], world: World): Answer {
   const opened = openFile(file, world);
   const { evaluation } = opened;
   const line = lineWithSymbol(opened, symbol);
   const cases = chooseCases(opened, wanted);
   const findings = evaluation.findings(line.id).filter(({ caseIds }) => cases.some(({ id }) => caseIds.includes(id)));
-  const workings = cases.flatMap((one) => {
-    const working = workingOf(evaluation, line.id, one.id);
-    return working === undefined ? [] : [writeWorking(working, one, figureText(working.reading.figure, line, true))];
-  });
-  const told = findings.map(
-    ({ severity, code, message, accepted }) =>
-      `${severity} ${code}: ${message}${accepted === undefined ? '' : ` Accepted: ${accepted}`}\n`,
-  );
-  const users = evaluation.usedBy(line.id).map((id) => evaluation.line(id)?.symbol || evaluation.line(id)?.label || id);
+  const nameOf = (id: string): string => {
+    const other = evaluation.line(id);
+    return other === undefined ? id : nameOfLine(evaluation, other);
+  };
+  const told = new Map<string, string[]>();
+  for (const { id, name } of cases) {
+    const working = workingOf(evaluation, line.id, id);
+    if (working === undefined) continue;
+    const text = writeWorking(working, line).join('\n');
+    told.set(text, [...(told.get(text) ?? []), name]);
+  }
+  const title = `${nameOf(line.id)}${line.label === '' ? '' : ` — ${line.label}`}`;
+  const workings = [...told].map(([text, names]) => `${oneLine(`${title}, ${inWords(names)}`)}: ${text}\n`);
+  const { figure } = evaluation.reading(line.id, cases[0]?.id ?? '');
+  const users = evaluation.usedBy(line.id).map(nameOf);
   const notes = [
-    ...(line.source === undefined ? [] : [`source: ${line.source}\n`]),
-    ...(line.note === undefined ? [] : [`note: ${line.note}\n`]),
-    ...(users.length === 0 ? [] : [`used by: ${users.join(', ')}\n`]),
+    ...findings.map((finding) => findingText(finding, cases)),
+    ...(line.source === undefined ? [] : [`source: ${line.source}`]),
+    ...(line.note === undefined ? [] : [`note: ${line.note}`]),
+    ...(users.length === 0 ? [] : [`used by: ${users.join(', ')}`]),
+    ...(tellsRadiation(line, figure.state === 'value' ? figure.unit : undefined)
+      ? [`caution: ${RADIATION_CAUTION}`]
+      : []),
   ];
   return {
-    results: [workings.join('\n'), ...told, ...notes].join(''),
+    results: `${workings.join('\n')}${notes.map((note) => `${oneLine(note)}\n`).join('')}`,
     messages: opened.messages,
     exitCode: exitCodeOf({ evaluation, cases, lines: [line], findings }),
   };
+}
+
+/** `Calm`, `Calm and Storm`, `Calm, Storm and Ice`. */
+const inWords = (names: readonly string[]): string =>
+  names.length < 2 ? names.join('') : `${names.slice(0, -1).join(', ')} and ${names.at(-1) ?? ''}`;
+
+function findingText({ severity, code, message, accepted, caseIds }: LineFinding, cases: readonly Case[]): string {
+  const names = cases.filter(({ id }) => caseIds.includes(id)).map(({ name }) => name);
+  const where = names.length === cases.length ? '' : ` in ${inWords(names)}`;
+  return `${severity} ${code}${where}: ${message}${accepted === undefined ? '' : ` Accepted: ${accepted}`}`;
 }
 
 const pieceText = (piece: Piece): string => {
@@ -45,33 +68,45 @@ const pieceText = (piece: Piece): string => {
   }
 };
 
-function writeWorking(working: Working, { name }: Case, result: string): string {
-  const { symbol, label, steps, terms, shares, remarks, reading } = working;
-  const lines = [`${symbol}${label === '' ? '' : ` — ${label}`}, ${name}: ${result}`];
-  const width = Math.max(0, ...steps.map(({ title }) => title.length));
-  for (const { title, pieces } of steps)
-    if (title !== 'result') lines.push(`  ${title.padEnd(width)}  ${pieces.map(pieceText).join('')}`);
-  if (terms.length > 0) {
-    lines.push(shares ? '  contributions' : '  rests on');
-    const names = Math.max(...terms.map((term) => term.symbol.length));
-    const figures = Math.max(...terms.map(({ text, unit }) => `${text} ${unit}`.length));
-    for (const term of terms) {
-      const share = term.share === undefined ? '' : `${(term.share * 100).toFixed(1)} %`.padStart(9);
-      lines.push(
-        `    ${term.symbol.padEnd(names)}  ${`${term.text} ${term.unit}`.padStart(figures)}${share}  ${term.label}`.trimEnd(),
-      );
-    }
-  }
-  if (reading.requirement !== undefined) {
-    const { bound, limit, met, margin, unit } = reading.requirement;
-    lines.push(
-      `  requirement: ${bound} ${String(limit)} ${unit === 'dB' && reading.figure.state === 'value' ? reading.figure.unit.word : unit}: ${met ? 'met' : 'NOT MET'}, margin ${margin.toFixed(2)} ${unit}`,
-    );
-  }
-  if (reading.kind !== undefined)
-    lines.push(
-      `  kind: ${reading.side === undefined ? '' : `${reading.side.side} `}${reading.kind.kind} (${reading.kind.origin === 'declared' ? 'declared' : `assumed from the ${reading.kind.origin}`})`,
-    );
-  for (const remark of remarks) lines.push(`  ${remark}`);
-  return `${lines.join('\n')}\n`;
+/** The figure, and below it the lines of the working. */
+function writeWorking({ steps, terms, shares, remarks, reading }: Working, line: Line): string[] {
+  const shown = steps.filter(({ title }) => title !== 'result');
+  const width = Math.max(0, ...shown.map(({ title }) => title.length));
+  const { kind, side } = reading;
+  const lines = [
+    figureText(reading.figure, line, true),
+    ...shown.map(({ title, pieces }) => `${title.padEnd(width)}  ${pieces.map(pieceText).join('')}`),
+    ...(terms.length === 0 ? [] : [shares ? 'contributions' : 'rests on', ...writeTerms(terms)]),
+    ...(line.requirement === undefined
+      ? []
+      : [`requirement: ${boundText(line.requirement)}: ${standingText(reading)}`]),
+    ...(kind === undefined
+      ? []
+      : [
+          `kind: ${side === undefined ? '' : `${side.side} `}${kind.kind} (${kind.origin === 'declared' ? 'declared' : `assumed from the ${kind.origin}`})`,
+        ]),
+    ...remarks,
+  ];
+  return lines.map((text, index) => `${index === 0 ? '' : '  '}${oneLine(text)}`);
+}
+
+function writeTerms(terms: readonly WorkingTerm[]): string[] {
+  const rows = terms.map(({ symbol, text, unit, share, label }) => ({
+    symbol,
+    figure: `${text} ${unit}`,
+    share: share === undefined ? '' : shareText(share),
+    label,
+  }));
+  const widest = (column: 'symbol' | 'figure' | 'share'): number => Math.max(...rows.map((row) => row[column].length));
+  const [symbols, figures, shares] = [widest('symbol'), widest('figure'), widest('share')];
+  const shareWidth = shares === 0 ? 0 : Math.max(9, shares + 2);
+  return rows.map(({ symbol, figure, share, label }) =>
+    `  ${symbol.padEnd(symbols)}  ${figure.padStart(figures)}${share.padStart(shareWidth)}  ${label}`.trimEnd(),
+  );
+}
+
+/** A share in per cent; one that would read as none at all is said to be small. */
+function shareText(share: number): string {
+  const text = `${(share * 100).toFixed(1)} %`.replace('-', '−');
+  return share !== 0 && /^−?0\.0 /.test(text) ? 'under 0.1 %' : text;
 }

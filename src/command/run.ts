@@ -24,7 +24,9 @@ Exit 0: computed, no error finding, every requirement met. 1: computed, but an e
 /** Runs one command line (without program names). Never throws for anything that arguments or files can hold. */
 export function run(words: readonly string[], world: World): Answer {
   const [command, ...rest] = words;
+  const asksForHelp = rest.includes('--help') && !rest.includes('--');
   try {
+    if (asksForHelp) return { results: USAGE, messages: '', exitCode: 0 };
     switch (command) {
       case 'evaluate':
         return evaluate(rest, world);

@@ -91,6 +91,7 @@ const LINEAR_WORDS: readonly (readonly [decibelWord: string, base: LinearBase])[
   ['dBA/m', { word: 'A/m', prefixes: true }],
   ['dBµA', { word: 'A', prefixes: true }],
   ['dBW/m²', { word: 'W/m²', prefixes: true }],
+  ['dBW/m²/Hz', { word: 'W/m²/Hz', prefixes: false }],
   ['dBHz', { word: 'Hz', prefixes: true }],
   ['dBK', { word: 'K', prefixes: false }],
   ['dBΩ', { word: 'Ω', prefixes: true }],

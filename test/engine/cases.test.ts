@@ -83,7 +83,10 @@ describe('cases', () => {
 
   it('an override without a unit of its own takes the line’s', () => {
     const live = new Live('a = 10 dBm @ rain: 7\nb = a + 1 dB', 'clear', 'rain');
-    expect([live.figure('a', 'rain'), live.value('b', 'rain')]).toMatchObject([{ state: 'value', value: 7, unit: { word: 'dBm' } }, 8]);
+    expect([live.figure('a', 'rain'), live.value('b', 'rain')]).toMatchObject([
+      { state: 'value', value: 7, unit: { word: 'dBm' } },
+      8,
+    ]);
   });
 
   it('come and go', () => {
@@ -94,13 +97,18 @@ describe('cases', () => {
     expect([live.value('d', 'worst'), live.value('d', 'rain')]).toEqual([7, 16]);
     live.overrides('a', { rain: '10 dB', worst: '30 dB' });
     expect(live.value('d', 'worst')).toBe(36);
-    live.edit({ kind: 'set-line', lineId: live.line('a').id, field: 'byCase', value: { worst: '30 dB' } }, { kind: 'remove-case', caseId: 'rain' });
+    live.edit(
+      { kind: 'set-line', lineId: live.line('a').id, field: 'byCase', value: { worst: '30 dB' } },
+      { kind: 'remove-case', caseId: 'rain' },
+    );
     expect([live.value('d', 'clear'), live.value('d', 'worst')]).toEqual([7, 36]);
   });
 
   it('tell a finding once, with the cases that have it', () => {
     const live = new Live('P = 10 dBm\nQ = 7 dBm\nR = P - 3 dB @ rain: P + Q @ worst: P + Q', 'clear', 'rain', 'worst');
-    expect(live.evaluation.findings(live.line('R').id).map(({ code, caseIds }) => [code, caseIds])).toEqual([['levels-summed', ['rain', 'worst']]]);
+    expect(live.evaluation.findings(live.line('R').id).map(({ code, caseIds }) => [code, caseIds])).toEqual([
+      ['levels-summed', ['rain', 'worst']],
+    ]);
   });
 
   it('keep findings apart whose figures differ', () => {
@@ -113,9 +121,15 @@ describe('cases', () => {
 });
 
 describe('accepted findings', () => {
-  const accepted = (live: Live): unknown => live.evaluation.findings(live.line('R').id).map(({ code, accepted: reason }) => [code, reason]);
+  const accepted = (live: Live): unknown =>
+    live.evaluation.findings(live.line('R').id).map(({ code, accepted: reason }) => [code, reason]);
   const accept = (live: Live, code: string, entry: string): void => {
-    live.edit({ kind: 'set-line', lineId: live.line('R').id, field: 'accepted', value: [{ code, entry, reason: 'referred back' }] });
+    live.edit({
+      kind: 'set-line',
+      lineId: live.line('R').id,
+      field: 'accepted',
+      value: [{ code, entry, reason: 'referred back' }],
+    });
   };
 
   it('carry their reason', () => {
@@ -147,7 +161,9 @@ describe('accepted findings', () => {
   it('hold in the cases that have that entry', () => {
     const live = new Live('P = 10 dBm\nL_1 = 3 dB\nL_2 = 4 dB\nR = P + L_1 @ rain: P + L_2', 'clear', 'rain');
     accept(live, 'loss-added', 'P + L_1');
-    expect(live.evaluation.findings(live.line('R').id).map(({ caseIds, accepted: reason }) => [caseIds, reason])).toEqual([
+    expect(
+      live.evaluation.findings(live.line('R').id).map(({ caseIds, accepted: reason }) => [caseIds, reason]),
+    ).toEqual([
       [['clear'], 'referred back'],
       [['rain'], undefined],
     ]);
@@ -162,17 +178,61 @@ describe('requirements', () => {
 
   it.each([
     ['at least, met', 'M = 5 dB require >= 3 dB', { bound: 'at least', limit: 3, met: true, margin: 2, unit: 'dB' }],
-    ['at least, missed', 'M = 1 dB require >= 3 dB', { bound: 'at least', limit: 3, met: false, margin: -2, unit: 'dB' }],
-    ['at least, met exactly', 'M = 3 dB require >= 3 dB', { bound: 'at least', limit: 3, met: true, margin: 0, unit: 'dB' }],
-    ['at most, met', 'M = -95 dBm require <= -90 dBm', { bound: 'at most', limit: -90, met: true, margin: 5, unit: 'dB' }],
-    ['at most, missed', 'M = -85 dBm require <= -90 dBm', { bound: 'at most', limit: -90, met: false, margin: -5, unit: 'dB' }],
-    ['over another reference', 'M = 40 dBm require >= 8 dBW', { bound: 'at least', limit: 38, met: true, margin: 2, unit: 'dB' }],
-    ['a linear bound on decibels', 'M = 40 dBm require >= 1 W', { bound: 'at least', limit: 30, met: true, margin: 10, unit: 'dB' }],
-    ['a decibel bound on watts', 'M = 2 W require >= 30 dBm', { bound: 'at least', limit: 1, met: true, margin: 1, unit: 'W' }],
-    ['a bare number has the line’s unit', 'M = 5 MHz require >= 4', { bound: 'at least', limit: 4, met: true, margin: 1, unit: 'MHz' }],
-    ['in another prefix', 'M = 5 MHz require <= 6000 kHz', { bound: 'at most', limit: 6, met: true, margin: 1, unit: 'MHz' }],
-    ['with a decimal comma', 'M = 5 dB require >= 2,5 dB', { bound: 'at least', limit: 2.5, met: true, margin: 2.5, unit: 'dB' }],
-    ['of degrees', 'M = 300 K require <= 30 °C', { bound: 'at most', limit: 303.15, met: true, margin: 3.1499999999999773, unit: 'K' }],
+    [
+      'at least, missed',
+      'M = 1 dB require >= 3 dB',
+      { bound: 'at least', limit: 3, met: false, margin: -2, unit: 'dB' },
+    ],
+    [
+      'at least, met exactly',
+      'M = 3 dB require >= 3 dB',
+      { bound: 'at least', limit: 3, met: true, margin: 0, unit: 'dB' },
+    ],
+    [
+      'at most, met',
+      'M = -95 dBm require <= -90 dBm',
+      { bound: 'at most', limit: -90, met: true, margin: 5, unit: 'dB' },
+    ],
+    [
+      'at most, missed',
+      'M = -85 dBm require <= -90 dBm',
+      { bound: 'at most', limit: -90, met: false, margin: -5, unit: 'dB' },
+    ],
+    [
+      'over another reference',
+      'M = 40 dBm require >= 8 dBW',
+      { bound: 'at least', limit: 38, met: true, margin: 2, unit: 'dB' },
+    ],
+    [
+      'a linear bound on decibels',
+      'M = 40 dBm require >= 1 W',
+      { bound: 'at least', limit: 30, met: true, margin: 10, unit: 'dB' },
+    ],
+    [
+      'a decibel bound on watts',
+      'M = 2 W require >= 30 dBm',
+      { bound: 'at least', limit: 1, met: true, margin: 1, unit: 'W' },
+    ],
+    [
+      'a bare number has the line’s unit',
+      'M = 5 MHz require >= 4',
+      { bound: 'at least', limit: 4, met: true, margin: 1, unit: 'MHz' },
+    ],
+    [
+      'in another prefix',
+      'M = 5 MHz require <= 6000 kHz',
+      { bound: 'at most', limit: 6, met: true, margin: 1, unit: 'MHz' },
+    ],
+    [
+      'with a decimal comma',
+      'M = 5 dB require >= 2,5 dB',
+      { bound: 'at least', limit: 2.5, met: true, margin: 2.5, unit: 'dB' },
+    ],
+    [
+      'of degrees',
+      'M = 300 K require <= 30 °C',
+      { bound: 'at most', limit: 303.15, met: true, margin: 3.1499999999999773, unit: 'K' },
+    ],
   ])('%s', (_, text, expected) => {
     expect(requirement(text)).toEqual(expected);
   });

@@ -19,7 +19,13 @@ const REGRESSIONS: readonly number[] = [592001784, -1627397652, 371851663, -1636
 const script = fc.record({ worksheet: worksheets, script: fc.array(steps, { minLength: 1, maxLength: 12 }) });
 
 /** A run of edits; after each of them `check` sees the evaluation. */
-function play({ worksheet, script: drawn }: { worksheet: Parameters<typeof changesOf>[0]; script: readonly Parameters<typeof changesOf>[1][] }, check: (evaluation: Evaluation) => void): void {
+function play(
+  {
+    worksheet,
+    script: drawn,
+  }: { worksheet: Parameters<typeof changesOf>[0]; script: readonly Parameters<typeof changesOf>[1][] },
+  check: (evaluation: Evaluation) => void,
+): void {
   const evaluation = new Evaluation(worksheet);
   let current = worksheet;
   for (const step of drawn) {
@@ -37,22 +43,34 @@ const sameAsNew = (evaluation: Evaluation): void => {
 
 describe('evaluation edit by edit', () => {
   it('equals a new evaluation after every edit, in every reading and every finding', PATIENCE, () => {
-    fc.assert(fc.property(script, (drawn) => play(drawn, sameAsNew)), { numRuns: RUNS });
+    fc.assert(
+      fc.property(script, (drawn) => play(drawn, sameAsNew)),
+      { numRuns: RUNS },
+    );
   });
 
-  it.each(REGRESSIONS.map((seed) => ({ seed })))('equals a new evaluation: seed $seed, which once failed', PATIENCE, ({ seed }) => {
-    fc.assert(fc.property(script, (drawn) => play(drawn, sameAsNew)), { numRuns: 60, seed });
-  });
+  it.each(REGRESSIONS.map((seed) => ({ seed })))(
+    'equals a new evaluation: seed $seed, which once failed',
+    PATIENCE,
+    ({ seed }) => {
+      fc.assert(
+        fc.property(script, (drawn) => play(drawn, sameAsNew)),
+        { numRuns: 60, seed },
+      );
+    },
+  );
 
   it('gives bit for bit what recomputing everything gives', PATIENCE, () => {
     fc.assert(
       fc.property(script, (drawn) =>
         play(drawn, (evaluation) => {
           const figures = (): unknown[] =>
-            evaluation.lines().flatMap(({ id }) => evaluation.worksheet.cases.map((one) => {
-              const figure = evaluation.figure(id, one.id);
-              return figure.state === 'value' ? figure.value : figure;
-            }));
+            evaluation.lines().flatMap(({ id }) =>
+              evaluation.worksheet.cases.map((one) => {
+                const figure = evaluation.figure(id, one.id);
+                return figure.state === 'value' ? figure.value : figure;
+              }),
+            );
           const before = figures();
           evaluation.recomputeAll();
           const after = figures();
@@ -82,8 +100,19 @@ describe('evaluation edit by edit', () => {
           const before = new Map(evaluation.lines().map(({ id }) => [id, tellOf(id)]));
           current = applyAll(current, changes).worksheet;
           const pass = evaluation.edit(current, changes);
-          if (current.cases.length !== casesBefore.length || current.cases.some(({ id }, at) => id !== casesBefore[at]?.id)) continue;
-          const untold = evaluation.lines().filter(({ id }) => before.has(id) && !pass.changed.has(id) && JSON.stringify(before.get(id)) !== JSON.stringify(tellOf(id)));
+          if (
+            current.cases.length !== casesBefore.length ||
+            current.cases.some(({ id }, at) => id !== casesBefore[at]?.id)
+          )
+            continue;
+          const untold = evaluation
+            .lines()
+            .filter(
+              ({ id }) =>
+                before.has(id) &&
+                !pass.changed.has(id) &&
+                JSON.stringify(before.get(id)) !== JSON.stringify(tellOf(id)),
+            );
           expect(untold.map(({ id, entry }) => `${id}: ${entry}`)).toEqual([]);
         }
       }),

@@ -36,7 +36,12 @@ export class Live {
   insert(text: string, index = 0): Pass {
     const added = sheetOf(text).sections.flatMap((section) => ('lines' in section ? section.lines : []));
     return this.edit(
-      ...added.map((line, at): Change => ({ kind: 'insert-line', sectionId: 's', index: index + at, line: { ...line, id: `new-${line.symbol}-${String(at)}` } })),
+      ...added.map((line, at): Change => ({
+        kind: 'insert-line',
+        sectionId: 's',
+        index: index + at,
+        line: { ...line, id: `new-${line.symbol}-${String(at)}` },
+      })),
     );
   }
 

@@ -29,15 +29,24 @@ const entriesOf = fc.oneof(
     weight: 5,
     arbitrary: fc.record({
       form: fc.constant('sum' as const),
-      terms: fc.array(fc.record({ coefficient: fc.constantFrom(1, 1, 1, -1, 2, -3, 0.5), symbol: symbols }), { minLength: 1, maxLength: 4 }),
+      terms: fc.array(fc.record({ coefficient: fc.constantFrom(1, 1, 1, -1, 2, -3, 0.5), symbol: symbols }), {
+        minLength: 1,
+        maxLength: 4,
+      }),
       constant: figures,
     }),
   },
   {
     weight: 3,
-    arbitrary: fc.record({ form: fc.constantFrom('powersum' as const, 'max' as const, 'min' as const), symbols: fc.array(symbols, { minLength: 1, maxLength: 3 }) }),
+    arbitrary: fc.record({
+      form: fc.constantFrom('powersum' as const, 'max' as const, 'min' as const),
+      symbols: fc.array(symbols, { minLength: 1, maxLength: 3 }),
+    }),
   },
-  { weight: 1, arbitrary: fc.record({ form: fc.constant('choice' as const), symbols: fc.tuple(symbols, symbols, symbols) }) },
+  {
+    weight: 1,
+    arbitrary: fc.record({ form: fc.constant('choice' as const), symbols: fc.tuple(symbols, symbols, symbols) }),
+  },
 );
 
 const dB = (figure: number): string => (figure < 0 ? `(${String(figure)} dB)` : `${String(figure)} dB`);
@@ -49,7 +58,12 @@ function textOf(entry: Entry): string {
     case 'empty':
       return '';
     case 'sum':
-      return [...entry.terms.map(({ coefficient, symbol }) => (coefficient === 1 ? symbol : `(${String(coefficient)})*${symbol}`)), dB(entry.constant)].join(' + ');
+      return [
+        ...entry.terms.map(({ coefficient, symbol }) =>
+          coefficient === 1 ? symbol : `(${String(coefficient)})*${symbol}`,
+        ),
+        dB(entry.constant),
+      ].join(' + ');
     case 'choice':
       return `if(${entry.symbols[0]} > 0 dB, ${entry.symbols[1]}, ${entry.symbols[2]})`;
     default:
@@ -72,7 +86,10 @@ function naive(sheet: ReadonlyMap<string, Entry>, symbol: string, above: readonl
     case 'empty':
       return undefined;
     case 'sum':
-      return all(entry.terms.map((term) => term.symbol))?.reduce((sum, value, at) => sum + (entry.terms[at]?.coefficient ?? 0) * value, entry.constant);
+      return all(entry.terms.map((term) => term.symbol))?.reduce(
+        (sum, value, at) => sum + (entry.terms[at]?.coefficient ?? 0) * value,
+        entry.constant,
+      );
     case 'choice': {
       const values = all(entry.symbols);
       return values === undefined ? undefined : (values[0] as number) > 0 ? values[1] : values[2];
@@ -101,7 +118,12 @@ function compare(sheet: ReadonlyMap<string, Entry>, evaluation: Evaluation): voi
   }
 }
 
-const lineOf = (symbol: string, entry: Entry): Line => ({ id: `line-${symbol}`, symbol, label: '', entry: textOf(entry) });
+const lineOf = (symbol: string, entry: Entry): Line => ({
+  id: `line-${symbol}`,
+  symbol,
+  label: '',
+  entry: textOf(entry),
+});
 
 describe('evaluation of ratios in dB', () => {
   it('is what plain recursion gives, from the start and after every edit', { timeout: 60_000 }, () => {
@@ -116,7 +138,9 @@ describe('evaluation of ratios in dB', () => {
           compare(sheet, evaluation);
           for (const { at, entry } of edits) {
             const symbol = SYMBOLS[at % first.length] ?? '';
-            const changes: Change[] = [{ kind: 'set-line', lineId: `line-${symbol}`, field: 'entry', value: textOf(entry) }];
+            const changes: Change[] = [
+              { kind: 'set-line', lineId: `line-${symbol}`, field: 'entry', value: textOf(entry) },
+            ];
             sheet.set(symbol, entry);
             worksheet = applyAll(worksheet, changes).worksheet;
             evaluation.edit(worksheet, changes);

@@ -44,7 +44,9 @@ function readLine(text: string, id: string): WrittenLine {
   const [withLabel, ...cases] = withCases.split(' @ ');
   const [definition, label = ''] = cut(withLabel ?? '', ' # ');
   const at = definition.indexOf('=');
-  const [symbol = '', unit, quantity, side] = (at < 0 ? '' : definition.slice(0, at)).split('|').map((part) => part.trim());
+  const [symbol = '', unit, quantity, side] = (at < 0 ? '' : definition.slice(0, at))
+    .split('|')
+    .map((part) => part.trim());
   const byCase = Object.fromEntries(
     cases.map((one) => {
       const [caseId, entry = ''] = cut(one, ':');
@@ -100,7 +102,8 @@ function asWritten(figure: Figure, expected: WrittenLine['figure']): string {
   if (expected === undefined) return 'a value';
   const decimals = (/\.(\d+)/.exec(expected.digits)?.[1] ?? '').length;
   const wanted = findUnit(expected.unit);
-  const isScaled = figure.isFitted && figure.unit.form === 'linear' && wanted?.form === 'linear' && figure.unit.word !== wanted.word;
+  const isScaled =
+    figure.isFitted && figure.unit.form === 'linear' && wanted?.form === 'linear' && figure.unit.word !== wanted.word;
   const [value, word] =
     isScaled && figure.unit.form === 'linear' && figure.unit.dimension.every((n, at) => n === wanted.dimension[at])
       ? [(figure.value * figure.unit.factor) / wanted.factor, wanted.word]
@@ -115,11 +118,15 @@ const isError = (code: string): boolean => code in CATALOGUE && CATALOGUE[code a
 function expectation({ line, figure, codes }: WrittenLine): string {
   const error = codes.find(isError);
   const state =
-    figure !== undefined ? `${figure.digits} ${figure.unit}`
-    : line.entry === '' ? 'empty'
-    : error === 'waiting' ? 'waiting'
-    : error !== undefined ? 'withheld'
-    : 'a value';
+    figure !== undefined
+      ? `${figure.digits} ${figure.unit}`
+      : line.entry === ''
+        ? 'empty'
+        : error === 'waiting'
+          ? 'waiting'
+          : error !== undefined
+            ? 'withheld'
+            : 'a value';
   return `${line.symbol || line.label} = ${line.entry} → ${state} ! ${[...codes].sort().join(', ')}`;
 }
 
@@ -147,5 +154,9 @@ export function valueOf(evaluation: Evaluation, symbol: string, caseId = 'nomina
   const line = evaluation.lines().find((one) => one.symbol === symbol || one.label === symbol);
   const figure = evaluation.figure(line?.id ?? '', caseId);
   if (figure.state === 'value') return figure.value;
-  return figure.state === 'withheld' ? `withheld: ${figure.code}` : figure.state === 'waiting' ? `waiting: ${figure.roots.join(', ')}` : figure.state;
+  return figure.state === 'withheld'
+    ? `withheld: ${figure.code}`
+    : figure.state === 'waiting'
+      ? `waiting: ${figure.roots.join(', ')}`
+      : figure.state;
 }

@@ -7,23 +7,144 @@ import * as w from '../../src/worksheet';
 import type { Change, Line, LinesSection, Worksheet } from '../../src/worksheet';
 import { QUANTITY_KINDS, SIDES } from '../../src/quantity';
 
-export const SYMBOLS = ['P', 'N', 'I_1', 'S', 'SNR', 'NF', 'G_1', 'L_1', 'B', 'B_2', 'T', 'd', 'r', 'x', 'y', ''] as const;
+export const SYMBOLS = [
+  'P',
+  'N',
+  'I_1',
+  'S',
+  'SNR',
+  'NF',
+  'G_1',
+  'L_1',
+  'B',
+  'B_2',
+  'T',
+  'd',
+  'r',
+  'x',
+  'y',
+  '',
+] as const;
 
-const UNITS = ['', 'dB', 'dBm', 'dBW', 'dBµV', 'dBHz', 'dBm/Hz', 'dBi', 'W', 'mW', 'K', '°C', 'MHz', 'dB/km', '1', 'furlong'] as const;
+const UNITS = [
+  '',
+  'dB',
+  'dBm',
+  'dBW',
+  'dBµV',
+  'dBHz',
+  'dBm/Hz',
+  'dBi',
+  'W',
+  'mW',
+  'K',
+  '°C',
+  'MHz',
+  'dB/km',
+  '1',
+  'furlong',
+] as const;
 
-const LABELS = ['', 'Bandwidth', 'Cable length', 'Noise figure', 'Path loss', 'Antenna gain', 'C/N uplink', 'Noise', 'Wanted signal', 'Margin'] as const;
+const LABELS = [
+  '',
+  'Bandwidth',
+  'Cable length',
+  'Noise figure',
+  'Path loss',
+  'Antenna gain',
+  'C/N uplink',
+  'Noise',
+  'Wanted signal',
+  'Margin',
+] as const;
 
 /** Entries with holes for symbols: `$` is filled with one of them. */
 const TEMPLATES = [
-  '10 dBm', '-100 dBm', '3 dB', '-2 dB', '12 dBi', '1 MHz', '200 kHz', '290 K', '17 °C', '5 km', '0.3 dB/km', '2 W', '0 W', '60 dBµV',
-  '-174 dBm/Hz', '3', '4.5', '', ' ', '-60 dBc', '14,5 dBm', '20 dBHz', '1e3', '2 mV', '256 kbit/s', '2 W + 3 W',
-  '$', '-$', '$ + $', '$ - $', '$ + $ - $', '$ - $ + 3 dB', '$ + 3', '2*$', '3*$ - 2*$', '$*$', '$/$', '$/2', '($ + $)/2', '$^2',
-  'powersum($, $)', 'powersum($, $, $)', 'powerdiff($, $)', 'fieldsum($, $)', 'ratiosum($, $)', 'mean($, $)', 'meanpower($, $)', 'max($, $)',
-  'min($, 3 dB)', 'db($)', 'lin($)', 'lin($)/lin($)', '10*log10($)', '20*log10($)', '10^($/10)', 'sqrt($)', 'abs($)', 'sum($, $)',
-  'thermal_noise($, $)', 'thermal_noise(T_0, $) + $', '-174 dBm/Hz + 10*log10($) + $', 'noise_density($)', 'noise_temperature($)',
-  'cascade_nf($, $, $)', 'passive_nf($)', 'free_space_loss($, 868 MHz)', 'capacity($, $)', 'if($ > 3 dB, $, $)', 'if($ > $, 1 dB, $)',
-  'rebase($, $, $)', '$*$ + $', '32.44 + 20*log10($) + 20*log10($)', '-174 + 10*log10($)', '$ + db($)', '$ - db(50 ohm)', '10*log10($/1 mW)',
-  'interpolate($, 0 dB, 1 dB, 10 dB, 3 dB)', 'round($, 1)', '$ +', 'P_unknown + 1 dB', 'powersumm($)', '($', '1/0', 'k_B*$*$', '$ + $ + $ + $',
+  '10 dBm',
+  '-100 dBm',
+  '3 dB',
+  '-2 dB',
+  '12 dBi',
+  '1 MHz',
+  '200 kHz',
+  '290 K',
+  '17 °C',
+  '5 km',
+  '0.3 dB/km',
+  '2 W',
+  '0 W',
+  '60 dBµV',
+  '-174 dBm/Hz',
+  '3',
+  '4.5',
+  '',
+  ' ',
+  '-60 dBc',
+  '14,5 dBm',
+  '20 dBHz',
+  '1e3',
+  '2 mV',
+  '256 kbit/s',
+  '2 W + 3 W',
+  '$',
+  '-$',
+  '$ + $',
+  '$ - $',
+  '$ + $ - $',
+  '$ - $ + 3 dB',
+  '$ + 3',
+  '2*$',
+  '3*$ - 2*$',
+  '$*$',
+  '$/$',
+  '$/2',
+  '($ + $)/2',
+  '$^2',
+  'powersum($, $)',
+  'powersum($, $, $)',
+  'powerdiff($, $)',
+  'fieldsum($, $)',
+  'ratiosum($, $)',
+  'mean($, $)',
+  'meanpower($, $)',
+  'max($, $)',
+  'min($, 3 dB)',
+  'db($)',
+  'lin($)',
+  'lin($)/lin($)',
+  '10*log10($)',
+  '20*log10($)',
+  '10^($/10)',
+  'sqrt($)',
+  'abs($)',
+  'sum($, $)',
+  'thermal_noise($, $)',
+  'thermal_noise(T_0, $) + $',
+  '-174 dBm/Hz + 10*log10($) + $',
+  'noise_density($)',
+  'noise_temperature($)',
+  'cascade_nf($, $, $)',
+  'passive_nf($)',
+  'free_space_loss($, 868 MHz)',
+  'capacity($, $)',
+  'if($ > 3 dB, $, $)',
+  'if($ > $, 1 dB, $)',
+  'rebase($, $, $)',
+  '$*$ + $',
+  '32.44 + 20*log10($) + 20*log10($)',
+  '-174 + 10*log10($)',
+  '$ + db($)',
+  '$ - db(50 ohm)',
+  '10*log10($/1 mW)',
+  'interpolate($, 0 dB, 1 dB, 10 dB, 3 dB)',
+  'round($, 1)',
+  '$ +',
+  'P_unknown + 1 dB',
+  'powersumm($)',
+  '($',
+  '1/0',
+  'k_B*$*$',
+  '$ + $ + $ + $',
 ] as const;
 
 const symbol = fc.constantFrom(...SYMBOLS.filter((name) => name !== ''));
@@ -63,7 +184,9 @@ const drafts: fc.Arbitrary<Draft> = fc.record({
 const CASES = ['clear', 'rain', 'worst'] as const;
 
 function lineOf({ overrides, unit, quantity, side, requirement, ...rest }: Draft, id: string, caseCount: number): Line {
-  const byCase = Object.fromEntries(CASES.slice(0, caseCount).flatMap((caseId, at) => (overrides[at] === undefined ? [] : [[caseId, overrides[at]]])));
+  const byCase = Object.fromEntries(
+    CASES.slice(0, caseCount).flatMap((caseId, at) => (overrides[at] === undefined ? [] : [[caseId, overrides[at]]])),
+  );
   return {
     id,
     ...rest,
@@ -77,10 +200,19 @@ function lineOf({ overrides, unit, quantity, side, requirement, ...rest }: Draft
 
 /** Worksheets of one to three cases and up to twelve lines in two sections. */
 export const worksheets: fc.Arbitrary<Worksheet> = fc
-  .record({ caseCount: fc.integer({ min: 1, max: 3 }), lines: fc.array(drafts, { minLength: 1, maxLength: 12 }), cut: fc.nat(12) })
+  .record({
+    caseCount: fc.integer({ min: 1, max: 3 }),
+    lines: fc.array(drafts, { minLength: 1, maxLength: 12 }),
+    cut: fc.nat(12),
+  })
   .map(({ caseCount, lines, cut }) => {
     const all = lines.map((draft, index) => lineOf(draft, `l${String(index)}`, caseCount));
-    const section = (id: string, part: readonly Line[]): LinesSection => ({ id, kind: 'lines', title: id, lines: part });
+    const section = (id: string, part: readonly Line[]): LinesSection => ({
+      id,
+      kind: 'lines',
+      title: id,
+      lines: part,
+    });
     return {
       id: 'w',
       title: 'random',
@@ -97,7 +229,12 @@ export interface Step {
   readonly draft: Draft;
 }
 
-export const steps: fc.Arbitrary<Step> = fc.record({ which: fc.nat(999), a: fc.nat(999), b: fc.nat(999), draft: drafts });
+export const steps: fc.Arbitrary<Step> = fc.record({
+  which: fc.nat(999),
+  a: fc.nat(999),
+  b: fc.nat(999),
+  draft: drafts,
+});
 
 /** An id that no line has. */
 function newIdIn(lines: readonly Line[]): string {
@@ -135,7 +272,8 @@ export function changesOf(worksheet: Worksheet, { which, a, b, draft }: Step): r
     () => set({ field: 'label', value: draft.label }),
     () => set({ field: 'quantity', value: draft.quantity }),
     () => set({ field: 'side', value: draft.side }),
-    () => set({ field: 'requirement', value: draft.requirement === undefined ? undefined : { atMost: draft.requirement } }),
+    () =>
+      set({ field: 'requirement', value: draft.requirement === undefined ? undefined : { atMost: draft.requirement } }),
     () => set({ field: 'note', value: 'noted' }),
     () => set({ field: 'accepted', value: [{ code: 'loss-added', entry: line.entry, reason: 'so it is' }] }),
     () => [insert],
@@ -144,15 +282,22 @@ export function changesOf(worksheet: Worksheet, { which, a, b, draft }: Step): r
     () => w.moveLinesTo(worksheet, [line.id], { sectionId: section.id, index: b % (section.lines.length + 1) }).changes,
     () => w.setEntry(worksheet, line.id, draft.entry, oneCase.id).changes,
     () => w.setEntry(worksheet, line.id, draft.entry, oneCase.id).changes,
-    () => (line.byCase === undefined ? [] : w.removeOverride(worksheet, line.id, Object.keys(line.byCase)[0] ?? '').changes),
-    () => (worksheet.cases.length < 4 ? w.addCase(worksheet, `case ${newId}`, a % 2 === 0 ? oneCase.id : undefined).changes : []),
+    () =>
+      line.byCase === undefined ? [] : w.removeOverride(worksheet, line.id, Object.keys(line.byCase)[0] ?? '').changes,
+    () =>
+      worksheet.cases.length < 4
+        ? w.addCase(worksheet, `case ${newId}`, a % 2 === 0 ? oneCase.id : undefined).changes
+        : [],
     () => (worksheet.cases.length > 1 ? w.removeCase(worksheet, oneCase.id).changes : []),
     () => w.renameCase(worksheet, oneCase.id, `case ${newId}`).changes,
     () => w.duplicateLines(worksheet, [line.id]).changes,
     () => (sections.length > 1 ? [{ kind: 'remove-section', sectionId: section.id }] : []),
     () => w.insertSection(worksheet, 0, 'new').changes,
     () => [...set({ field: 'entry', value: draft.entry }), ...set({ field: 'unit', value: draft.unit })],
-    () => (draft.symbol === '' || w.isTakenByAnother(worksheet, draft.symbol, line.id) ? [] : w.setSymbol(worksheet, line.id, draft.symbol).changes),
+    () =>
+      draft.symbol === '' || w.isTakenByAnother(worksheet, draft.symbol, line.id)
+        ? []
+        : w.setSymbol(worksheet, line.id, draft.symbol).changes,
   ];
   return choices[which % choices.length]?.() ?? [];
 }

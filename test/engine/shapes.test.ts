@@ -234,7 +234,12 @@ describe('loops', () => {
                            c = 3 dB
                            d = c + 1 dB
                            e = a + d`);
-    expect([live.value('a'), live.value('b'), live.value('d'), live.value('e')]).toEqual(['withheld: loop', 'withheld: loop', 4, 'waiting: a']);
+    expect([live.value('a'), live.value('b'), live.value('d'), live.value('e')]).toEqual([
+      'withheld: loop',
+      'withheld: loop',
+      4,
+      'waiting: a',
+    ]);
     expect(live.message('a')).toContain('a → b → a');
     expect(live.message('b')).toContain('b → a → b');
     expect(live.codes('e')).toEqual(['waiting']);
@@ -275,8 +280,14 @@ describe('loops', () => {
   it('in one case only leave the other cases alone', () => {
     const live = new Live('a = b + 1 dB\nb = 2 dB @ rain: a - 1 dB\nc = a + 1 dB', 'clear', 'rain');
     expect([live.value('a', 'clear'), live.value('c', 'clear')]).toEqual([3, 4]);
-    expect([live.value('a', 'rain'), live.value('b', 'rain'), live.value('c', 'rain')]).toEqual(['withheld: loop', 'withheld: loop', 'waiting: a']);
-    expect(live.evaluation.findings(live.line('a').id).map(({ code, caseIds }) => [code, caseIds])).toEqual([['loop', ['rain']]]);
+    expect([live.value('a', 'rain'), live.value('b', 'rain'), live.value('c', 'rain')]).toEqual([
+      'withheld: loop',
+      'withheld: loop',
+      'waiting: a',
+    ]);
+    expect(live.evaluation.findings(live.line('a').id).map(({ code, caseIds }) => [code, caseIds])).toEqual([
+      ['loop', ['rain']],
+    ]);
   });
 
   it('of ten thousand lines are found without exhausting the stack', () => {

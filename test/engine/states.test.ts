@@ -182,7 +182,10 @@ describe('the evaluation', () => {
     const { evaluation } = new Live('a = 1 dB');
     expect(evaluation.reading('none', 'nominal')).toEqual({ figure: { state: 'empty' } });
     expect(evaluation.findings('none')).toEqual([]);
-    expect(evaluation.preview('none', 'nominal', '1 dB')).toEqual({ reading: { figure: { state: 'empty' } }, findings: [] });
+    expect(evaluation.preview('none', 'nominal', '1 dB')).toEqual({
+      reading: { figure: { state: 'empty' } },
+      findings: [],
+    });
   });
 
   it('lists all findings in the order of the worksheet', () => {

@@ -5,22 +5,58 @@ import { CATALOGUE, FINDING_CODES, type Facts } from '../../src/findings';
 /** The codes of the algebra's table with their severities; planes-differ comes with chains, in a later milestone. */
 const TABLE = {
   error: [
-    'levels-summed', 'unit-mismatch', 'mixed-forms', 'decibels-multiplied', 'log-of-dimension', 'rate-without-length', 'field-and-power',
-    'density-and-level', 'no-power', 'loop', 'unknown-symbol', 'duplicate-symbol', 'bad-entry', 'wrong-arguments', 'not-finite', 'waiting',
+    'levels-summed',
+    'unit-mismatch',
+    'mixed-forms',
+    'decibels-multiplied',
+    'log-of-dimension',
+    'rate-without-length',
+    'field-and-power',
+    'density-and-level',
+    'no-power',
+    'loop',
+    'unknown-symbol',
+    'duplicate-symbol',
+    'bad-entry',
+    'wrong-arguments',
+    'not-finite',
+    'waiting',
   ],
   warning: [
-    'ratios-summed', 'noise-figures-summed', 'sides-mixed', 'kind-mismatch', 'decibels-averaged', 'bandwidths-differ', 'outside-validity',
-    'level-without-reference', 'constant-hides-unit', 'field-ratio-in-power-log', 'negative-figure',
+    'ratios-summed',
+    'noise-figures-summed',
+    'sides-mixed',
+    'kind-mismatch',
+    'decibels-averaged',
+    'bandwidths-differ',
+    'outside-validity',
+    'level-without-reference',
+    'constant-hides-unit',
+    'field-ratio-in-power-log',
+    'negative-figure',
   ],
-  note: ['loss-added', 'negative-loss', 'nf-plus-loss', 'figure-on-wanted', 'number-as-decibels', 'cancellation', 'reference-temperature'],
+  note: [
+    'loss-added',
+    'negative-loss',
+    'nf-plus-loss',
+    'figure-on-wanted',
+    'number-as-decibels',
+    'cancellation',
+    'reference-temperature',
+  ],
 } as const;
 
 describe('the catalogue of findings', () => {
   it('has the codes of the algebra, with their severities', () => {
     const found = Object.fromEntries(
-      (['error', 'warning', 'note'] as const).map((severity) => [severity, FINDING_CODES.filter((code) => CATALOGUE[code].severity === severity).sort()]),
+      (['error', 'warning', 'note'] as const).map((severity) => [
+        severity,
+        FINDING_CODES.filter((code) => CATALOGUE[code].severity === severity).sort(),
+      ]),
     );
-    expect(found).toEqual(Object.fromEntries(Object.entries(TABLE).map(([severity, codes]) => [severity, [...codes].sort()])));
+    expect(found).toEqual(
+      Object.fromEntries(Object.entries(TABLE).map(([severity, codes]) => [severity, [...codes].sort()])),
+    );
   });
 
   it.each(FINDING_CODES)('%s has a title, a reason, and a code of small letters', (code) => {
@@ -33,7 +69,10 @@ describe('the catalogue of findings', () => {
   const OPTIONAL = ['now', 'meant', 'repair', 'inPhase', 'missing', 'nearest', 'because', 'signature'];
   /** Every fact by its own name, but those that are not always known. */
   const named = (without: readonly string[]): Facts =>
-    new Proxy<Record<string, string>>({}, { get: (_, name) => (typeof name !== 'string' || without.includes(name) ? undefined : `<${name}>`) });
+    new Proxy<Record<string, string>>(
+      {},
+      { get: (_, name) => (typeof name !== 'string' || without.includes(name) ? undefined : `<${name}>`) },
+    );
 
   it.each(FINDING_CODES)('%s makes a whole sentence without figures and repairs', (code) => {
     const message = CATALOGUE[code].message(named(OPTIONAL));
@@ -50,7 +89,11 @@ describe('the catalogue of findings', () => {
   });
 
   it.each([
-    ['levels-summed', { levels: 'P_1 and P_2', now: '17.00 dBm', meant: 'which gives 11.76 dBm', repair: 'powersum(P_1, P_2)' }, ['17.00 dBm', '11.76 dBm', 'powersum(P_1, P_2)']],
+    [
+      'levels-summed',
+      { levels: 'P_1 and P_2', now: '17.00 dBm', meant: 'which gives 11.76 dBm', repair: 'powersum(P_1, P_2)' },
+      ['17.00 dBm', '11.76 dBm', 'powersum(P_1, P_2)'],
+    ],
     ['loop', { path: 'a → b → a' }, ['a → b → a']],
     ['unknown-symbol', { what: 'The symbol', name: 'Q', nearest: 'P' }, ['“Q”', '“P”']],
     ['waiting', { roots: 'a, b' }, ['a, b']],

@@ -18,7 +18,13 @@ interface Golden {
   readonly says: readonly string[];
   readonly derivation: string;
   /** The repair: of the line itself when it is offered; otherwise by hand, perhaps of another line. */
-  readonly repair: { readonly line?: string; readonly entry?: string; readonly unit?: string; readonly quantity?: string; readonly symbol?: string };
+  readonly repair: {
+    readonly line?: string;
+    readonly entry?: string;
+    readonly unit?: string;
+    readonly quantity?: string;
+    readonly symbol?: string;
+  };
   readonly offered: boolean;
   readonly after: string;
 }
@@ -26,7 +32,10 @@ interface Golden {
 const folder = new URL('../golden/findings/', import.meta.url);
 const goldens = readdirSync(folder)
   .sort()
-  .map((file) => ({ code: file.replace('.json', '') as FindingCode, golden: JSON.parse(readFileSync(new URL(file, folder), 'utf8')) as Golden }));
+  .map((file) => ({
+    code: file.replace('.json', '') as FindingCode,
+    golden: JSON.parse(readFileSync(new URL(file, folder), 'utf8')) as Golden,
+  }));
 
 function lineOf(evaluation: Evaluation, symbol: string): Line {
   const lines = evaluation.lines();
@@ -50,16 +59,26 @@ function isRepair(repair: Repair, wanted: Golden['repair']): boolean {
 }
 
 /** The changes that put the worksheet right. */
-function mending(worksheet: Worksheet, evaluation: Evaluation, code: FindingCode, { on, repair, offered }: Golden): readonly Change[] {
+function mending(
+  worksheet: Worksheet,
+  evaluation: Evaluation,
+  code: FindingCode,
+  { on, repair, offered }: Golden,
+): readonly Change[] {
   const line = lineOf(evaluation, offered ? on : (repair.line ?? on));
   if (offered) {
     const found = findingOf(evaluation, line.id, code)?.repairs.find((one) => isRepair(one, repair));
-    if (found === undefined) throw new Error(`the repair is not offered: ${JSON.stringify(findingOf(evaluation, line.id, code)?.repairs)}`);
+    if (found === undefined)
+      throw new Error(`the repair is not offered: ${JSON.stringify(findingOf(evaluation, line.id, code)?.repairs)}`);
     return applyRepair(worksheet, line.id, found).changes;
   }
   return [
-    ...(repair.entry === undefined ? [] : [{ kind: 'set-line', lineId: line.id, field: 'entry', value: repair.entry } as const]),
-    ...(repair.symbol === undefined ? [] : [{ kind: 'set-line', lineId: line.id, field: 'symbol', value: repair.symbol } as const]),
+    ...(repair.entry === undefined
+      ? []
+      : [{ kind: 'set-line', lineId: line.id, field: 'entry', value: repair.entry } as const]),
+    ...(repair.symbol === undefined
+      ? []
+      : [{ kind: 'set-line', lineId: line.id, field: 'symbol', value: repair.symbol } as const]),
   ];
 }
 
@@ -82,7 +101,9 @@ describe('golden findings', () => {
 
     it('is found on its line, with its severity, once', () => {
       const found = evaluation.findings(id).filter((finding) => finding.code === code);
-      expect(found.map(({ severity, lineId, caseIds }) => ({ severity, lineId, caseIds }))).toEqual([{ severity: golden.severity, lineId: id, caseIds: ['nominal'] }]);
+      expect(found.map(({ severity, lineId, caseIds }) => ({ severity, lineId, caseIds }))).toEqual([
+        { severity: golden.severity, lineId: id, caseIds: ['nominal'] },
+      ]);
       expect(CATALOGUE[code].severity).toBe(golden.severity);
     });
 
@@ -108,13 +129,18 @@ describe('golden findings', () => {
       expect(finding.place.start).toBeLessThan(finding.place.end);
     });
 
-    it(golden.offered ? 'is gone after the repair it offers, and the figure is right' : 'is gone once mended by hand, and the figure is right', () => {
-      const changes = mending(worksheet, evaluation, code, golden);
-      const repaired = applyAll(worksheet, changes).worksheet;
-      evaluation.edit(repaired, changes);
-      expect(findingOf(evaluation, id, code)).toBeUndefined();
-      expect(written(evaluation, id, golden.after)).toBe(golden.after);
-      expect(evaluation.findings(id).filter(({ severity }) => severity !== 'note')).toEqual([]);
-    });
+    it(
+      golden.offered
+        ? 'is gone after the repair it offers, and the figure is right'
+        : 'is gone once mended by hand, and the figure is right',
+      () => {
+        const changes = mending(worksheet, evaluation, code, golden);
+        const repaired = applyAll(worksheet, changes).worksheet;
+        evaluation.edit(repaired, changes);
+        expect(findingOf(evaluation, id, code)).toBeUndefined();
+        expect(written(evaluation, id, golden.after)).toBe(golden.after);
+        expect(evaluation.findings(id).filter(({ severity }) => severity !== 'note')).toEqual([]);
+      },
+    );
   });
 });

@@ -120,17 +120,26 @@ describe('what has no way', () => {
 describe('there and back', () => {
   const pairs = UNIT_WORDS.flatMap((word) => {
     const unit = findUnit(word);
-    return unit === undefined || unit.form === 'rate' ? [] : UNIT_WORDS.filter((other) => {
-      const second = findUnit(other);
-      return second !== undefined && second.form !== 'rate' && second.dimension.every((n, at) => n === unit.dimension[at]) && word !== other;
-    }).map((other) => [word, other] as const);
+    return unit === undefined || unit.form === 'rate'
+      ? []
+      : UNIT_WORDS.filter((other) => {
+          const second = findUnit(other);
+          return (
+            second !== undefined &&
+            second.form !== 'rate' &&
+            second.dimension.every((n, at) => n === unit.dimension[at]) &&
+            word !== other
+          );
+        }).map((other) => [word, other] as const);
   });
 
   it('any two units of one dimension give the figure back', () => {
     fc.assert(
       fc.property(fc.constantFrom(...pairs), fc.double({ min: 0.5, max: 90, noNaN: true }), ([word, other], value) => {
         const figure = Number(value.toFixed(5));
-        const evaluation = new Evaluation(sheetOf(`x | ${word} = ${String(figure)}\ny | ${other} = x\nz | ${word} = y`));
+        const evaluation = new Evaluation(
+          sheetOf(`x | ${word} = ${String(figure)}\ny | ${other} = x\nz | ${word} = y`),
+        );
         const back = valueOf(evaluation, 'z');
         expect([word, other, typeof back]).toEqual([word, other, 'number']);
         expect(Math.abs(Number(back) - figure)).toBeLessThan(1e-8 * (1 + Math.abs(figure) + (word === '°C' ? 300 : 0)));

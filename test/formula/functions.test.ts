@@ -2,19 +2,31 @@
 import { describe, expect, it } from 'vitest';
 import { Evaluation } from '../../src/engine';
 import { CATALOGUE, type FindingCode } from '../../src/findings';
-import { fewestArguments, findFunction, FUNCTION_GROUPS, FUNCTIONS, parameterAt, signatureOf, type FunctionEntry } from '../../src/formula';
+import {
+  fewestArguments,
+  findFunction,
+  FUNCTION_GROUPS,
+  FUNCTIONS,
+  parameterAt,
+  signatureOf,
+  type FunctionEntry,
+} from '../../src/formula';
 import { sheetOf } from '../engine/notation';
 import { FUNCTION_GOLDENS, type FunctionGolden } from './function-goldens';
 
 const evaluate = (entry: string): Evaluation => new Evaluation(sheetOf(`x = ${entry}`));
-const codesOf = (entry: string): readonly string[] => evaluate(entry).findings('l0').map(({ code }) => code);
+const codesOf = (entry: string): readonly string[] =>
+  evaluate(entry)
+    .findings('l0')
+    .map(({ code }) => code);
 
 function figureOf(entry: string): unknown {
   const figure = evaluate(entry).figure('l0', 'nominal');
   return figure.state === 'value' ? { value: figure.value, unit: figure.unit.word } : figure;
 }
 
-const near = (value: number): unknown => expect.closeTo(value, value === 0 ? 9 : 5 - Math.ceil(Math.log10(Math.abs(value)))) as unknown;
+const near = (value: number): unknown =>
+  expect.closeTo(value, value === 0 ? 9 : 5 - Math.ceil(Math.log10(Math.abs(value)))) as unknown;
 
 const isError = (code: string): boolean => CATALOGUE[code as FindingCode].severity === 'error';
 
@@ -73,20 +85,33 @@ describe.each(cases)('$name', ({ name, entry, golden }) => {
   it('refuses arguments that it cannot take', () => {
     expect(golden.refused.length).toBeGreaterThan(0);
     expect(golden.refused.map(([call]) => [call, ...codesOf(call)])).toEqual(golden.refused);
-    expect(golden.refused.map(([call]) => evaluate(call).figure('l0', 'nominal').state)).toEqual(golden.refused.map(() => 'withheld'));
+    expect(golden.refused.map(([call]) => evaluate(call).figure('l0', 'nominal').state)).toEqual(
+      golden.refused.map(() => 'withheld'),
+    );
   });
 
   it('tells what it does outside its domain', () => {
     for (const [call, code] of golden.outside) {
       expect([call, ...codesOf(call)]).toContain(code);
-      expect([call, evaluate(call).figure('l0', 'nominal').state]).toEqual([call, isError(code) ? 'withheld' : 'value']);
+      expect([call, evaluate(call).figure('l0', 'nominal').state]).toEqual([
+        call,
+        isError(code) ? 'withheld' : 'value',
+      ]);
     }
   });
 
   it('never gives NaN or infinity, but no power in decibels', () => {
-    for (const call of [entry.example, ...(golden.more ?? []).map(([one]) => one), ...golden.outside.map(([one]) => one)]) {
+    for (const call of [
+      entry.example,
+      ...(golden.more ?? []).map(([one]) => one),
+      ...golden.outside.map(([one]) => one),
+    ]) {
       const figure = evaluate(call).figure('l0', 'nominal');
-      if (figure.state === 'value') expect([call, Number.isFinite(figure.value) || (figure.value === -Infinity && figure.unit.form === 'decibel')]).toEqual([call, true]);
+      if (figure.state === 'value')
+        expect([
+          call,
+          Number.isFinite(figure.value) || (figure.value === -Infinity && figure.unit.form === 'decibel'),
+        ]).toEqual([call, true]);
     }
   });
 

@@ -34,7 +34,13 @@ function rawParser(calls: Call[] = []): Parser {
 }
 
 function operate(operator: string, left: number, right: number): number {
-  const results: Readonly<Record<string, number>> = { '+': left + right, '-': left - right, '*': left * right, '/': left / right, '^': left ** right };
+  const results: Readonly<Record<string, number>> = {
+    '+': left + right,
+    '-': left - right,
+    '*': left * right,
+    '/': left / right,
+    '^': left ** right,
+  };
   return results[operator] ?? NaN;
 }
 
@@ -48,7 +54,8 @@ function raw(text: string): { value: unknown; calls: readonly Call[] } {
   }
 }
 
-const names = (calls: readonly Call[], hook: string): unknown[] => calls.filter(([name]) => name === hook).map(([, detail]) => detail);
+const names = (calls: readonly Call[], hook: string): unknown[] =>
+  calls.filter(([name]) => name === hook).map(([, detail]) => detail);
 
 describe('the grammar alone', () => {
   it.each([
@@ -70,9 +77,12 @@ describe('the grammar alone', () => {
     expect(names(raw(text).calls, 'cell')).toEqual([text]);
   });
 
-  it.each(['A1b', 'λ', '1e3', '1.5e-3', '.5', '5.', '1,5+1', '20 MHz', 'v_0 v_1', '(v_0', 'v_0)', 'v_0+', ''])('refuses “%s”', (text) => {
-    expect(raw(text).value).toBe('refused');
-  });
+  it.each(['A1b', 'λ', '1e3', '1.5e-3', '.5', '5.', '1,5+1', '20 MHz', 'v_0 v_1', '(v_0', 'v_0)', 'v_0+', ''])(
+    'refuses “%s”',
+    (text) => {
+      expect(raw(text).value).toBe('refused');
+    },
+  );
 
   it('drops what follows the dot in a name', () => {
     expect(names(raw('rx.nf').calls, 'variable')).toEqual(['rx']);
@@ -220,18 +230,43 @@ describe('entries', () => {
     expect(parsed(entry)).toBe(expected);
   });
 
-  it.each(['$A$1', '#REF!', '"a" & "b"', 'A1:B2', '[x]', '{1}', 'a;', 'a, b', '1,5 + 1', '(a', 'a)', 'a +', '* a', 'a b', 'a (b) c', 'f(a,)', 'f(,a)', "f('x')", '"x', 'a ! b', '= a', 'x%', '(', ')', '@', '\\', 'a = = b'])(
-    'refuses “%s” in words, at a place in the text',
-    (entry) => {
-      const result = parseEntry(entry);
-      expect(result.ok).toBe(false);
-      if (result.ok) return;
-      expect(result.fault.sentence.length).toBeGreaterThan(10);
-      expect(result.fault.place.start).toBeGreaterThanOrEqual(0);
-      expect(result.fault.place.end).toBeLessThanOrEqual(entry.length);
-      expect(result.fault.place.start).toBeLessThanOrEqual(result.fault.place.end);
-    },
-  );
+  it.each([
+    '$A$1',
+    '#REF!',
+    '"a" & "b"',
+    'A1:B2',
+    '[x]',
+    '{1}',
+    'a;',
+    'a, b',
+    '1,5 + 1',
+    '(a',
+    'a)',
+    'a +',
+    '* a',
+    'a b',
+    'a (b) c',
+    'f(a,)',
+    'f(,a)',
+    "f('x')",
+    '"x',
+    'a ! b',
+    '= a',
+    'x%',
+    '(',
+    ')',
+    '@',
+    '\\',
+    'a = = b',
+  ])('refuses “%s” in words, at a place in the text', (entry) => {
+    const result = parseEntry(entry);
+    expect(result.ok).toBe(false);
+    if (result.ok) return;
+    expect(result.fault.sentence.length).toBeGreaterThan(10);
+    expect(result.fault.place.start).toBeGreaterThanOrEqual(0);
+    expect(result.fault.place.end).toBeLessThanOrEqual(entry.length);
+    expect(result.fault.place.start).toBeLessThanOrEqual(result.fault.place.end);
+  });
 
   it.each([
     ['a + b', 'a + b'],
@@ -281,14 +316,60 @@ describe('entries', () => {
   });
 
   it('whatever is typed is either read or refused, never thrown', () => {
-    const pieces = fc.constantFrom('a', 'b_1', 'dBm', '3', '-', '+', '*', '/', '^', '(', ')', ',', ';', ' ', '10 dBm', 'f(', '"', '"x"', '%', '.', '1e', 'µ', 'λ', '$', '&', '=', '<', '>', '≤', '−', '\u00a0', '\u202e', '\0', '__proto__', '😀', '{', '}', 'A1:B2', 'toString(');
+    const pieces = fc.constantFrom(
+      'a',
+      'b_1',
+      'dBm',
+      '3',
+      '-',
+      '+',
+      '*',
+      '/',
+      '^',
+      '(',
+      ')',
+      ',',
+      ';',
+      ' ',
+      '10 dBm',
+      'f(',
+      '"',
+      '"x"',
+      '%',
+      '.',
+      '1e',
+      'µ',
+      'λ',
+      '$',
+      '&',
+      '=',
+      '<',
+      '>',
+      '≤',
+      '−',
+      '\u00a0',
+      '\u202e',
+      '\0',
+      '__proto__',
+      '😀',
+      '{',
+      '}',
+      'A1:B2',
+      'toString(',
+    );
     fc.assert(
-      fc.property(fc.oneof(fc.array(pieces, { maxLength: 14 }).map((all) => all.join('')), fc.string({ maxLength: 30, unit: 'binary' })), (entry) => {
-        const result = parseEntry(entry);
-        if (result.ok) return;
-        expect(result.fault.sentence).not.toBe('');
-        expect(result.fault.place.end).toBeLessThanOrEqual(entry.length);
-      }),
+      fc.property(
+        fc.oneof(
+          fc.array(pieces, { maxLength: 14 }).map((all) => all.join('')),
+          fc.string({ maxLength: 30, unit: 'binary' }),
+        ),
+        (entry) => {
+          const result = parseEntry(entry);
+          if (result.ok) return;
+          expect(result.fault.sentence).not.toBe('');
+          expect(result.fault.place.end).toBeLessThanOrEqual(entry.length);
+        },
+      ),
       { numRuns: 2000 },
     );
   });
@@ -299,8 +380,12 @@ describe('entries', () => {
       tree: fc.oneof(
         { depthSize: 'small', withCrossShrink: true },
         leaves,
-        fc.tuple(tie('tree'), fc.constantFrom('+', '-', '*', '/', '^', '<', '>=', '='), tie('tree')).map(([left, operator, right]) => `(${left} ${operator} ${right})`),
-        fc.tuple(fc.constantFrom('f', 'powersum'), fc.array(tie('tree'), { minLength: 1, maxLength: 3 })).map(([name, all]) => `${name}(${all.join(', ')})`),
+        fc
+          .tuple(tie('tree'), fc.constantFrom('+', '-', '*', '/', '^', '<', '>=', '='), tie('tree'))
+          .map(([left, operator, right]) => `(${left} ${operator} ${right})`),
+        fc
+          .tuple(fc.constantFrom('f', 'powersum'), fc.array(tie('tree'), { minLength: 1, maxLength: 3 }))
+          .map(([name, all]) => `${name}(${all.join(', ')})`),
         tie('tree').map((tree) => `(-${tree})`),
       ),
     })).tree;

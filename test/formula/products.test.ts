@@ -167,13 +167,19 @@ describe('the logarithm idioms', () => {
 
   it('10*log10(x) is db(x), and 20*log10(x) is db of x², whatever x is', () => {
     fc.assert(
-      fc.property(fc.constantFrom('W', 'Hz', 'K', 'ohm', 'm', '1', 's', 'W/m²'), fc.double({ min: 1e-6, max: 1e6, noNaN: true }), (unit, x) => {
-        const literal = unit === '1' ? String(x) : `${String(x)} ${unit}`;
-        const evaluation = new Evaluation(sheetOf(`x = ${literal}\na = 10*log10(x)\nb = db(x)\nc = 20*log10(x)\nd = db(x^2)`));
-        const values = ['a', 'b', 'c', 'd'].map((symbol) => Number(valueOf(evaluation, symbol)));
-        expect(values[0]).toBe(values[1]);
-        expect(values[2]).toBeCloseTo(values[3] ?? NaN, 9);
-      }),
+      fc.property(
+        fc.constantFrom('W', 'Hz', 'K', 'ohm', 'm', '1', 's', 'W/m²'),
+        fc.double({ min: 1e-6, max: 1e6, noNaN: true }),
+        (unit, x) => {
+          const literal = unit === '1' ? String(x) : `${String(x)} ${unit}`;
+          const evaluation = new Evaluation(
+            sheetOf(`x = ${literal}\na = 10*log10(x)\nb = db(x)\nc = 20*log10(x)\nd = db(x^2)`),
+          );
+          const values = ['a', 'b', 'c', 'd'].map((symbol) => Number(valueOf(evaluation, symbol)));
+          expect(values[0]).toBe(values[1]);
+          expect(values[2]).toBeCloseTo(values[3] ?? NaN, 9);
+        },
+      ),
       { numRuns: 60 },
     );
   });
@@ -201,11 +207,17 @@ describe('the exponential idioms', () => {
 
   it('10^(x/10) is lin(x)', () => {
     fc.assert(
-      fc.property(fc.constantFrom('dBm', 'dBW', 'dB', 'dBHz', 'dBK', 'dBm/Hz'), fc.double({ min: -100, max: 100, noNaN: true }), (unit, x) => {
-        const evaluation = new Evaluation(sheetOf(`x = ${String(Number(x.toFixed(6)))} ${unit}\na = 10^(x/10)\nb = lin(x)`));
-        const [a, b] = ['a', 'b'].map((symbol) => Number(valueOf(evaluation, symbol)));
-        expect(Math.abs((a ?? NaN) / (b ?? NaN) - 1)).toBeLessThan(1e-12);
-      }),
+      fc.property(
+        fc.constantFrom('dBm', 'dBW', 'dB', 'dBHz', 'dBK', 'dBm/Hz'),
+        fc.double({ min: -100, max: 100, noNaN: true }),
+        (unit, x) => {
+          const evaluation = new Evaluation(
+            sheetOf(`x = ${String(Number(x.toFixed(6)))} ${unit}\na = 10^(x/10)\nb = lin(x)`),
+          );
+          const [a, b] = ['a', 'b'].map((symbol) => Number(valueOf(evaluation, symbol)));
+          expect(Math.abs((a ?? NaN) / (b ?? NaN) - 1)).toBeLessThan(1e-12);
+        },
+      ),
       { numRuns: 60 },
     );
   });

@@ -26,7 +26,13 @@ const offers: readonly Offer[] = readdirSync(folder)
     return evaluation.sheetFindings().flatMap(({ code, lineId, repairs }) =>
       repairs.map((repair, at) => {
         const line = evaluation.line(lineId);
-        return { title: `${code} in ${line?.symbol ?? ''} = ${line?.entry ?? ''}: ${repair.title}`, worksheet, lineId, code, at };
+        return {
+          title: `${code} in ${line?.symbol ?? ''} = ${line?.entry ?? ''}: ${repair.title}`,
+          worksheet,
+          lineId,
+          code,
+          at,
+        };
       }),
     );
   });
@@ -46,7 +52,12 @@ describe('repairs', () => {
     const same = after.findings(lineId).filter((one) => one.code === code && one.message === finding.message);
     expect(same).toEqual([]);
     // A name put right may be that of a line that is itself in error.
-    const worse = after.findings(lineId).filter(({ severity, code: found }) => severity === 'error' && found !== 'waiting' && !before.findings(lineId).some((one) => one.code === found));
+    const worse = after
+      .findings(lineId)
+      .filter(
+        ({ severity, code: found }) =>
+          severity === 'error' && found !== 'waiting' && !before.findings(lineId).some((one) => one.code === found),
+      );
     expect(worse.map(({ code: found, message }) => `${found}: ${message}`)).toEqual([]);
   });
 });

@@ -1,7 +1,16 @@
 /** The scanner: literals with their units, signs, limits and places; plain quantities; renaming; the nearest name. */
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { DEPTH_LIMIT, ENTRY_LIMIT, nearestName, parseEntry, readPlainQuantity, renameSymbol, scanEntry, type Token } from '../../src/formula';
+import {
+  DEPTH_LIMIT,
+  ENTRY_LIMIT,
+  nearestName,
+  parseEntry,
+  readPlainQuantity,
+  renameSymbol,
+  scanEntry,
+  type Token,
+} from '../../src/formula';
 import { UNIT_WORDS } from '../../src/quantity';
 
 function toldOf(token: Token): string {
@@ -126,7 +135,15 @@ describe('places', () => {
   it('are those of the text, in UTF-16 units', () => {
     const entry = ' 𝛼*−3 dB + f( "x" )';
     const scan = scanEntry(entry);
-    expect(scan.ok && scan.value.tokens.map(({ start, end }) => entry.slice(start, end))).toEqual(['𝛼', '*', '−3 dB', '+', 'f(', '"x"', ')']);
+    expect(scan.ok && scan.value.tokens.map(({ start, end }) => entry.slice(start, end))).toEqual([
+      '𝛼',
+      '*',
+      '−3 dB',
+      '+',
+      'f(',
+      '"x"',
+      ')',
+    ]);
   });
 
   it.each([
@@ -150,7 +167,9 @@ describe('limits', () => {
     const longest = `1${'+1'.repeat((ENTRY_LIMIT - 1) / 2)}`.padEnd(ENTRY_LIMIT, ' ');
     expect([ENTRY_LIMIT, longest.length]).toEqual([4096, 4096]);
     expect(parseEntry(longest).ok).toBe(true);
-    expect(tokens(`${longest} `)).toBe('The entry has 4097 characters; at most 4096 are read. Split it over several lines.');
+    expect(tokens(`${longest} `)).toBe(
+      'The entry has 4097 characters; at most 4096 are read. Split it over several lines.',
+    );
   });
 
   it.each(['(', 'f('])('take 64 levels of %s and refuse 65', (open) => {
@@ -172,19 +191,37 @@ describe('limits', () => {
 });
 
 describe('hostile text', () => {
-  it.each(['<script>alert(1)</script>', '{{constructor}}', '${x}', 'a`b`', "'; DROP", '\u202ea', 'a\0b', '\ud800', '=HYPERLINK("x")', '@SUM(1)', '\u200b', '<!--', '\\u0041', '%3Cscript'])(
-    'is refused or read, and never run: %j',
-    (entry) => {
-      const scan = scanEntry(entry);
-      if (scan.ok) expect(scan.value.tokens.every(({ type }) => ['symbol', 'sign', 'text', 'function', 'literal'].includes(type))).toBe(true);
-      else expect(scan.fault.sentence).not.toBe('');
+  it.each([
+    '<script>alert(1)</script>',
+    '{{constructor}}',
+    '${x}',
+    'a`b`',
+    "'; DROP",
+    '\u202ea',
+    'a\0b',
+    '\ud800',
+    '=HYPERLINK("x")',
+    '@SUM(1)',
+    '\u200b',
+    '<!--',
+    '\\u0041',
+    '%3Cscript',
+  ])('is refused or read, and never run: %j', (entry) => {
+    const scan = scanEntry(entry);
+    if (scan.ok)
+      expect(
+        scan.value.tokens.every(({ type }) => ['symbol', 'sign', 'text', 'function', 'literal'].includes(type)),
+      ).toBe(true);
+    else expect(scan.fault.sentence).not.toBe('');
+  });
+
+  it.each(['toString', 'constructor', 'hasOwnProperty', 'valueOf', 'prototype'])(
+    '%s is a symbol like any other',
+    (name) => {
+      expect(tokens(`${name} + 1`)).toEqual([name, '+', '1']);
+      expect(tokens(`${name}(1)`)).toEqual([`${name}(`, '1', ')']);
     },
   );
-
-  it.each(['toString', 'constructor', 'hasOwnProperty', 'valueOf', 'prototype'])('%s is a symbol like any other', (name) => {
-    expect(tokens(`${name} + 1`)).toEqual([name, '+', '1']);
-    expect(tokens(`${name}(1)`)).toEqual([`${name}(`, '1', ')']);
-  });
 
   it('tokens and shape correspond: entries that differ in names and figures alone have one shape', () => {
     const shape = (entry: string): string | undefined => {
@@ -229,15 +266,40 @@ describe('plain quantities', () => {
     ['0', 0, undefined, 0],
   ])('%s', (text, figure, word, digits) => {
     const read = readPlainQuantity(text);
-    expect(read && { figure: read.figure, word: read.unit?.word, digits: read.digits }).toEqual({ figure, word, digits });
+    expect(read && { figure: read.figure, word: read.unit?.word, digits: read.digits }).toEqual({
+      figure,
+      word,
+      digits,
+    });
   });
 
-  it.each(['', ' ', '-', ',', '.', 'dBm', 'a', '3 + 4', '1,2,3', '1.234,5', '1,234.5', '12 34', '3 dB + 1 dB', '3 furlong', '1e400', '3 dB dB', '--3', '3-', '(3 dB)', '3 1', 'NaN', 'Infinity', '0x10'])(
-    '“%s” is none',
-    (text) => {
-      expect(readPlainQuantity(text)).toBeUndefined();
-    },
-  );
+  it.each([
+    '',
+    ' ',
+    '-',
+    ',',
+    '.',
+    'dBm',
+    'a',
+    '3 + 4',
+    '1,2,3',
+    '1.234,5',
+    '1,234.5',
+    '12 34',
+    '3 dB + 1 dB',
+    '3 furlong',
+    '1e400',
+    '3 dB dB',
+    '--3',
+    '3-',
+    '(3 dB)',
+    '3 1',
+    'NaN',
+    'Infinity',
+    '0x10',
+  ])('“%s” is none', (text) => {
+    expect(readPlainQuantity(text)).toBeUndefined();
+  });
 
   it('never throws, and gives finite figures alone', () => {
     fc.assert(
@@ -272,10 +334,13 @@ describe('renaming', () => {
 
   it('and renaming back gives the entry again, when the new name was not in it', () => {
     fc.assert(
-      fc.property(fc.array(fc.constantFrom('P', 'G', 'x', ' + ', ' - ', '3 dB', 'f(', ')', ' '), { maxLength: 10 }), (pieces) => {
-        const entry = pieces.join('');
-        expect(renameSymbol(renameSymbol(entry, 'P', 'fresh_1'), 'fresh_1', 'P')).toBe(entry);
-      }),
+      fc.property(
+        fc.array(fc.constantFrom('P', 'G', 'x', ' + ', ' - ', '3 dB', 'f(', ')', ' '), { maxLength: 10 }),
+        (pieces) => {
+          const entry = pieces.join('');
+          expect(renameSymbol(renameSymbol(entry, 'P', 'fresh_1'), 'fresh_1', 'P')).toBe(entry);
+        },
+      ),
     );
   });
 });

@@ -64,7 +64,11 @@ describe('figures and dimensions of decibel sums', () => {
   });
 
   it('keep the unit of the one term that has the result’s dimension, as written', () => {
-    expect([read('W - L_1').figure, read('P - L_1').figure, read('N_0 + NF').figure]).toEqual(['-13.00 dBW', '17.00 dBm', '-169.00 dBm/Hz']);
+    expect([read('W - L_1').figure, read('P - L_1').figure, read('N_0 + NF').figure]).toEqual([
+      '-13.00 dBW',
+      '17.00 dBm',
+      '-169.00 dBm/Hz',
+    ]);
   });
 
   it('add figures as written, without going through powers of ten', () => {
@@ -74,7 +78,10 @@ describe('figures and dimensions of decibel sums', () => {
 
   it('of no power are no power', () => {
     const evaluation = new Evaluation(sheetOf('a | dBm = 0 W\nx = a + 3 dB\ny | W = x\nz = 3 dBm - a'));
-    expect([1, 2].map((at) => evaluation.figure(`l${at}`, 'nominal'))).toMatchObject([{ value: -Infinity }, { value: 0 }]);
+    expect([1, 2].map((at) => evaluation.figure(`l${at}`, 'nominal'))).toMatchObject([
+      { value: -Infinity },
+      { value: 0 },
+    ]);
     expect(evaluation.figure('l3', 'nominal').state).toBe('withheld');
   });
 });

@@ -9,17 +9,26 @@ import { allowedError, figuresOf, HOW, RECORDS } from './records';
 import { recipeOf } from './recipes';
 
 describe('checks against the outside world', () => {
-  it.each(RECORDS.map((record) => ({ record, title: `${record.id} (${HOW[record.how]}: ${record.source})` })))('$title', ({ record }) => {
-    const { lines, without = {} } = recipeOf(record.id);
-    const evaluation = new Evaluation(sheetOf(lines(record.inputs, record)));
-    const figures = figuresOf(record).filter(({ key }) => !(key in without));
-    const offBy = (key: string, value: number): number => {
-      const found = valueOf(evaluation, key);
-      return typeof found === 'number' ? Math.abs(found - value) : NaN;
-    };
-    const missed = figures.filter((figure) => !(offBy(figure.key, figure.value) <= allowedError(record, figure)));
-    expect(missed.map((figure) => ({ ...figure, found: valueOf(evaluation, figure.key), allowed: allowedError(record, figure) }))).toEqual([]);
-    const alarms = evaluation.sheetFindings().filter(({ severity }) => severity !== 'note');
-    expect(alarms.map(({ code, message }) => `${code}: ${message}`)).toEqual([]);
-  });
+  it.each(RECORDS.map((record) => ({ record, title: `${record.id} (${HOW[record.how]}: ${record.source})` })))(
+    '$title',
+    ({ record }) => {
+      const { lines, without = {} } = recipeOf(record.id);
+      const evaluation = new Evaluation(sheetOf(lines(record.inputs, record)));
+      const figures = figuresOf(record).filter(({ key }) => !(key in without));
+      const offBy = (key: string, value: number): number => {
+        const found = valueOf(evaluation, key);
+        return typeof found === 'number' ? Math.abs(found - value) : NaN;
+      };
+      const missed = figures.filter((figure) => !(offBy(figure.key, figure.value) <= allowedError(record, figure)));
+      expect(
+        missed.map((figure) => ({
+          ...figure,
+          found: valueOf(evaluation, figure.key),
+          allowed: allowedError(record, figure),
+        })),
+      ).toEqual([]);
+      const alarms = evaluation.sheetFindings().filter(({ severity }) => severity !== 'note');
+      expect(alarms.map(({ code, message }) => `${code}: ${message}`)).toEqual([]);
+    },
+  );
 });

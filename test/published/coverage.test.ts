@@ -12,7 +12,10 @@ import { describe, expect, it } from 'vitest';
 import { figuresOf, RECORDS } from './records';
 import { recipeOf, RECIPES } from './recipes';
 
-const notCovered = JSON.parse(readFileSync(new URL('./not-covered.json', import.meta.url), 'utf8')) as Record<string, readonly string[]>;
+const notCovered = JSON.parse(readFileSync(new URL('./not-covered.json', import.meta.url), 'utf8')) as Record<
+  string,
+  readonly string[]
+>;
 const covered = RECORDS.map(({ id }) => id);
 const records = covered.filter((id) => !id.startsWith('prose-'));
 const left = Object.values(notCovered).flat();
@@ -35,7 +38,9 @@ describe('coverage of the handed-down checks', () => {
   it('checks at least one figure of every record, and names each that it leaves out', () => {
     const silent = RECORDS.filter((record) => {
       const { without = {} } = recipeOf(record.id);
-      const keys = new Set(figuresOf(record).map(({ key }) => (key in record.expected ? key : key.replace(/_\d+$/, ''))));
+      const keys = new Set(
+        figuresOf(record).map(({ key }) => (key in record.expected ? key : key.replace(/_\d+$/, ''))),
+      );
       const checked = [...keys].filter((key) => !(key in without));
       return checked.length === 0 || Object.keys(record.expected).some((key) => !keys.has(key) && !(key in without));
     });
@@ -43,6 +48,10 @@ describe('coverage of the handed-down checks', () => {
   });
 
   it('tells of every record how it came here', () => {
-    expect(RECORDS.filter(({ how, source }) => !['read', 'computed', 'memory'].includes(how) || source.length < 5).map(({ id }) => id)).toEqual([]);
+    expect(
+      RECORDS.filter(({ how, source }) => !['read', 'computed', 'memory'].includes(how) || source.length < 5).map(
+        ({ id }) => id,
+      ),
+    ).toEqual([]);
   });
 });

@@ -28,7 +28,9 @@ const table = (record: PublishedRecord, means = false): string =>
   printed(record)
     .flatMap((line, at) => {
       const value = means ? (line.printed_mean ?? line.value) : line.value;
-      return value === null ? [] : [`b${at} = ${value} ${unitOf(line).replace(/^1$/, '')} # ${line.name.replace(/@|=>|!/g, ' ')}`];
+      return value === null
+        ? []
+        : [`b${at} = ${value} ${unitOf(line).replace(/^1$/, '')} # ${line.name.replace(/@|=>|!/g, ' ')}`];
     })
     .join('\n');
 
@@ -121,7 +123,10 @@ export const BUDGET_RECIPES: readonly Recipe[] = [
       required_EbN0_dB = b19 + b20 + b21
       margin_dB = EbN0_dB - required_EbN0_dB`,
   },
-  { ids: /^budget-roddy-ex12\.(9|14)$/, lines: (_, record) => `${table(record)}\nCN0_dBHz | dBHz = ${sum(record, 0, 9)}` },
+  {
+    ids: /^budget-roddy-ex12\.(9|14)$/,
+    lines: (_, record) => `${table(record)}\nCN0_dBHz | dBHz = ${sum(record, 0, 9)}`,
+  },
   {
     ids: /^budget-roddy-eirp-required$/,
     lines: (_, record) => `${table(record)}

@@ -19,12 +19,16 @@ const stagesOf = (inputs: Readonly<Record<string, unknown>>): readonly Stage[] =
 /** `NF_0 | dB`, `G_0 | dB` … one pair of lines a stage. */
 const declared = (stages: readonly Stage[]): string =>
   stages
-    .map(({ NF_dB = 0, G_dB = 0 }, at) => `NF_${at} | dB | noise figure = ${NF_dB} dB\nG_${at} | dB | gain = ${G_dB} dB`)
+    .map(
+      ({ NF_dB = 0, G_dB = 0 }, at) => `NF_${at} | dB | noise figure = ${NF_dB} dB\nG_${at} | dB | gain = ${G_dB} dB`,
+    )
     .join('\n');
 
-const cascade = (stages: readonly Stage[]): string => `cascade_nf(${stages.map((_, at) => `NF_${at}, G_${at}`).join(', ')})`;
+const cascade = (stages: readonly Stage[]): string =>
+  `cascade_nf(${stages.map((_, at) => `NF_${at}, G_${at}`).join(', ')})`;
 
-const gainAhead = (at: number): string => (at === 0 ? '' : `*lin(${Array.from({ length: at }, (_, index) => `G_${index}`).join(' + ')})`);
+const gainAhead = (at: number): string =>
+  at === 0 ? '' : `*lin(${Array.from({ length: at }, (_, index) => `G_${index}`).join(' + ')})`;
 
 /** 1/P of the input intercept: contributions in phase, each with the gain ahead of it. */
 const intercept = (stages: readonly Stage[], point: (stage: Stage) => number | undefined): string =>

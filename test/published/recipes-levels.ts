@@ -48,14 +48,17 @@ export const LEVEL_RECIPES: readonly Recipe[] = [
                    dBuV | dBµV = P + db(${number(i, 'Z_ohm')} ohm)
                    dBV | dBV = Vrms`,
   },
-  { ids: /^lvl-emf$/, lines: (i) => `pd_dBuV | dBµV = ${number(i, 'emf_dBuV')} dBµV - 20*log10(2)`, },
+  { ids: /^lvl-emf$/, lines: (i) => `pd_dBuV | dBµV = ${number(i, 'emf_dBuV')} dBµV - 20*log10(2)` },
   {
     ids: /^fs-dBuVm-pfd$/,
     lines: (i) => `E = ${number(i, 'E_dBuV_per_m')} dBµV/m
                    S_dBmW_per_m2 | dBm/m² = E - db(${Z_0})
                    S_dBW_per_m2 | dBW/m² = E - db(${Z_0})`,
   },
-  { ids: /^fs-E-H$/, lines: (i) => `H_dBuA_per_m | dBµA/m = ${number(i, 'E_dBuV_per_m')} dBµV/m - 20*log10(376.730313 ohm)` },
+  {
+    ids: /^fs-E-H$/,
+    lines: (i) => `H_dBuA_per_m | dBµA/m = ${number(i, 'E_dBuV_per_m')} dBµV/m - 20*log10(376.730313 ohm)`,
+  },
   {
     ids: /^fs-1kW-1km$/,
     lines: (i) => `E = sqrt(30 ohm*${number(i, 'EIRP_W')} W)/${number(i, 'd_m')} m
@@ -84,10 +87,14 @@ export const LEVEL_RECIPES: readonly Recipe[] = [
   },
   {
     ids: /^fs-iso-const$/,
-    lines: (i) => `P_dBm | dBm = ${number(i, 'E_dBuV_per_m')} dBµV/m - db(${Z_0}) + 20*log10(c_0/${number(i, 'f_MHz')} MHz) - db(4*pi)`,
+    lines: (i) =>
+      `P_dBm | dBm = ${number(i, 'E_dBuV_per_m')} dBµV/m - db(${Z_0}) + 20*log10(c_0/${number(i, 'f_MHz')} MHz) - db(4*pi)`,
   },
-  { ids: /^fs-P525-E$/, lines: (i) => `P = ${number(i, 'Pt_dBW')} dBW
-                                      E_dBuV_per_m | dBµV/m = P + db(30 ohm) - 20*log10(${number(i, 'd_km')} km)` },
+  {
+    ids: /^fs-P525-E$/,
+    lines: (i) => `P = ${number(i, 'Pt_dBW')} dBW
+                                      E_dBuV_per_m | dBµV/m = P + db(30 ohm) - 20*log10(${number(i, 'd_km')} km)`,
+  },
   {
     ids: /^fs-P1546-Lb$/,
     lines: (i) => `E = ${number(i, 'E_dBuV_per_m')} dBµV/m
@@ -95,8 +102,11 @@ export const LEVEL_RECIPES: readonly Recipe[] = [
                    A = (c_0/${number(i, 'f_MHz')} MHz)^2/(4*pi)
                    Lb_dB = db(P) - (E - db(${Z_0}) + db(A))`,
   },
-  { ids: /^fs-AF-iso$/, lines: (i) => `A = (c_0/${number(i, 'f_MHz')} MHz)^2/(4*pi)
-                                      AF_dB_per_m | dB(1/m²) = db(${Z_0}) - db(${number(i, 'Z_ohm')} ohm) - db(A) - ${number(i, 'G_dBi')} dBi` },
+  {
+    ids: /^fs-AF-iso$/,
+    lines: (i) => `A = (c_0/${number(i, 'f_MHz')} MHz)^2/(4*pi)
+                                      AF_dB_per_m | dB(1/m²) = db(${Z_0}) - db(${number(i, 'Z_ohm')} ohm) - db(A) - ${number(i, 'G_dBi')} dBi`,
+  },
   {
     ids: /^adc-snr-/,
     lines: (i) => `n = ${number(i, 'N_bits')}
@@ -157,7 +167,13 @@ export const LEVEL_RECIPES: readonly Recipe[] = [
   },
   { ids: /^evmdB-/, lines: (i) => `EVM_percent | % = 10^(${quantity(number(i, 'EVM_dB'), 'dB')}/20)` },
   { ids: /^3gpp-evm-/, lines: (i) => `SNR_equiv_dB = -20*log10(${number(i, 'EVM_percent')} %)` },
-  { ids: /^evm-snr$/, lines: (i) => numbers(i, 'EVM_percent').map((evm, at) => `SNR_dB_${at} = -20*log10(${evm} %)`).join('\n') },
+  {
+    ids: /^evm-snr$/,
+    lines: (i) =>
+      numbers(i, 'EVM_percent')
+        .map((evm, at) => `SNR_dB_${at} = -20*log10(${evm} %)`)
+        .join('\n'),
+  },
   {
     ids: /^evm-rss-/,
     lines: (i) => {

@@ -38,7 +38,10 @@ export const NOISE_RECIPES: readonly Recipe[] = [
   { ids: /^nf2t-marco/, lines: (i) => `Te_K = noise_temperature(${number(i, 'NF_dB')} dB)` },
   {
     ids: /^nf2t-rfcafe/,
-    lines: (i) => numbers(i, 'NF_dB').map((figure, at) => `Te_K_${at} = noise_temperature(${figure} dB)`).join('\n'),
+    lines: (i) =>
+      numbers(i, 'NF_dB')
+        .map((figure, at) => `Te_K_${at} = noise_temperature(${figure} dB)`)
+        .join('\n'),
   },
   { ids: /^t2nf-/, lines: (i) => `NF_dB = noise_figure(${number(i, 'Te_K')} K)` },
   {
@@ -54,7 +57,10 @@ export const NOISE_RECIPES: readonly Recipe[] = [
                    CN_im = ${number(i, 'intermod_dB')} dB
                    combined_dB = ratiosum(CN_up, CN_down, CN_im)`,
   },
-  { ids: /^cn-pratt-20-20$/, lines: (i) => `combined_dB = ratiosum(${number(i, 'up_dB')} dB, ${number(i, 'down_dB')} dB)` },
+  {
+    ids: /^cn-pratt-20-20$/,
+    lines: (i) => `combined_dB = ratiosum(${number(i, 'up_dB')} dB, ${number(i, 'down_dB')} dB)`,
+  },
   { ids: /^cn-fcc-/, lines: (i) => `combined_dB = ratiosum(${number(i, 'EbN0_dB')} dB, ${number(i, 'EbI0_dB')} dB)` },
   {
     ids: /^cn-roddy-p12.35$/,
@@ -70,7 +76,10 @@ export const NOISE_RECIPES: readonly Recipe[] = [
   },
   {
     ids: /^cn-comb-/,
-    lines: (i) => `combined_dB = ratiosum(${numbers(i, 'terms_dB').map((term) => `${term} dB`).join(', ')})`,
+    lines: (i) =>
+      `combined_dB = ratiosum(${numbers(i, 'terms_dB')
+        .map((term) => `${term} dB`)
+        .join(', ')})`,
   },
   {
     ids: /^rain-roddy-12.16$/,
@@ -110,15 +119,32 @@ export const NOISE_RECIPES: readonly Recipe[] = [
   { ids: /^load-rise-/, lines: (i) => `rise_dB = -db(1 - ${number(i, 'load_percent')} %)` },
   {
     ids: /^lte-refsens-derive-/,
-    lines: (i) => sensitivity('REFSENS_dBm', number(i, 'B_Hz'), ...['NF_dB', 'SINR_dB', 'IM_dB'].map((key) => quantity(number(i, key), 'dB')), `(-${number(i, 'diversity_dB')} dB)`),
+    lines: (i) =>
+      sensitivity(
+        'REFSENS_dBm',
+        number(i, 'B_Hz'),
+        ...['NF_dB', 'SINR_dB', 'IM_dB'].map((key) => quantity(number(i, key), 'dB')),
+        `(-${number(i, 'diversity_dB')} dB)`,
+      ),
   },
   {
     ids: /^nr-refsens-n1-/,
-    lines: (i) => sensitivity('REFSENS_dBm', number(i, 'N_RB') * 12 * number(i, 'SCS_kHz') * 1000, ...['NF_dB', 'SNR_dB', 'IM_dB'].map((key) => quantity(number(i, key), 'dB')), `(-${number(i, 'diversity_dB')} dB)`),
+    lines: (i) =>
+      sensitivity(
+        'REFSENS_dBm',
+        number(i, 'N_RB') * 12 * number(i, 'SCS_kHz') * 1000,
+        ...['NF_dB', 'SNR_dB', 'IM_dB'].map((key) => quantity(number(i, key), 'dB')),
+        `(-${number(i, 'diversity_dB')} dB)`,
+      ),
   },
   {
     ids: /^lte-bs-refsens-5$/,
-    lines: (i) => sensitivity('PREFSENS_dBm', number(i, 'N_RB') * 180e3, ...['NF_dB', 'IM_dB', 'SNR_dB'].map((key) => quantity(number(i, key), 'dB'))),
+    lines: (i) =>
+      sensitivity(
+        'PREFSENS_dBm',
+        number(i, 'N_RB') * 180e3,
+        ...['NF_dB', 'IM_dB', 'SNR_dB'].map((key) => quantity(number(i, key), 'dB')),
+      ),
   },
   {
     ids: /^utra-bs-refsens$/,
@@ -140,14 +166,25 @@ export const NOISE_RECIPES: readonly Recipe[] = [
                    I = powerdiff(N + ${number(i, 'desensitization_dB')} dB, N)
                    ACS_dB = ${number(i, 'interferer_dBm')} dBm - I`,
   },
-  { ids: /^acir-/, lines: (i) => `ACLR = ${number(i, 'ACLR_dB')} dB
+  {
+    ids: /^acir-/,
+    lines: (i) => `ACLR = ${number(i, 'ACLR_dB')} dB
                                   ACS = ${number(i, 'ACS_dB')} dB
-                                  ACIR_dB = ratiosum(ACLR, ACS)` },
+                                  ACIR_dB = ratiosum(ACLR, ACS)`,
+  },
   {
     ids: /^wifi-a-/,
-    lines: (i, { expected }) => `N = thermal_noise(T_0, ${number(i, 'B_Hz')} Hz) + ${number(i, 'NF_dB')} dB + ${number(i, 'IM_dB')} dB
+    lines: (
+      i,
+      { expected },
+    ) => `N = thermal_noise(T_0, ${number(i, 'B_Hz')} Hz) + ${number(i, 'NF_dB')} dB + ${number(i, 'IM_dB')} dB
                                  implied_SNR_dB = ${String(expected['min_sensitivity_dBm'])} dBm - N`,
-    without: { min_sensitivity_dBm: TABLE, adjacent_rejection_dB: TABLE, alternate_rejection_dB: TABLE, EVM_limit_dB: TABLE },
+    without: {
+      min_sensitivity_dBm: TABLE,
+      adjacent_rejection_dB: TABLE,
+      alternate_rejection_dB: TABLE,
+      EVM_limit_dB: TABLE,
+    },
   },
   { ids: /^wifi-sens-11-03-845$/, lines: () => 'offset_dBm = thermal_noise(T_0, 20 MHz) + 10 dB + 5 dB' },
 ];

@@ -5,7 +5,8 @@ const Z_0 = '376.730313 ohm';
 const LATER = 'a function of a later milestone';
 
 /** The numeral at the head of an input such as `50 km`. */
-const text = (inputs: Readonly<Record<string, unknown>>, key: string): string => String(inputs[key]).replace('m2', 'm²').replace('dB(uV/m)', 'dBµV/m');
+const text = (inputs: Readonly<Record<string, unknown>>, key: string): string =>
+  String(inputs[key]).replace('m2', 'm²').replace('dB(uV/m)', 'dBµV/m');
 
 export const PROPAGATION_RECIPES: readonly Recipe[] = [
   { ids: /^fs-const-mhz-km$/, lines: (i) => `L_dB = free_space_loss(${text(i, 'd')}, ${text(i, 'f')})` },
@@ -13,21 +14,40 @@ export const PROPAGATION_RECIPES: readonly Recipe[] = [
     ids: /^fs-const-set$/,
     lines: () =>
       // A metre at 1 MHz or 1 Hz is in the near field, where the function warns: a longer path, less 20 log10 of the rest.
-      [['1 km', '1 GHz', 0], ['1 m', '1 GHz', 0], ['1 km', '1 MHz', 60], ['1e6 km', '1 Hz', 180], ['1 mi', '1 MHz', 0], ['1 nmi', '1 MHz', 0]]
+      [
+        ['1 km', '1 GHz', 0],
+        ['1 m', '1 GHz', 0],
+        ['1 km', '1 MHz', 60],
+        ['1e6 km', '1 Hz', 180],
+        ['1 mi', '1 MHz', 0],
+        ['1 nmi', '1 MHz', 0],
+      ]
         .map(([d = '', f = '', rest = 0], at) => `dB_${at} = free_space_loss(${d}, ${f}) - ${rest} dB`)
         .join('\n'),
   },
-  { ids: /^(fs-\d\d$|prose-fs-)/, lines: (i) => `L_dB = free_space_loss(${number(i, 'd_m')} m, ${number(i, 'f_Hz')} Hz)` },
+  {
+    ids: /^(fs-\d\d$|prose-fs-)/,
+    lines: (i) => `L_dB = free_space_loss(${number(i, 'd_m')} m, ${number(i, 'f_Hz')} Hz)`,
+  },
   { ids: /^fspl-/, lines: (i) => `FSPL_dB = free_space_loss(${number(i, 'd_m')} m, ${number(i, 'f_Hz')} Hz)` },
-  { ids: /^emwin-fspl-/, lines: (i) => `FSPL_dB = free_space_loss(${number(i, 'd_km')} km, ${number(i, 'f_MHz')} MHz)` },
+  {
+    ids: /^emwin-fspl-/,
+    lines: (i) => `FSPL_dB = free_space_loss(${number(i, 'd_km')} km, ${number(i, 'f_MHz')} MHz)`,
+  },
   {
     ids: /^fs-field-1kW-1km$/,
     lines: () => `E_V_per_m = sqrt(30 ohm*1 kW)/1 km
                   E_dBuV_per_m | dBµV/m = E_V_per_m`,
   },
   { ids: /^fs-conv-S$/, lines: (i) => `S_dBW_per_m2 | dBW/m² = ${text(i, 'E')} - db(${Z_0})` },
-  { ids: /^fs-conv-Pr$/, lines: (i) => `Pr_dBW | dBW = ${text(i, 'E')} - db(${Z_0}) + 20*log10(c_0/${text(i, 'f')}) - db(4*pi)` },
-  { ids: /^fs-conv-Pr-dBm$/, lines: (i) => `Pr_dBm | dBm = ${text(i, 'E')} - db(${Z_0}) + 20*log10(c_0/${text(i, 'f')}) - db(4*pi)` },
+  {
+    ids: /^fs-conv-Pr$/,
+    lines: (i) => `Pr_dBW | dBW = ${text(i, 'E')} - db(${Z_0}) + 20*log10(c_0/${text(i, 'f')}) - db(4*pi)`,
+  },
+  {
+    ids: /^fs-conv-Pr-dBm$/,
+    lines: (i) => `Pr_dBm | dBm = ${text(i, 'E')} - db(${Z_0}) + 20*log10(c_0/${text(i, 'f')}) - db(4*pi)`,
+  },
   {
     ids: /^fs-radar(-2)?$/,
     lines: (i) => `lambda = c_0/${text(i, 'f')}
@@ -36,7 +56,8 @@ export const PROPAGATION_RECIPES: readonly Recipe[] = [
   },
   {
     ids: /^planeearth-/,
-    lines: (i) => `L_plane_earth_dB = 4*db(${number(i, 'd_m')} m) - 20*log10(${number(i, 'h1_m')} m) - 20*log10(${number(i, 'h2_m')} m)`,
+    lines: (i) =>
+      `L_plane_earth_dB = 4*db(${number(i, 'd_m')} m) - 20*log10(${number(i, 'h1_m')} m) - 20*log10(${number(i, 'h2_m')} m)`,
     without: { 'L_two_ray_exact_R=-1_dB': LATER, crossover_4pi_h1h2_over_lambda_m: LATER },
   },
   {
@@ -53,13 +74,22 @@ export const PROPAGATION_RECIPES: readonly Recipe[] = [
   },
   {
     ids: /^aperture-iso$/,
-    lines: (i) => numbers(i, 'f_GHz').map((f, at) => `A_eff_dBm2_${at} | dBm² = (c_0/${f} GHz)^2/(4*pi)`).join('\n'),
+    lines: (i) =>
+      numbers(i, 'f_GHz')
+        .map((f, at) => `A_eff_dBm2_${at} | dBm² = (c_0/${f} GHz)^2/(4*pi)`)
+        .join('\n'),
   },
   { ids: /^roddy-A0-6GHz$/, lines: (i) => `A0_dB_m2 = 20*log10(c_0/${number(i, 'f_GHz')} GHz) - 10*log10(4*pi)` },
-  { ids: /^dish-area-gain-10m2$/, lines: (i) => `gain_dBi | dBi = ${number(i, 'eta')}*4*pi*${number(i, 'A_m2')} m²/(c_0/${number(i, 'f_GHz')} GHz)^2` },
+  {
+    ids: /^dish-area-gain-10m2$/,
+    lines: (i) => `gain_dBi | dBi = ${number(i, 'eta')}*4*pi*${number(i, 'A_m2')} m²/(c_0/${number(i, 'f_GHz')} GHz)^2`,
+  },
   {
     ids: /^pointing$/,
-    lines: (i) => numbers(i, 'theta_over_theta3dB').map((ratio, at) => `loss_dB_${at} = 12 dB*${ratio}^2`).join('\n'),
+    lines: (i) =>
+      numbers(i, 'theta_over_theta3dB')
+        .map((ratio, at) => `loss_dB_${at} = 12 dB*${ratio}^2`)
+        .join('\n'),
   },
   {
     ids: /^shannon-C-/,
@@ -70,8 +100,10 @@ export const PROPAGATION_RECIPES: readonly Recipe[] = [
     ids: /^shannon-limit$/,
     lines: (i) =>
       numbers(i, 'eta_bit_s_Hz')
-        .map((eta, at) => `SNR_min_dB_${at} = db(exp(${eta}*ln(2)) - 1)
-                           EbN0_min_dB_${at} = SNR_min_dB_${at} - 10*log10(${eta})`)
+        .map(
+          (eta, at) => `SNR_min_dB_${at} = db(exp(${eta}*ln(2)) - 1)
+                           EbN0_min_dB_${at} = SNR_min_dB_${at} - 10*log10(${eta})`,
+        )
         .join('\n'),
   },
   {
@@ -90,21 +122,45 @@ export const PROPAGATION_RECIPES: readonly Recipe[] = [
                    CN0_dBHz | dBHz = C/N_0
                    CN_dB = db(C/(N_0*${number(i, 'B_Hz')} Hz))`,
   },
-  { ids: /^roddy-p12.22$/, lines: (i) => `EIRP_dBW | dBW = ${number(i, 'CN0_dBHz')} dBHz - ${number(i, 'GT_dB_per_K')} dB/K + ${number(i, 'losses_dB')} dB + db(k_B)` },
-  { ids: /^voyager-check-space-loss-S$/, lines: () => 'value = -free_space_loss(7.273e9 km, 2113.31 MHz)', without: { unit: 'the unit' } },
-  { ids: /^voyager-check-N0-1545K$/, lines: () => 'value | dBm/Hz = noise_density(1545 K)', without: { unit: 'the unit' } },
+  {
+    ids: /^roddy-p12.22$/,
+    lines: (i) =>
+      `EIRP_dBW | dBW = ${number(i, 'CN0_dBHz')} dBHz - ${number(i, 'GT_dB_per_K')} dB/K + ${number(i, 'losses_dB')} dB + db(k_B)`,
+  },
+  {
+    ids: /^voyager-check-space-loss-S$/,
+    lines: () => 'value = -free_space_loss(7.273e9 km, 2113.31 MHz)',
+    without: { unit: 'the unit' },
+  },
+  {
+    ids: /^voyager-check-N0-1545K$/,
+    lines: () => 'value | dBm/Hz = noise_density(1545 K)',
+    without: { unit: 'the unit' },
+  },
   { ids: /^voyager-check-N0fav-1511-1545$/, lines: () => 'value = db(1511 K/1545 K)', without: { unit: 'the unit' } },
   { ids: /^voyager-check-N0adv-1604-1545$/, lines: () => 'value = db(1604 K/1545 K)', without: { unit: 'the unit' } },
-  { ids: /^voyager-check-N0adv-25p36-21p12$/, lines: () => 'value = db(25.36 K/21.12 K)', without: { unit: 'the unit' } },
-  { ids: /^voyager-check-160bps$/, lines: () => 'value = 10*log10(160 bit/s/(1 bit/s))', without: { unit: 'the unit' } },
+  {
+    ids: /^voyager-check-N0adv-25p36-21p12$/,
+    lines: () => 'value = db(25.36 K/21.12 K)',
+    without: { unit: 'the unit' },
+  },
+  {
+    ids: /^voyager-check-160bps$/,
+    lines: () => 'value = 10*log10(160 bit/s/(1 bit/s))',
+    without: { unit: 'the unit' },
+  },
   { ids: /^voyager-check-sin2-60deg$/, lines: () => 'value = 20*log10(sin(60 deg))', without: { unit: 'the unit' } },
   { ids: /^voyager-check-cos2-60deg$/, lines: () => 'value = 20*log10(cos(60 deg))', without: { unit: 'the unit' } },
   {
     ids: /^voyager-check-Tsys$/,
-    lines: (i) => `T_sys_K = ${numbers(i, 'components_K').map((kelvin) => `${kelvin} K`).join(' + ')}`,
+    lines: (i) =>
+      `T_sys_K = ${numbers(i, 'components_K')
+        .map((kelvin) => `${kelvin} K`)
+        .join(' + ')}`,
   },
   {
     ids: /^cas-marco-dsn-/,
-    lines: (i) => `T_sys_K = ${number(i, 'vacuum_zenith_K')} K + ${number(i, 'elevation_K')} K + ${number(i, 'sky_K')} K`,
+    lines: (i) =>
+      `T_sys_K = ${number(i, 'vacuum_zenith_K')} K + ${number(i, 'elevation_K')} K + ${number(i, 'sky_K')} K`,
   },
 ];

@@ -17,6 +17,7 @@ export const RECIPES: readonly Recipe[] = [
 /** The recipe of a record. Throws when it has none or several. */
 export function recipeOf(id: string): Recipe {
   const [recipe, other] = RECIPES.filter(({ ids }) => ids.test(id));
-  if (recipe === undefined || other !== undefined) throw new Error(`${id} has ${recipe === undefined ? 'no recipe' : 'two recipes'}`);
+  if (recipe === undefined || other !== undefined)
+    throw new Error(`${id} has ${recipe === undefined ? 'no recipe' : 'two recipes'}`);
   return recipe;
 }

@@ -53,7 +53,9 @@ export function figuresOf(record: PublishedRecord): readonly Figure[] {
     if (typeof value === 'number') return [{ key, value }];
     if (typeof value === 'string' && /^\d+ /.test(value)) return [{ key, value: Number.parseFloat(value) }];
     if (!Array.isArray(value)) return [];
-    return value.flatMap((one: unknown, index): Figure[] => (typeof one === 'number' ? [{ key: `${key}_${index}`, value: one }] : []));
+    return value.flatMap((one: unknown, index): Figure[] =>
+      typeof one === 'number' ? [{ key: `${key}_${index}`, value: one }] : [],
+    );
   });
 }
 
@@ -99,9 +101,11 @@ export function number(inputs: Inputs, key: string): number {
 /** An input that is a list of numbers. */
 export function numbers(inputs: Inputs, key: string): readonly number[] {
   const value = inputs[key];
-  if (!Array.isArray(value) || value.some((one) => typeof one !== 'number')) throw new Error(`the input ${key} is no list of numbers`);
+  if (!Array.isArray(value) || value.some((one) => typeof one !== 'number'))
+    throw new Error(`the input ${key} is no list of numbers`);
   return value as number[];
 }
 
 /** A figure with a unit as part of an expression: negative ones in brackets. */
-export const quantity = (figure: number, unit: string): string => (figure < 0 ? `(${figure} ${unit})` : `${figure} ${unit}`);
+export const quantity = (figure: number, unit: string): string =>
+  figure < 0 ? `(${figure} ${unit})` : `${figure} ${unit}`;

@@ -2,7 +2,16 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { Evaluation } from '../../src/engine';
-import { fieldSum, findUnit, meanPower, powerDifference, powerShares, powerSum, reciprocalSum, UNIT_WORDS } from '../../src/quantity';
+import {
+  fieldSum,
+  findUnit,
+  meanPower,
+  powerDifference,
+  powerShares,
+  powerSum,
+  reciprocalSum,
+  UNIT_WORDS,
+} from '../../src/quantity';
 import { cascadeNoiseFigureDb, noiseFigureDb, noiseTemperatureK, passiveNoiseFigureDb } from '../../src/radio';
 import { sheetOf, valueOf } from '../engine/notation';
 
@@ -12,7 +21,20 @@ const positive = fc.double({ min: 1e-20, max: 1e20, noNaN: true, noDefaultInfini
 const ratio = fc.double({ min: -60, max: 60, noNaN: true });
 
 describe('“Sum order changes nothing.”', () => {
-  const TERMS = ['+ P', '- L_1', '+ G_1', '- 3 dB', '+ 2*x', '+ 10*log10(4)', '- N', '+ NF', '+ B_d', '+ SNR', '- 1.5', '+ Q'];
+  const TERMS = [
+    '+ P',
+    '- L_1',
+    '+ G_1',
+    '- 3 dB',
+    '+ 2*x',
+    '+ 10*log10(4)',
+    '- N',
+    '+ NF',
+    '+ B_d',
+    '+ SNR',
+    '- 1.5',
+    '+ Q',
+  ];
   const LINES = `P = 10 dBm
                  Q = 7 dBm
                  N = -101 dBm
@@ -27,19 +49,35 @@ describe('“Sum order changes nothing.”', () => {
     const { id } = evaluation.lines().at(-1) ?? { id: '' };
     const { figure, kind, side } = evaluation.reading(id, 'nominal');
     return {
-      value: figure.state === 'value' ? `${figure.value.toFixed(9)} ${figure.unit.form === 'decibel' ? String(figure.unit.dimension) : ''}` : figure.state,
+      value:
+        figure.state === 'value'
+          ? `${figure.value.toFixed(9)} ${figure.unit.form === 'decibel' ? String(figure.unit.dimension) : ''}`
+          : figure.state,
       kind,
       side,
-      codes: evaluation.findings(id).map(({ code }) => code).sort(),
+      codes: evaluation
+        .findings(id)
+        .map(({ code }) => code)
+        .sort(),
     };
   };
 
   it('neither the figure, nor the kind, nor what is found', () => {
     fc.assert(
-      fc.property(fc.shuffledSubarray(TERMS, { minLength: 2, maxLength: 6 }).chain((terms) => fc.tuple(fc.constant(terms), fc.shuffledSubarray(terms, { minLength: terms.length, maxLength: terms.length }))), ([terms, shuffled]) => {
-        const unitless = (all: readonly string[]): unknown => told(all);
-        expect(unitless(shuffled)).toEqual(unitless(terms));
-      }),
+      fc.property(
+        fc
+          .shuffledSubarray(TERMS, { minLength: 2, maxLength: 6 })
+          .chain((terms) =>
+            fc.tuple(
+              fc.constant(terms),
+              fc.shuffledSubarray(terms, { minLength: terms.length, maxLength: terms.length }),
+            ),
+          ),
+        ([terms, shuffled]) => {
+          const unitless = (all: readonly string[]): unknown => told(all);
+          expect(unitless(shuffled)).toEqual(unitless(terms));
+        },
+      ),
       { numRuns: 150 },
     );
   });
@@ -60,7 +98,11 @@ describe('“lin(db(x)) = x.”', () => {
 
 describe('“powersum: commutative, associative to 1e-12 dB, between max and max + 10·log10 n, shifts with its terms, no power is neutral”', () => {
   it('commutative', () => {
-    fc.assert(fc.property(level, level, (a, b) => { expect(powerSum([a, b])).toBe(powerSum([b, a])); }));
+    fc.assert(
+      fc.property(level, level, (a, b) => {
+        expect(powerSum([a, b])).toBe(powerSum([b, a]));
+      }),
+    );
     fc.assert(
       fc.property(levels, (all) => {
         expect(powerSum([...all].reverse())).toBeCloseTo(powerSum(all), 11);
@@ -98,7 +140,11 @@ describe('“powersum: commutative, associative to 1e-12 dB, between max and max
   });
 
   it('no power is neutral; empty or all of it is no power', () => {
-    fc.assert(fc.property(levels, (all) => { expect(powerSum([...all, -Infinity])).toBe(powerSum(all)); }));
+    fc.assert(
+      fc.property(levels, (all) => {
+        expect(powerSum([...all, -Infinity])).toBe(powerSum(all));
+      }),
+    );
     expect([powerSum([]), powerSum([-Infinity, -Infinity])]).toEqual([-Infinity, -Infinity]);
   });
 
@@ -110,7 +156,11 @@ describe('“powersum: commutative, associative to 1e-12 dB, between max and max
 
 describe('“shares sum to 1 and equal finite differences”', () => {
   it('sum to 1', () => {
-    fc.assert(fc.property(levels, (all) => { expect(powerShares(all).reduce((sum, share) => sum + share, 0)).toBeCloseTo(1, 10); }));
+    fc.assert(
+      fc.property(levels, (all) => {
+        expect(powerShares(all).reduce((sum, share) => sum + share, 0)).toBeCloseTo(1, 10);
+      }),
+    );
   });
 
   it('are the derivative of the sum by each term', () => {
@@ -146,17 +196,38 @@ describe('“ratiosum(a, b) ≤ min(a, b)”', () => {
 
 describe('differences, fields and means', () => {
   it('powerdiff takes back what powersum put in', () => {
-    fc.assert(fc.property(ratio, ratio, (a, b) => { expect(powerDifference(powerSum([a, b]), b)).toBeCloseTo(a, b - a > 20 ? 1 : 6); }), { examples: [[0, 0]] });
+    fc.assert(
+      fc.property(ratio, ratio, (a, b) => {
+        expect(powerDifference(powerSum([a, b]), b)).toBeCloseTo(a, b - a > 20 ? 1 : 6);
+      }),
+      { examples: [[0, 0]] },
+    );
   });
 
   it('a difference of equals is no power; of a larger power there is none', () => {
-    fc.assert(fc.property(level, (a) => { expect(powerDifference(a, a)).toBe(-Infinity); }));
-    fc.assert(fc.property(level, fc.double({ min: 1e-3, max: 100, noNaN: true }), (a, by) => { expect(powerDifference(a, a + by)).toBeNaN(); }));
+    fc.assert(
+      fc.property(level, (a) => {
+        expect(powerDifference(a, a)).toBe(-Infinity);
+      }),
+    );
+    fc.assert(
+      fc.property(level, fc.double({ min: 1e-3, max: 100, noNaN: true }), (a, by) => {
+        expect(powerDifference(a, a + by)).toBeNaN();
+      }),
+    );
   });
 
   it('fieldsum of two equals is 6.02 dB up, and never below powersum', () => {
-    fc.assert(fc.property(level, (a) => { expect(fieldSum([a, a])).toBeCloseTo(a + 20 * Math.log10(2), 9); }));
-    fc.assert(fc.property(levels, (all) => { expect(fieldSum(all)).toBeGreaterThanOrEqual(powerSum(all) - 1e-9); }));
+    fc.assert(
+      fc.property(level, (a) => {
+        expect(fieldSum([a, a])).toBeCloseTo(a + 20 * Math.log10(2), 9);
+      }),
+    );
+    fc.assert(
+      fc.property(levels, (all) => {
+        expect(fieldSum(all)).toBeGreaterThanOrEqual(powerSum(all) - 1e-9);
+      }),
+    );
   });
 
   it('meanpower lies between its terms', () => {
@@ -173,20 +244,40 @@ describe('“A cascade whose first gain is infinite has the first noise figure; 
   const figure = fc.double({ min: 0, max: 30, noNaN: true });
 
   it('a first gain without bound leaves the first noise figure', () => {
-    fc.assert(fc.property(figure, figure, (first, second) => { expect(cascadeNoiseFigureDb(first, Infinity, second)).toBeCloseTo(first, 10); }));
-    fc.assert(fc.property(figure, figure, (first, second) => { expect(cascadeNoiseFigureDb(first, 300, second)).toBeCloseTo(first, 10); }));
+    fc.assert(
+      fc.property(figure, figure, (first, second) => {
+        expect(cascadeNoiseFigureDb(first, Infinity, second)).toBeCloseTo(first, 10);
+      }),
+    );
+    fc.assert(
+      fc.property(figure, figure, (first, second) => {
+        expect(cascadeNoiseFigureDb(first, 300, second)).toBeCloseTo(first, 10);
+      }),
+    );
   });
 
   it('an attenuator at 290 K', () => {
-    fc.assert(fc.property(figure, (loss) => { expect(passiveNoiseFigureDb(loss, 290)).toBeCloseTo(loss, 10); }));
+    fc.assert(
+      fc.property(figure, (loss) => {
+        expect(passiveNoiseFigureDb(loss, 290)).toBeCloseTo(loss, 10);
+      }),
+    );
   });
 
   it('ahead of a receiver it adds its loss to the noise figure', () => {
-    fc.assert(fc.property(figure, figure, (loss, receiver) => { expect(cascadeNoiseFigureDb(passiveNoiseFigureDb(loss, 290), -loss, receiver)).toBeCloseTo(loss + receiver, 8); }));
+    fc.assert(
+      fc.property(figure, figure, (loss, receiver) => {
+        expect(cascadeNoiseFigureDb(passiveNoiseFigureDb(loss, 290), -loss, receiver)).toBeCloseTo(loss + receiver, 8);
+      }),
+    );
   });
 
   it('noise temperature and noise figure are inverse', () => {
-    fc.assert(fc.property(fc.double({ min: 0.01, max: 30, noNaN: true }), (db) => { expect(noiseFigureDb(noiseTemperatureK(db))).toBeCloseTo(db, 9); }));
+    fc.assert(
+      fc.property(fc.double({ min: 0.01, max: 30, noNaN: true }), (db) => {
+        expect(noiseFigureDb(noiseTemperatureK(db))).toBeCloseTo(db, 9);
+      }),
+    );
   });
 });
 
@@ -197,8 +288,16 @@ describe('“decibel figures survive unchanged”', () => {
     fc.assert(
       fc.property(fc.constantFrom(...words), fc.double({ min: -500, max: 500, noNaN: true }), (word, typed) => {
         const figure = Number(typed.toFixed(4)) + 0;
-        const evaluation = new Evaluation(sheetOf(`x = ${String(figure)} ${word}\ny | ${word} = ${String(figure)} ${word}\nz | ${word} = ${String(figure)}`));
-        expect([valueOf(evaluation, 'x'), valueOf(evaluation, 'y'), valueOf(evaluation, 'z')]).toEqual([figure, figure, figure]);
+        const evaluation = new Evaluation(
+          sheetOf(
+            `x = ${String(figure)} ${word}\ny | ${word} = ${String(figure)} ${word}\nz | ${word} = ${String(figure)}`,
+          ),
+        );
+        expect([valueOf(evaluation, 'x'), valueOf(evaluation, 'y'), valueOf(evaluation, 'z')]).toEqual([
+          figure,
+          figure,
+          figure,
+        ]);
       }),
       { numRuns: 200 },
     );
@@ -237,7 +336,8 @@ describe('“Changing a line’s display unit within one form changes no finding
     ['dBm', 'dBW'],
     ['dBkW', 'dBpW'],
   ])('%s and %s', (unit, second) => {
-    const codes = (text: string): readonly string[] => new Evaluation(sheetOf(text)).sheetFindings().map(({ code, lineId }) => `${lineId} ${code}`);
+    const codes = (text: string): readonly string[] =>
+      new Evaluation(sheetOf(text)).sheetFindings().map(({ code, lineId }) => `${lineId} ${code}`);
     expect(codes(SHEET(unit, second))).toEqual(codes(SHEET('dBm', 'dBm')));
     expect(codes(SHEET(unit, second)).length).toBeGreaterThan(6);
   });

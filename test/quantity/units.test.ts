@@ -2,7 +2,15 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { readPlainQuantity } from '../../src/formula';
-import { alternativeUnits, describeDimension, findUnit, matchUnit, UNIT_WORDS, writeQuantity, type Unit } from '../../src/quantity';
+import {
+  alternativeUnits,
+  describeDimension,
+  findUnit,
+  matchUnit,
+  UNIT_WORDS,
+  writeQuantity,
+  type Unit,
+} from '../../src/quantity';
 
 const dimensionOf = (unit: Unit): string => (unit.form === 'rate' ? 'rate' : describeDimension(unit.dimension));
 
@@ -67,10 +75,15 @@ describe('the decibel units of the algebra', () => {
     expect(unit.defaultKind).toBe(kind);
   });
 
-  it.each(['dBm', 'dBW', 'dBµV', 'dBm/Hz', 'dBm/MHz', 'dBK', 'dBHz', 'dBd'])('%s has a reference that is a written constant', (word) => {
-    const unit = findUnit(word);
-    expect(unit?.form === 'decibel' && Number(unit.offsetDb.toFixed(4))).toBe(unit?.form === 'decibel' && unit.offsetDb);
-  });
+  it.each(['dBm', 'dBW', 'dBµV', 'dBm/Hz', 'dBm/MHz', 'dBK', 'dBHz', 'dBd'])(
+    '%s has a reference that is a written constant',
+    (word) => {
+      const unit = findUnit(word);
+      expect(unit?.form === 'decibel' && Number(unit.offsetDb.toFixed(4))).toBe(
+        unit?.form === 'decibel' && unit.offsetDb,
+      );
+    },
+  );
 
   it.each([
     ['dB/m', 1],
@@ -118,7 +131,12 @@ describe('the linear units of the algebra', () => {
   });
 
   it('K suggests a temperature, W a level, Hz nothing', () => {
-    expect(['K', 'W', 'Hz', 'm'].map((word) => findUnit(word)?.defaultKind)).toEqual(['temperature', 'level', undefined, undefined]);
+    expect(['K', 'W', 'Hz', 'm'].map((word) => findUnit(word)?.defaultKind)).toEqual([
+      'temperature',
+      'level',
+      undefined,
+      undefined,
+    ]);
   });
 });
 
@@ -171,12 +189,29 @@ describe('spellings', () => {
     expect(findUnit(spelling)?.word).toBe(word);
   });
 
-  it.each(['dbm', 'DBM', 'Dbm', 'mhz', 'khz', 'dBmW', 'dBq', 'furlong', '', 'dB(', 'dB()', 'dB(furlong)', 'dBm/', '/Hz', 'dBm/0kHz', 'dBm dBm', 'x'.repeat(50), '__proto__', 'constructor'])(
-    '“%s” is none',
-    (word) => {
-      expect(findUnit(word)).toBeUndefined();
-    },
-  );
+  it.each([
+    'dbm',
+    'DBM',
+    'Dbm',
+    'mhz',
+    'khz',
+    'dBmW',
+    'dBq',
+    'furlong',
+    '',
+    'dB(',
+    'dB()',
+    'dB(furlong)',
+    'dBm/',
+    '/Hz',
+    'dBm/0kHz',
+    'dBm dBm',
+    'x'.repeat(50),
+    '__proto__',
+    'constructor',
+  ])('“%s” is none', (word) => {
+    expect(findUnit(word)).toBeUndefined();
+  });
 
   it.each([
     ['dBm/100kHz', -30 - 50],
@@ -198,7 +233,10 @@ describe('spellings', () => {
     ['dB(km)', 'm', 30],
   ])('%s is a reference written out', (word, dimension, offsetDb) => {
     const unit = findUnit(word);
-    expect(unit?.form === 'decibel' && [dimensionOf(unit), Number(unit.offsetDb.toFixed(9))]).toEqual([dimension, offsetDb]);
+    expect(unit?.form === 'decibel' && [dimensionOf(unit), Number(unit.offsetDb.toFixed(9))]).toEqual([
+      dimension,
+      offsetDb,
+    ]);
   });
 });
 
@@ -242,7 +280,9 @@ describe('what a line may be shown in instead', () => {
         if (unit === undefined) throw new Error('no unit');
         const others = alternativeUnits(unit);
         expect(others).toContain(unit);
-        expect(others.every((other) => other.form === unit.form && dimensionOf(other) === dimensionOf(unit))).toBe(true);
+        expect(others.every((other) => other.form === unit.form && dimensionOf(other) === dimensionOf(unit))).toBe(
+          true,
+        );
       }),
     );
   });

@@ -1,7 +1,16 @@
 /** Figures written for people: decimals and significant figures, prefixes, signs, no power, linear values. */
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { findUnit, linearFigure, linearValue, writeFigure, writeQuantity, writeSignificant, type Unit, type WritingOptions } from '../../src/quantity';
+import {
+  findUnit,
+  linearFigure,
+  linearValue,
+  writeFigure,
+  writeQuantity,
+  writeSignificant,
+  type Unit,
+  type WritingOptions,
+} from '../../src/quantity';
 
 const unit = (word: string): Unit => {
   const found = findUnit(word);
@@ -78,7 +87,9 @@ describe('linear figures', () => {
       fc.property(fc.double({ min: 1e-3, max: 9e5, noNaN: true }), fc.integer({ min: 1, max: 9 }), (value, digits) => {
         const text = writeSignificant(value, digits);
         fc.pre(!text.includes('×'));
-        expect(Math.abs(Number(text) - value)).toBeLessThanOrEqual(0.5000001 * 10 ** (Math.floor(Math.log10(value)) + 1 - digits) + Math.abs(value) * 1e-12);
+        expect(Math.abs(Number(text) - value)).toBeLessThanOrEqual(
+          0.5000001 * 10 ** (Math.floor(Math.log10(value)) + 1 - digits) + Math.abs(value) * 1e-12,
+        );
       }),
     );
   });

@@ -42,16 +42,30 @@ describe('thermal noise', () => {
 
   it('grows by 10 log10 of bandwidth and of temperature', () => {
     fc.assert(
-      fc.property(fc.double({ min: 1, max: 1e4, noNaN: true }), fc.double({ min: 1, max: 1e10, noNaN: true }), (temperatureK, bandwidthHz) => {
-        expect(thermalNoiseDbm(10 * temperatureK, bandwidthHz) - thermalNoiseDbm(temperatureK, bandwidthHz)).toBeCloseTo(10, 9);
-        expect(thermalNoiseDbm(temperatureK, 10 * bandwidthHz) - thermalNoiseDbm(temperatureK, bandwidthHz)).toBeCloseTo(10, 9);
-      }),
+      fc.property(
+        fc.double({ min: 1, max: 1e4, noNaN: true }),
+        fc.double({ min: 1, max: 1e10, noNaN: true }),
+        (temperatureK, bandwidthHz) => {
+          expect(
+            thermalNoiseDbm(10 * temperatureK, bandwidthHz) - thermalNoiseDbm(temperatureK, bandwidthHz),
+          ).toBeCloseTo(10, 9);
+          expect(
+            thermalNoiseDbm(temperatureK, 10 * bandwidthHz) - thermalNoiseDbm(temperatureK, bandwidthHz),
+          ).toBeCloseTo(10, 9);
+        },
+      ),
     );
   });
 
   it('at 0 K or in 0 Hz is no power; below that there is none', () => {
-    expect([noiseDensityDbmPerHz(0), thermalNoiseDbm(0, 1), thermalNoiseDbm(290, 0)]).toEqual([-Infinity, -Infinity, -Infinity]);
-    expect([noiseDensityDbmPerHz(-1), thermalNoiseDbm(-1, 1), thermalNoiseDbm(1, -1), thermalNoiseDbm(-1, -1)]).toEqual([NaN, NaN, NaN, NaN]);
+    expect([noiseDensityDbmPerHz(0), thermalNoiseDbm(0, 1), thermalNoiseDbm(290, 0)]).toEqual([
+      -Infinity,
+      -Infinity,
+      -Infinity,
+    ]);
+    expect([noiseDensityDbmPerHz(-1), thermalNoiseDbm(-1, 1), thermalNoiseDbm(1, -1), thermalNoiseDbm(-1, -1)]).toEqual(
+      [NaN, NaN, NaN, NaN],
+    );
   });
 });
 
@@ -112,8 +126,14 @@ describe('cascades', () => {
     const db = fc.double({ min: 0, max: 20, noNaN: true });
     fc.assert(
       fc.property(db, db, db, db, db, (nf1, g1, nf2, g2, nf3) => {
-        expect(cascadeNoiseFigureDb(nf1, g1, cascadeNoiseFigureDb(nf2, g2, nf3))).toBeCloseTo(cascadeNoiseFigureDb(nf1, g1, nf2, g2, nf3), 8);
-        expect(cascadeNoiseFigureDb(cascadeNoiseFigureDb(nf1, g1, nf2), g1 + g2, nf3)).toBeCloseTo(cascadeNoiseFigureDb(nf1, g1, nf2, g2, nf3), 8);
+        expect(cascadeNoiseFigureDb(nf1, g1, cascadeNoiseFigureDb(nf2, g2, nf3))).toBeCloseTo(
+          cascadeNoiseFigureDb(nf1, g1, nf2, g2, nf3),
+          8,
+        );
+        expect(cascadeNoiseFigureDb(cascadeNoiseFigureDb(nf1, g1, nf2), g1 + g2, nf3)).toBeCloseTo(
+          cascadeNoiseFigureDb(nf1, g1, nf2, g2, nf3),
+          8,
+        );
       }),
     );
   });
@@ -130,10 +150,17 @@ describe('free space', () => {
 
   it('is symmetric in distance and frequency, and grows by 6.02 dB when either doubles', () => {
     fc.assert(
-      fc.property(fc.double({ min: 1, max: 1e8, noNaN: true }), fc.double({ min: 1, max: 1e8, noNaN: true }), (distanceM, frequencyHz) => {
-        expect(freeSpaceLossDb(distanceM, frequencyHz)).toBeCloseTo(freeSpaceLossDb(frequencyHz, distanceM), 9);
-        expect(freeSpaceLossDb(2 * distanceM, frequencyHz) - freeSpaceLossDb(distanceM, frequencyHz)).toBeCloseTo(20 * Math.log10(2), 9);
-      }),
+      fc.property(
+        fc.double({ min: 1, max: 1e8, noNaN: true }),
+        fc.double({ min: 1, max: 1e8, noNaN: true }),
+        (distanceM, frequencyHz) => {
+          expect(freeSpaceLossDb(distanceM, frequencyHz)).toBeCloseTo(freeSpaceLossDb(frequencyHz, distanceM), 9);
+          expect(freeSpaceLossDb(2 * distanceM, frequencyHz) - freeSpaceLossDb(distanceM, frequencyHz)).toBeCloseTo(
+            20 * Math.log10(2),
+            9,
+          );
+        },
+      ),
     );
   });
 

@@ -117,6 +117,11 @@ export class GridView {
     this.#dropAnchor();
   }
 
+  /** Changes when rows have to be measured anew although their own size may stay. */
+  get setting(): string {
+    return this.#viewed.setting;
+  }
+
   /** Takes measured heights. */
   measured(heights: readonly (readonly [key: string, height: number])[]): void {
     let changed = false;
