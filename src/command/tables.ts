@@ -69,7 +69,7 @@ function sectionsOf({ evaluation, lines }: Selection): { title: string; lines: r
   const chosen = new Set(lines);
   return evaluation.worksheet.sections
     .filter(isLinesSection)
-    .map(({ title, lines: all }) => ({ title: oneLine(title), lines: all.filter((line) => chosen.has(line)) }))
+    .map(({ title, lines: all }) => ({ title, lines: all.filter((line) => chosen.has(line)) }))
     .filter((section) => section.lines.length > 0);
 }
 
@@ -106,7 +106,7 @@ export function writeText(selection: Selection): string {
     oneLine(selection.evaluation.worksheet.title),
     '',
     write(head),
-    ...sections.flatMap(({ title, rows }) => ['', title, ...rows.map(({ cells }) => write(cells))]),
+    ...sections.flatMap(({ title, rows }) => ['', oneLine(title), ...rows.map(({ cells }) => write(cells))]),
     ...(findings.length === 0 ? [] : ['', ...findings]),
     '',
     ...CAUTIONS,

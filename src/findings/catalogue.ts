@@ -88,7 +88,7 @@ export const CATALOGUE = {
     'Volts become watts only through an impedance: dBµV less dBΩ is a power level.',
     (x) =>
       `${f(x, 'what')} is a level of ${f(x, 'found')}, not of ${f(x, 'declared')}${given(x['now'], (now) => `: the figures give ${now}`)}. An impedance is missing.` +
-      instead(x, 'With 50 Ω'),
+      instead(x, 'With an impedance'),
   ),
   'density-and-level': entry(
     'error',

@@ -2,12 +2,22 @@
  * Bringing several operands to one form and dimension: for comparisons, the extremes, branches, and sums of powers.
  * Densities beside levels, and voltages beside powers, get findings of their own.
  */
-import { combineDimensions, FREQUENCY, IMPEDANCE, isDimensionless, sameDimension, type Dimension } from '../quantity';
+import {
+  combineDimensions,
+  FIELD,
+  FREQUENCY,
+  IMPEDANCE,
+  isDimensionless,
+  POWER_FLUX,
+  raiseDimension,
+  sameDimension,
+  type Dimension,
+} from '../quantity';
 import type { Context } from './context';
 import { decibelsOf, describeType } from './forms';
 import { shiftPlan, type Plan } from './plan';
 import type { Tree } from './tree';
-import type { Checked, DecibelType, LinearType } from './types';
+import type { Checked, DecibelType, LinearType, Type } from './types';
 
 export interface Aligned {
   readonly type: DecibelType | LinearType;
@@ -18,6 +28,14 @@ export interface Aligned {
 /** True when one dimension is the other's per hertz. */
 export const differByBandwidth = (a: Dimension, b: Dimension): boolean =>
   sameDimension(combineDimensions(a, b, -1), FREQUENCY) || sameDimension(combineDimensions(b, a, -1), FREQUENCY);
+
+/** The impedance that makes a power of a voltage, or a flux of a field: 50 Ω where nothing else is known, that of free space. */
+export function impedanceOf(type: Type): string {
+  const isField =
+    (type.form === 'decibel' || type.form === 'linear') &&
+    [FIELD, raiseDimension(FIELD, 2), POWER_FLUX].some((dimension) => sameDimension(type.dimension, dimension));
+  return isField ? 'db(377 ohm)' : 'db(50 ohm)';
+}
 
 /** True when one is a squared voltage (or field) where the other is a power (or flux). */
 export const differByImpedance = (a: Dimension, b: Dimension): boolean =>
@@ -144,7 +162,7 @@ function refuseDimension(
         found: describeType(voltage.type),
         declared: describeType((voltage === first ? operand : first).type),
       },
-      repairs: [context.rewrite(voltage.tree, `${context.textOf(voltage.tree)} - db(50 ohm)`)],
+      repairs: [context.rewrite(voltage.tree, `${context.textOf(voltage.tree)} - ${impedanceOf(voltage.type)}`)],
     });
     return;
   }

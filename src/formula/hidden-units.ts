@@ -24,6 +24,48 @@ const KNOWN: readonly Known[] = [
   { from: 32.4, to: 32.46, standsFor: 'free-space loss with MHz and km (or GHz and m)' },
   { from: 92.4, to: 92.5, standsFor: 'free-space loss with GHz and km' },
   {
+    from: 173.8,
+    to: 174.1,
+    standsFor: 'the noise density k·T₀ in dBm/Hz, taken off',
+    write: () => ({ text: '(-174 dBm/Hz)', sign: -1 }),
+  },
+  {
+    from: 203.8,
+    to: 204.1,
+    standsFor: 'the noise density k·T₀ in dBW/Hz, taken off',
+    write: () => ({ text: '(-204 dBW/Hz)', sign: -1 }),
+  },
+  {
+    from: 113.9,
+    to: 114.1,
+    standsFor: 'the noise density k·T₀ in dBm/MHz, taken off',
+    write: () => ({ text: '(-114 dBm/MHz)', sign: -1 }),
+  },
+  {
+    from: -145.85,
+    to: -145.7,
+    standsFor: 'the step from dBµV/m to dBW/m² in free space',
+    write: () => ({ text: 'db(377 ohm)', sign: -1 }),
+  },
+  {
+    from: -115.85,
+    to: -115.7,
+    standsFor: 'the step from dBµV/m to dBm/m² in free space',
+    write: () => ({ text: 'db(377 ohm)', sign: -1 }),
+  },
+  {
+    from: 145.7,
+    to: 145.85,
+    standsFor: 'the step from dBW/m² to dBµV/m in free space',
+    write: () => ({ text: 'db(377 ohm)', sign: 1 }),
+  },
+  {
+    from: 115.7,
+    to: 115.85,
+    standsFor: 'the step from dBm/m² to dBµV/m in free space',
+    write: () => ({ text: 'db(377 ohm)', sign: 1 }),
+  },
+  {
     from: -77.3,
     to: -77.1,
     standsFor: 'the step from a field in dBµV/m to the power of an isotropic antenna in dBm, with MHz',

@@ -2,14 +2,29 @@
  * Judging decibel sums as wholes: levels that were added, ratios and noise figures that were added, nets that no budget has,
  * and the notes. A sum is judged where it ends: as a line's result, as an argument, in a comparison.
  */
-import { describeNet, hasAllowedNet, POWER, sameDimension, type Meaning, type QuantityKind } from '../quantity';
+import {
+  describeNet,
+  hasAllowedNet,
+  POWER,
+  POWER_DENSITY,
+  sameDimension,
+  type Meaning,
+  type QuantityKind,
+} from '../quantity';
 import { broken, type Context } from './context';
-import { differByImpedance } from './alignment';
+import { differByImpedance, impedanceOf } from './alignment';
 import { findAveraged } from './averages';
 import { describeType } from './forms';
 import { isLevel, judgedNet } from './net';
 import { sayNotes } from './notes';
-import { cascadeOfFigures, groupedAsPowers, groupedAsRatios, withFlippedTerm, type Grouped } from './repairs';
+import {
+  cascadeOfFigures,
+  groupedAsPowers,
+  groupedAsRatios,
+  withFlippedTerm,
+  withReplacedTerms,
+  type Grouped,
+} from './repairs';
 import { sayBandwidthsDiffer } from './bandwidths';
 import type { Tree } from './tree';
 import type { Checked, SumTerm } from './types';
@@ -60,7 +75,8 @@ function judge(checked: Checked, terms: readonly SumTerm[], context: Context, li
 
 function sayLevelsSummed(tree: Tree, terms: readonly SumTerm[], levels: readonly SumTerm[], context: Context): void {
   if (sayVoltageAmongPowers(tree, terms, levels, context)) return;
-  const grouped = groupedAsPowers(terms, levels, 'powersum', context);
+  const turned = turnedDensity(terms);
+  const grouped = turned ?? groupedAsPowers(terms, levels, 'powersum', context);
   const inPhase = groupedAsPowers(terms, levels, 'fieldsum', context);
   context.say('levels-summed', tree, {
     facts: { levels: levels.map(({ text }) => text).join(' and '), ...(levels.length === 1 ? { single: 'yes' } : {}) },
@@ -83,7 +99,7 @@ function sayVoltageAmongPowers(
   if (power === undefined || voltage === undefined) return false;
   const inPower = levels.map((term) =>
     differByImpedance(term.type.dimension, power.type.dimension)
-      ? { ...term, text: `${term.text} - db(50 ohm)` }
+      ? { ...term, text: `${term.text} - ${impedanceOf(term.type)}` }
       : term,
   );
   const all = terms.map((term) => inPower[levels.indexOf(term)] ?? term);
@@ -96,6 +112,15 @@ function sayVoltageAmongPowers(
     repairs: repairsOf(groupedAsPowers(all, inPower, 'powersum', context), tree, context),
   });
   return true;
+}
+
+/** `P + 174 dBm/Hz − …`: nobody has a noise density of +174 dBm/Hz; it is −174 dBm/Hz, taken off. */
+function turnedDensity(terms: readonly SumTerm[]): Grouped | undefined {
+  const density = terms.find(
+    ({ tree, coefficient, type }) =>
+      tree.type === 'literal' && tree.figure > 100 && coefficient === 1 && sameDimension(type.dimension, POWER_DENSITY),
+  );
+  return density === undefined ? undefined : withReplacedTerms(terms, [density], `(-${density.text})`, -1);
 }
 
 function repairsOf(grouped: Grouped | undefined, tree: Tree, context: Context): ReturnType<Context['rewrite']>[] {

@@ -1,23 +1,11 @@
 /** A result that does not have the declared unit: what is missing, and what to write. */
-import {
-  combineDimensions,
-  ENTROPY,
-  FREQUENCY,
-  IMPEDANCE,
-  isDimensionless,
-  POWER,
-  raiseDimension,
-  sameDimension,
-  TEMPERATURE,
-  type Dimension,
-  type Unit,
-} from '../quantity';
+import { combineDimensions, ENTROPY, FREQUENCY, IMPEDANCE, isDimensionless, POWER, raiseDimension, sameDimension, TEMPERATURE, type Dimension, type Unit } from '../quantity';
 import type { Repair } from '../findings';
+import { impedanceOf } from './alignment';
 import { asFactor, type Context } from './context';
 import { describeType, fittingDecibelUnit, fittingLinearUnit, powerDimension } from './forms';
 import { isLevel } from './net';
 import { groupedAsPowers } from './repairs';
-import type { Tree } from './tree';
 import type { Checked, DecibelType, LinearType } from './types';
 
 /** Makes the finding unit-mismatch (or field-and-power, or rate-without-length) for a line's result. */
@@ -41,7 +29,9 @@ export function sayUnitMismatch(
     ...(isImpedance && type.form === 'linear' && tree.type === 'literal'
       ? [context.rewrite(tree, `(${context.textOf(tree)})^2 / (50 ohm)`)]
       : []),
-    ...(extra === undefined || type.form !== 'decibel' || hidden.length > 0 ? [] : factorRepairs(tree, extra, context)),
+    ...(extra === undefined || type.form !== 'decibel' || hidden.length > 0
+      ? []
+      : factorRepairs(checked, extra, context)),
     ...(type.form === 'decibel' ? powerSumRepairs(checked, context, wanted) : []),
     unitRepair(type),
   ].filter((repair): repair is Repair => repair !== undefined);
@@ -85,8 +75,8 @@ const FACTORS = [
   { dimension: POWER, name: 'A level' },
 ] as const;
 
-/** The factor that would make the dimension right, added at the end: − db(B), + db(B), − db(k_B), ∓ db(50 ohm). */
-function factorRepairs(tree: Tree, extra: Dimension, context: Context): (Repair | undefined)[] {
+/** The factor that would make the dimension right, added at the end: − db(B), + db(B), − db(k_B), ∓ an impedance. */
+function factorRepairs({ tree, type }: Checked, extra: Dimension, context: Context): (Repair | undefined)[] {
   const text = context.textOf(tree);
   const withTerm = (sign: '+' | '-', term: string | undefined): Repair | undefined =>
     term === undefined
@@ -98,8 +88,8 @@ function factorRepairs(tree: Tree, extra: Dimension, context: Context): (Repair 
   if (is(FREQUENCY, -1)) return [withTerm('+', context.bandwidthTerm())];
   if (is(ENTROPY, 1)) return [withTerm('-', 'db(k_B)')];
   if (is(ENTROPY, -1)) return [withTerm('+', 'db(k_B)')];
-  if (is(IMPEDANCE, 1)) return [withTerm('-', 'db(50 ohm)')];
-  if (is(IMPEDANCE, -1)) return [withTerm('+', 'db(50 ohm)')];
+  if (is(IMPEDANCE, 1)) return [withTerm('-', impedanceOf(type))];
+  if (is(IMPEDANCE, -1)) return [withTerm('+', impedanceOf(type))];
   return [];
 }
 

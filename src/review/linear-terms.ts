@@ -12,12 +12,14 @@ import {
   type SumTerm,
 } from '../formula';
 import {
+  combineDimensions,
   describeDimension,
   isDimensionless,
   isRootPower,
   linearFigure,
   NO_DIMENSION,
   raiseDimension,
+  sameDimension,
   writeFigure,
   writeSignificant,
   type Dimension,
@@ -55,9 +57,10 @@ export function linearPieces(
   const terms =
     checked.terms === undefined || checked.terms.length === 0
       ? undefined
-      : termsThatGive(checked.terms, resultDb, scope.figures);
-  const isRoot = result.unit.form !== 'rate' && isRootUnit(result.unit);
-  const written = terms === undefined ? writeExpression(checked, 1, scope) : writeProduct(terms, isRoot, scope);
+      : termsThatGive(checked.terms, resultDb, powerDimension(result.unit), scope.figures);
+  const isRoot = isRootDimension(powerDimension(result.unit));
+  const written =
+    terms === undefined ? writeExpression(checked, 1, scope) : writeProduct(checked, terms, isRoot, scope);
   return written === undefined || written.binds === 'figure' ? undefined : written.pieces;
 }
 
@@ -71,39 +74,48 @@ function powerDbOf(value: number, unit: Unit): number | undefined {
 const isRootDimension = (power: Dimension): boolean =>
   !isDimensionless(power) && isRootPower(raiseDimension(power, 0.5));
 
-const isRootUnit = (unit: Exclude<Unit, { form: 'rate' }>): boolean =>
-  unit.form === 'decibel' ? isRootDimension(unit.dimension) : isRootPower(unit.dimension);
+/** The dimension of the power-like quantity that a unit's decibels are of. */
+function powerDimension(unit: Unit): Dimension {
+  if (unit.form === 'rate') return NO_DIMENSION;
+  return unit.form === 'linear' && isRootPower(unit.dimension) ? raiseDimension(unit.dimension, 2) : unit.dimension;
+}
 
 /** The terms, logarithms over a written reference read as levels where the line's unit has made them so. */
-function termsThatGive(terms: readonly SumTerm[], resultDb: number, figures: Figures): readonly SumTerm[] | undefined {
+function termsThatGive(
+  terms: readonly SumTerm[],
+  resultDb: number,
+  dimension: Dimension,
+  figures: Figures,
+): readonly SumTerm[] | undefined {
   const over = terms.filter(({ overReference }) => overReference !== undefined);
   const readings = [[], over, ...over.map((term) => [term])].map((levels) =>
     terms.map((term) =>
       term.overReference !== undefined && levels.includes(term) ? { ...term, type: term.overReference } : term,
     ),
   );
-  const totalDb = (reading: readonly SumTerm[]): number =>
-    reading.reduce((sum, term) => sum + term.coefficient * termDb(term, figures), 0);
-  return readings.find((reading) => {
-    const total = totalDb(reading);
+  const right = readings.filter((reading) => {
+    const total = reading.reduce((sum, term) => sum + term.coefficient * termDb(term, figures), 0);
     return total === resultDb || Math.abs(total - resultDb) < 1e-6;
   });
+  return right.find((reading) => sameDimension(totalDimension(reading), dimension)) ?? right[0];
 }
+
+const totalDimension = (terms: readonly SumTerm[]): Dimension =>
+  terms.reduce((sum, { type, coefficient }) => combineDimensions(sum, type.dimension, coefficient), NO_DIMENSION);
 
 const termDb = ({ plan, type }: SumTerm, figures: Figures): number => evaluatePlan(plan, figures) + type.offsetDb;
 
-function writeProduct(terms: readonly SumTerm[], isRoot: boolean, scope: LinearScope): Written | undefined {
+function writeProduct(
+  checked: Checked,
+  terms: readonly SumTerm[],
+  isRoot: boolean,
+  scope: LinearScope,
+): Written | undefined {
   const pieces: Piece[] = [];
   const ordered = [...terms].sort((a, b) => Number(b.coefficient > 0) - Number(a.coefficient > 0));
   for (const [index, term] of ordered.entries()) {
     const isAbove = term.coefficient > 0;
-    const { dimension, unitHint } = term.type;
-    const lineId = term.symbol === undefined ? undefined : scope.lineIdOf(term.symbol);
-    const factor = writeFactor(
-      { figureDb: termDb(term, scope.figures), dimension, hint: unitHint, lineId },
-      Math.abs(term.coefficient),
-      isRoot,
-    );
+    const factor = writeTerm(checked, term, isRoot, scope);
     if (factor === undefined) return undefined;
     if (index > 0) pieces.push(text(isAbove ? ' × ' : ' ÷ '));
     else if (!isAbove) pieces.push(text('1 ÷ '));
@@ -111,6 +123,36 @@ function writeProduct(terms: readonly SumTerm[], isRoot: boolean, scope: LinearS
   }
   const [only] = terms;
   return { pieces, binds: terms.length === 1 && only?.coefficient === 1 ? 'figure' : 'product' };
+}
+
+function writeTerm(checked: Checked, term: SumTerm, isRoot: boolean, scope: LinearScope): Written | undefined {
+  const { dimension, unitHint } = term.type;
+  const size = Math.abs(term.coefficient);
+  const operand = partAt(checked, term.tree)?.parts[0];
+  const exponent = operand === undefined ? undefined : exponentIn(dimension, operand);
+  if (operand !== undefined && exponent !== undefined) {
+    const written = writeLinear(operand, scope);
+    return written === undefined ? undefined : raised(written, size * exponent * (isRoot ? 0.5 : 1));
+  }
+  const lineId = term.symbol === undefined ? undefined : scope.lineIdOf(term.symbol);
+  return writeFactor({ figureDb: termDb(term, scope.figures), dimension, hint: unitHint, lineId }, size, isRoot);
+}
+
+/** The checked expression of a tree within another. */
+function partAt(checked: Checked, tree: Checked['tree']): Checked | undefined {
+  if (checked.tree === tree) return checked;
+  for (const part of checked.parts) {
+    const found = partAt(part, tree);
+    if (found !== undefined) return found;
+  }
+  return undefined;
+}
+
+/** 1 or 2 when a logarithm of this dimension is that of the operand or its square; undefined when it is no such thing. */
+function exponentIn(dimension: Dimension, { type }: Checked): 1 | 2 | undefined {
+  if (type.form !== 'linear' || isDimensionless(type.dimension)) return undefined;
+  if (sameDimension(dimension, type.dimension)) return 1;
+  return sameDimension(dimension, raiseDimension(type.dimension, 2)) ? 2 : undefined;
 }
 
 interface Factor {
@@ -164,28 +206,37 @@ function asFactor(written: Written): readonly Piece[] {
 
 /** A sum of powers written out, a decibel sum as a product, anything else as its value. */
 function writeExpression(checked: Checked, depth: number, scope: LinearScope): Written | undefined {
-  const { type, tree } = checked;
-  const lineId = tree.type === 'symbol' ? scope.lineIdOf(tree.name) : undefined;
-  if (type.form === 'linear') return writeLinear(checked, lineId, scope);
+  const { type } = checked;
+  if (type.form === 'linear') return writeLinear(checked, scope);
   if (type.form !== 'decibel') return undefined;
   const isRoot = isRootDimension(type.dimension);
-  if (checked.terms !== undefined && checked.terms.length > 0) return writeProduct(checked.terms, isRoot, scope);
+  if (checked.terms !== undefined && checked.terms.length > 0)
+    return writeProduct(checked, checked.terms, isRoot, scope);
   const sum = depth > DEPTH_LIMIT ? undefined : powerSumOf(checked, scope.figures);
   if (sum !== undefined) return writePowerSum(sum, isRoot, depth, scope);
   const figureDb = evaluatePlan(checked.plan, scope.figures) + type.offsetDb;
-  return writeFactor({ figureDb, dimension: type.dimension, hint: type.unitHint, lineId }, 1, isRoot);
+  return writeFactor(
+    { figureDb, dimension: type.dimension, hint: type.unitHint, lineId: lineIdOf(checked, scope) },
+    1,
+    isRoot,
+  );
 }
 
-function writeLinear(part: Checked, lineId: string | undefined, scope: LinearScope): Written | undefined {
+const lineIdOf = ({ tree }: Checked, scope: LinearScope): string | undefined =>
+  tree.type === 'symbol' ? scope.lineIdOf(tree.name) : undefined;
+
+function writeLinear(part: Checked, scope: LinearScope): Written | undefined {
   const { type, plan } = part;
   if (type.form !== 'linear') return undefined;
+  const lineId = lineIdOf(part, scope);
   const value = evaluatePlan(plan, scope.figures);
   if (isBareDecibels(part))
     return writeFactor({ figureDb: value, dimension: NO_DIMENSION, hint: undefined, lineId }, 1, false);
-  const unit = fittingLinearUnit(type.dimension, [type.unitHint]);
+  // Of 15 °C nothing can be multiplied: a scale with another zero is left for kelvin.
+  const hint = type.unitHint?.form === 'linear' && type.unitHint.shift === 0 ? type.unitHint : undefined;
+  const unit = fittingLinearUnit(type.dimension, [hint]);
   if (unit.form !== 'linear') return undefined;
-  const isFitted = type.unitHint?.form !== 'linear';
-  const figure = writeFigure((value - unit.shift) / unit.factor, unit, { isFitted });
+  const figure = writeFigure(value / unit.factor, unit, { isFitted: hint === undefined });
   const piece: Piece = { type: 'figure', ...figure, ...(lineId === undefined ? {} : { lineId }) };
   // A ratio of two voltages or fields: its square is the ratio of the powers.
   const isFieldRatio = isDimensionless(type.dimension) && type.degree === 1;

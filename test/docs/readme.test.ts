@@ -114,6 +114,11 @@ describe('the command line', () => {
     );
     expect(run(['evaluate', sheet], world).exitCode).toBe(0);
     expect(run(['check', 'test/docs/two-interferers.budget.json'], world).exitCode).toBe(1);
+    const unknown = readFileSync(`${ROOT}test/docs/two-interferers.budget.json`, 'utf8').replace(
+      '"entry": "N + I"',
+      '"entry": "", "requirement": { "atMost": "-95 dBm" }',
+    );
+    expect(run(['check', 'unknown'], { readFile: () => Buffer.from(unknown) }).exitCode).toBe(1);
     expect(run(['evaluate', 'package.json'], world)).toMatchObject({ exitCode: 2, results: '' });
     expect(run(['judge', sheet], world)).toMatchObject({ exitCode: 2, results: '' });
   });

@@ -102,12 +102,15 @@ function asWritten(figure: Figure, expected: WrittenLine['figure']): string {
   if (expected === undefined) return 'a value';
   const decimals = (/\.(\d+)/.exec(expected.digits)?.[1] ?? '').length;
   const wanted = findUnit(expected.unit);
+  const { unit } = figure;
   const isScaled =
-    figure.isFitted && figure.unit.form === 'linear' && wanted?.form === 'linear' && figure.unit.word !== wanted.word;
-  const [value, word] =
-    isScaled && figure.unit.form === 'linear' && figure.unit.dimension.every((n, at) => n === wanted.dimension[at])
-      ? [(figure.value * figure.unit.factor) / wanted.factor, wanted.word]
-      : [figure.value, figure.unit.word];
+    figure.isFitted &&
+    unit.form === 'linear' &&
+    wanted?.form === 'linear' &&
+    unit.dimension.every((n, at) => n === wanted.dimension[at]);
+  const [value, word] = isScaled
+    ? [(figure.value * unit.factor) / wanted.factor, wanted.word]
+    : [figure.value, unit.word];
   const text = value === -Infinity ? '-Infinity' : value.toFixed(decimals).replace(/^-(0(\.0*)?)$/, '$1');
   return `${text} ${word}`;
 }

@@ -44,14 +44,12 @@ const plans: fc.Arbitrary<Plan> = fc.letrec<{ plan: Plan }>((tie) => {
       fc
         .tuple(tie('plan'), two)
         .map(([condition, [then, otherwise]]): Plan => ({ op: 'choose', condition, then, otherwise })),
-      fc
-        .array(tie('plan'), { minLength: 1, maxLength: 4 })
-        .map((parameters): Plan => ({
-          op: 'apply',
-          name: 'least',
-          compute: (...values) => Math.min(...values),
-          parameters,
-        })),
+      fc.array(tie('plan'), { minLength: 1, maxLength: 4 }).map((parameters): Plan => ({
+        op: 'apply',
+        name: 'least',
+        compute: (...values) => Math.min(...values),
+        parameters,
+      })),
     ),
   };
 }).plan;

@@ -13,6 +13,7 @@ const folder = new URL('./wrong-budgets/', import.meta.url);
 interface Offer {
   readonly title: string;
   readonly worksheet: Worksheet;
+  readonly before: Evaluation;
   readonly lineId: string;
   readonly code: string;
   readonly at: number;
@@ -29,6 +30,7 @@ const offers: readonly Offer[] = readdirSync(folder)
         return {
           title: `${code} in ${line?.symbol ?? ''} = ${line?.entry ?? ''}: ${repair.title}`,
           worksheet,
+          before: evaluation,
           lineId,
           code,
           at,
@@ -42,8 +44,7 @@ describe('repairs', () => {
     expect(offers.length).toBeGreaterThan(100);
   });
 
-  it.each(offers)('$title', ({ worksheet, lineId, code, at }) => {
-    const before = new Evaluation(worksheet);
+  it.each(offers)('$title', ({ worksheet, before, lineId, code, at }) => {
     const finding = before.findings(lineId).find((one) => one.code === code && one.repairs.length > at);
     const repair = finding?.repairs[at];
     if (finding === undefined || repair === undefined) throw new Error('the repair has gone');

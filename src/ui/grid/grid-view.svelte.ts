@@ -46,6 +46,8 @@ export class GridView {
   #measured: Record<string, number> = {};
   #setting = '';
   #anchor = { row: '', offset: 0 };
+  /** Where the view was last scrolled to; the page may not have been high enough for it. */
+  #wantedTop = 0;
   #scroller: HTMLElement | null = null;
 
   constructor(viewed: ViewedRows) {
@@ -136,7 +138,10 @@ export class GridView {
     this.holdAnchor();
   }
 
-  /** Scrolls so that the anchor's row is where it was, after rows or heights have changed. */
+  /**
+   * Scrolls so that the anchor's row is where it was, after rows or heights have changed. Before the page shows the change it
+   * may not be high enough yet to be scrolled that far: call it once before and once after.
+   */
   holdAnchor(): void {
     const index = this.#viewed.indexOf(this.#anchor.row);
     if (index < 0 || this.#scroller === null) return;
@@ -151,15 +156,17 @@ export class GridView {
   reveal(key: string, amid = false): void {
     const index = this.#viewed.indexOf(key);
     if (index < 0) return;
+    // What has changed above the last anchor must not count as a move of this row.
+    this.holdAnchor();
     const top = this.#layout.top(index);
     const bottom = top + this.#layout.height(index);
     const room = this.height - this.headerHeight;
-    const isAbove = top < this.scrollTop;
-    const isBelow = bottom > this.scrollTop + room;
+    const isAbove = top < this.#wantedTop;
+    const isBelow = bottom > this.#wantedTop + room;
     if (amid && (isAbove || isBelow)) this.#scrollTo(top - room / 3);
     else if (isAbove) this.#scrollTo(top);
     else if (isBelow) this.#scrollTo(bottom - room + 8);
-    this.#anchor = { row: key, offset: top - this.scrollTop };
+    this.#anchor = { row: key, offset: top - this.#wantedTop };
   }
 
   /** Scrolls to the top. */
@@ -170,6 +177,7 @@ export class GridView {
 
   #scrollTo(top: number): void {
     if (this.#scroller === null) return;
+    this.#wantedTop = Math.max(top, 0);
     this.#scroller.scrollTop = top;
     this.scrollTop = this.#scroller.scrollTop;
   }
