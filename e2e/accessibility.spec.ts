@@ -186,6 +186,11 @@ test('the account is a grid with one tab stop, its rows and columns numbered', a
   await account.press('Shift+Tab');
   await expect(cursor).toBeFocused();
   await expect(page.getByRole('row', { selected: true })).toHaveCount(1);
+
+  // On a heading's button, too, there is one.
+  await account.press('Control+Home');
+  await expect(account.section('Channel').getByRole('button', { name: /^Fold/ })).toBeFocused();
+  await account.expectOneTabStop();
 });
 
 test('each button of the header is reached by Tab and works by Enter and Space', async ({ sheet, page }) => {

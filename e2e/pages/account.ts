@@ -130,6 +130,8 @@ export class Account {
   /** Types a text into a cell, in place of what is there. */
   async retype(symbol: string, column: ColumnName, text: string): Promise<void> {
     await this.cell(symbol, column).click();
+    // Where the cursor was already, a press opens the editor on what is there.
+    if ((await this.editor.count()) > 0) await this.press('Control+a');
     await this.type(text);
     await this.press('Enter');
     await expect(this.editor).toHaveCount(0);

@@ -74,7 +74,7 @@ function writeWorking({ steps, terms, shares, remarks, reading }: Working, line:
   const width = Math.max(0, ...shown.map(({ title }) => title.length));
   const { kind, side } = reading;
   const lines = [
-    figureText(reading.figure, line, true),
+    reading.figure.state === 'empty' ? 'no entry' : figureText(reading.figure, line, true),
     ...shown.map(({ title, pieces }) => `${title.padEnd(width)}  ${pieces.map(pieceText).join('')}`),
     ...(terms.length === 0 ? [] : [shares ? 'contributions' : 'rests on', ...writeTerms(terms)]),
     ...(line.requirement === undefined

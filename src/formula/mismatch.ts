@@ -1,5 +1,17 @@
 /** A result that does not have the declared unit: what is missing, and what to write. */
-import { combineDimensions, ENTROPY, FREQUENCY, IMPEDANCE, isDimensionless, POWER, raiseDimension, sameDimension, TEMPERATURE, type Dimension, type Unit } from '../quantity';
+import {
+  combineDimensions,
+  ENTROPY,
+  FREQUENCY,
+  IMPEDANCE,
+  isDimensionless,
+  POWER,
+  raiseDimension,
+  sameDimension,
+  TEMPERATURE,
+  type Dimension,
+  type Unit,
+} from '../quantity';
 import type { Repair } from '../findings';
 import { impedanceOf } from './alignment';
 import { asFactor, type Context } from './context';

@@ -133,7 +133,8 @@ function product(text: string): { dimension: Dimension; factor: number } | undef
   return { dimension, factor };
 }
 
-const RUN = /[A-Za-zµ\u03bcΩ\u2126°%](?:[A-Za-z0-9µ\u03bcΩ\u2126°%/²³⁴⁻¹^·-]|\((?:1 )?[A-Za-z0-9µ\u03bcΩ\u2126/²³⁴⁻¹^·*-]*\))*/y;
+const RUN =
+  /[A-Za-zµ\u03bcΩ\u2126°%](?:[A-Za-z0-9µ\u03bcΩ\u2126°%/²³⁴⁻¹^·-]|\((?:1 )?[A-Za-z0-9µ\u03bcΩ\u2126/²³⁴⁻¹^·*-]*\))*/y;
 const WORD_GOES_ON = /[\p{L}\p{N}_]/u;
 
 /**

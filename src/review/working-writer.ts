@@ -66,8 +66,9 @@ export class WorkingWriter {
   steps(node: Node, checked: Checked | undefined, reading: Reading): WorkingStep[] {
     const steps: WorkingStep[] = [];
     const isExpression = node.read.form === 'expression';
-    if (node.read.form !== 'empty')
-      steps.push({ title: isExpression ? 'in symbols' : 'as entered', pieces: this.entryPieces(node, false) });
+    if (isExpression) steps.push({ title: 'in symbols', pieces: this.entryPieces(node, false) });
+    else if (node.read.form !== 'empty')
+      steps.push({ title: 'as entered', pieces: [text(node.entry.trim().replace(/^[-–]/, '−'))] });
     if (isExpression && node.symbols.length > 0)
       steps.push({ title: 'with values', pieces: this.entryPieces(node, true) });
     const { figure } = reading;

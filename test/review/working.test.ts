@@ -92,6 +92,8 @@ describe('in symbols', () => {
   it.each([
     ['-0.5 dBd', '−0.5 dBd'],
     ['25 mW', '25 mW'],
+    ['15,5 dB', '15,5 dB'],
+    ['3 dB+(', '3 dB+('],
     ['3 dB +', '3 dB +'],
     ['two times five', 'two times five'],
   ])('is headed “as entered” for %j, which has none', (entry, text) => {
