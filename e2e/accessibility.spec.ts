@@ -163,16 +163,21 @@ test('the account is a grid with one tab stop, its rows and columns numbered', a
   await openBuoy(sheet);
   const { account } = sheet;
   await account.inTallWindow(async () => {
-    const places = await account.rows.evaluateAll((rows) => rows.map((row) => Number(row.getAttribute('aria-rowindex'))));
+    const places = await account.rows.evaluateAll((rows) =>
+      rows.map((row) => Number(row.getAttribute('aria-rowindex'))),
+    );
     expect(places).toEqual(places.map((_, at) => at + 1));
   });
-  const columns = await account.grid.getByRole('columnheader').evaluateAll((headings) =>
-    headings.map((heading) => Number(heading.getAttribute('aria-colindex'))),
-  );
+  const columns = await account.grid
+    .getByRole('columnheader')
+    .evaluateAll((headings) => headings.map((heading) => Number(heading.getAttribute('aria-colindex'))));
   expect(columns).toEqual(columns.map((_, at) => at + 1));
   await expect(account.grid).toHaveAttribute('aria-colcount', String(columns.length));
   await expect(account.grid).toHaveAttribute('aria-multiselectable', 'true');
-  await expect(account.grid.getByRole('gridcell', { name: 'Line 1', exact: true })).toHaveAttribute('aria-readonly', 'true');
+  await expect(account.grid.getByRole('gridcell', { name: 'Line 1', exact: true })).toHaveAttribute(
+    'aria-readonly',
+    'true',
+  );
 
   // The tab stop goes with the cursor, stays when the focus leaves, and Tab leaves and comes back by it.
   await account.expectOneTabStop();
@@ -240,10 +245,10 @@ test('with reduced motion nothing is animated', async ({ sheet, page }) => {
   const glow = async (entry: string): Promise<number> => {
     await page.evaluate(() => {
       const made = Object.assign(window, { animationsMade: 0 });
-      const animate = Element.prototype.animate;
-      Element.prototype.animate = function (this: Element, ...given: Parameters<typeof animate>) {
+      const animate = Reflect.get(Element.prototype, 'animate') as (...given: unknown[]) => Animation;
+      Element.prototype.animate = function (this: Element, ...given: unknown[]) {
         made.animationsMade += 1;
-        return animate.apply(this, given);
+        return Reflect.apply(animate, this, given);
       };
     });
     await sheet.account.retype('P_tx', 'entry', entry);

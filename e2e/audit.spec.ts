@@ -40,7 +40,9 @@ test('each decibel figure has its linear value beside it, in the account and in 
   await expect(sheet.button('Linear values')).toHaveAttribute('aria-pressed', 'true');
 });
 
-test('the working gives each step, its symbols lead to their lines, and shares make up the whole', async ({ sheet }) => {
+test('the working gives each step, its symbols lead to their lines, and shares make up the whole', async ({
+  sheet,
+}) => {
   await openBuoy(sheet);
   await find(sheet, 'N_tot', 'Noise and interference together');
   const { working } = sheet;
@@ -54,7 +56,10 @@ test('the working gives each step, its symbols lead to their lines, and shares m
 
   // Shares in both cases make up 100 %, but for rounding.
   const shares = async (): Promise<readonly number[]> => {
-    const texts = await working.getByRole('listitem').getByText(/^(under )?[\d.]+ %$/).allTextContents();
+    const texts = await working
+      .getByRole('listitem')
+      .getByText(/^(under )?[\d.]+ %$/)
+      .allTextContents();
     return texts.map((text) => (text.startsWith('under') ? 0 : Number.parseFloat(text)));
   };
   const calm = await shares();
@@ -128,7 +133,10 @@ test('search finds labels, entries and notes, in folded sections too', async ({ 
   await expect(bar).toBeHidden();
   await expect(sheet.account.line('EIRP_ferry').locator(':focus')).toHaveCount(1);
 
-  await sheet.account.section(section).getByRole('button', { name: `Fold the lines of ${section}` }).click();
+  await sheet.account
+    .section(section)
+    .getByRole('button', { name: `Fold the lines of ${section}` })
+    .click();
   await expect(sheet.account.line('EIRP_ferry')).toBeHidden();
   await sheet.account.press('/');
   await sheet.account.type('breakwater');

@@ -313,7 +313,9 @@ test.describe('with the clipboard', () => {
     const { account } = sheet;
     await sheet.open();
     await page.evaluate(() =>
-      navigator.clipboard.writeText('Name\tSign\tValue\nMast amplifier gain\tG_mast\t17,5 dB\nMast cable loss\tL_mast\t2,25 dB\n'),
+      navigator.clipboard.writeText(
+        'Name\tSign\tValue\nMast amplifier gain\tG_mast\t17,5 dB\nMast cable loss\tL_mast\t2,25 dB\n',
+      ),
     );
     await account.press('Control+v');
     const dialog = page.getByRole('dialog', { name: 'Paste a table' });

@@ -58,10 +58,10 @@ async function makeWritesFail(page: Page): Promise<void> {
   await page.addInitScript(() => {
     const { prototype } = IDBObjectStore;
     for (const name of ['put', 'add'] as const) {
-      const write = prototype[name];
-      prototype[name] = function (this: IDBObjectStore, ...given: Parameters<typeof write>) {
+      const write = Reflect.get(prototype, name) as (...given: unknown[]) => IDBRequest<IDBValidKey>;
+      prototype[name] = function (this: IDBObjectStore, ...given: unknown[]) {
         if ('failing' in window) throw new DOMException('made to fail by a test', 'UnknownError');
-        return write.apply(this, given);
+        return Reflect.apply(write, this, given);
       };
     }
   });

@@ -184,7 +184,14 @@ test('hostile texts of a file stand there as text and do nothing', async ({ shee
     section: `Section ${image}`,
     cases: [{ id: 'only', name: `Case ${image}` }],
     lines: [
-      { id: '<b>', symbol: 'a', label: `Label ${script}`, entry: `1 dB ${image}`, note: `Note ${image}`, source: vector },
+      {
+        id: '<b>',
+        symbol: 'a',
+        label: `Label ${script}`,
+        entry: `1 dB ${image}`,
+        note: `Note ${image}`,
+        source: vector,
+      },
       { id: 'b', symbol: image, label: vector, entry: script, unit: image },
       { id: 'c', symbol: 'javascript:alert(4)', label: '{{7*7}} ${alert(5)}', entry: 'a + "<b>"', unit: script },
       { id: 'd', symbol: 'P', label: 'Level', entry: '-70 dBm', requirement: { atLeast: image } },

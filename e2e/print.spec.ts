@@ -33,7 +33,11 @@ const file = worksheetFile({
   ],
 });
 
-test('everything is printed, though the screen holds only what is in view', async ({ sheet, page, expectAccessible }) => {
+test('everything is printed, though the screen holds only what is in view', async ({
+  sheet,
+  page,
+  expectAccessible,
+}) => {
   await sheet.open();
   await sheet.openFileOf('Long account for paper', file);
   await sheet.button('Linear values').click();
@@ -60,7 +64,12 @@ test('everything is printed, though the screen holds only what is in view', asyn
   const account = page.getByRole('table').filter({ has: page.getByRole('columnheader', { name: 'Entry' }) });
   await expect(account.getByRole('columnheader', { name: 'Wet' })).toBeVisible();
   for (const number of [0, 57, LINES - 5]) {
-    await expect(account.getByRole('row').filter({ hasText: `Loss number ${String(number)}` }).first()).toBeVisible();
+    await expect(
+      account
+        .getByRole('row')
+        .filter({ hasText: `Loss number ${String(number)}` })
+        .first(),
+    ).toBeVisible();
   }
   // Each line, the heading of columns and the one of the section.
   await expect(account.getByRole('row')).toHaveCount(LINES + 2);

@@ -24,7 +24,10 @@ async function beginWorksheet(sheet: WorksheetPage): Promise<void> {
 
 const noticeOn = (sheet: WorksheetPage, text: string) => sheet.page.getByRole('status').filter({ hasText: text });
 
-test('the second tab is told, takes over, and the first one only looks from then on', async ({ sheet: first, context }) => {
+test('the second tab is told, takes over, and the first one only looks from then on', async ({
+  sheet: first,
+  context,
+}) => {
   await beginWorksheet(first);
   const { sheet: second, errors } = await openTab(context);
   await expect(second.account.figure('P')).toHaveText('−80.00 dBm');
@@ -63,7 +66,10 @@ test('the second tab is told, takes over, and the first one only looks from then
   expect(errors).toEqual([]);
 });
 
-test('when the tab that edits is closed, the other one may edit, with its last edit', async ({ sheet: first, context }) => {
+test('when the tab that edits is closed, the other one may edit, with its last edit', async ({
+  sheet: first,
+  context,
+}) => {
   await beginWorksheet(first);
   const { sheet: second, errors } = await openTab(context);
   await expect(noticeOn(second, LOOKING)).toBeVisible();

@@ -15,7 +15,9 @@ test('a worksheet is begun, renamed, duplicated, deleted and had back', async ({
   await expect(worksheets.entry('Tunnel repeater')).toContainText('1 line');
 
   await worksheets.action('Rename', 'Tunnel repeater').click();
-  await worksheets.dialog.getByRole('textbox', { name: 'New title of “Tunnel repeater”' }).fill('Tunnel repeater, north');
+  await worksheets.dialog
+    .getByRole('textbox', { name: 'New title of “Tunnel repeater”' })
+    .fill('Tunnel repeater, north');
   await account.press('Enter');
   await expect(worksheets.entry('Tunnel repeater, north')).toBeVisible();
   await expect(sheet.title).toHaveValue('Tunnel repeater, north');
@@ -70,7 +72,11 @@ test('an earlier state is opened as a worksheet of its own', async ({ sheet }) =
   await sheet.expectSaved();
   const worksheets = await sheet.showWorksheets();
   await worksheets.action('Earlier states of', 'New worksheet').click();
-  await worksheets.dialog.getByRole('list', { name: /^Earlier states/ }).getByRole('button').first().click();
+  await worksheets.dialog
+    .getByRole('list', { name: /^Earlier states/ })
+    .getByRole('button')
+    .first()
+    .click();
   await expect(worksheets.dialog).toBeHidden();
   await expect(account.cell('P', 'entry')).toHaveText('-70 dBm');
   const again = await sheet.showWorksheets();

@@ -2,8 +2,6 @@
 // column, keys go to whatever has the focus, as a person's do.
 import { expect, type Locator, type Page } from '@playwright/test';
 
-
-
 /** Places of the columns, as `aria-colindex` counts them; those of cases begin at `FIRST_CASE`. */
 const COLUMNS = { margin: 1, symbol: 2, label: 3, entry: 4 } as const;
 const FIRST_CASE = 5;
@@ -75,12 +73,16 @@ export class Account {
 
   /** The requirement of a line with its margin. */
   requirement(symbol: string): Locator {
-    return this.line(symbol).getByRole('gridcell').filter({ hasText: /^\s*[≥≤]/ });
+    return this.line(symbol)
+      .getByRole('gridcell')
+      .filter({ hasText: /^\s*[≥≤]/ });
   }
 
   /** The rows of findings that say a text. */
   finding(text: string | RegExp): Locator {
-    return this.rows.filter({ has: this.page.getByText(/^(Accepted )?(error|warning|note): /i) }).filter({ hasText: text });
+    return this.rows
+      .filter({ has: this.page.getByText(/^(Accepted )?(error|warning|note): /i) })
+      .filter({ hasText: text });
   }
 
   /** The heading of a section. */
@@ -101,9 +103,10 @@ export class Account {
 
   /** The headings of all cases, in order. */
   caseNames(): Promise<string[]> {
-    return this.grid.getByRole('columnheader').getByRole('button').evaluateAll((buttons) =>
-      buttons.map((button) => (button.textContent ?? '').replace('▾', '').trim()),
-    );
+    return this.grid
+      .getByRole('columnheader')
+      .getByRole('button')
+      .evaluateAll((buttons) => buttons.map((button) => button.textContent.replace('▾', '').trim()));
   }
 
   /** Presses keys, one after the other. */

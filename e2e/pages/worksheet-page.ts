@@ -3,7 +3,6 @@ import { readFile } from 'node:fs/promises';
 
 import { expect, type Locator, type Page } from '@playwright/test';
 
-
 import { Account } from './account';
 
 /** A file as a person would have it on disk. */

@@ -4,6 +4,7 @@
  * worksheet in the store is never replaced by a file without the person having said so.
  */
 import { fail, ok, type Result } from '../base';
+import { Evaluation } from '../engine';
 import {
   readWorksheetBytes,
   readWorksheetFile,
@@ -11,6 +12,7 @@ import {
   type FileFault,
   type ReadWorksheet,
 } from '../exchange';
+import { describeMoved, movedValues } from '../review';
 import type { StoreFault, StoredWorksheet } from '../store';
 import { duplicateWorksheet, newWorksheet, type Worksheet } from '../worksheet';
 import type { Keeping, KeptWorksheet } from './keeping.svelte';
@@ -112,11 +114,12 @@ export class Opening {
     const { id } = read.value.worksheet;
     await this.#place.keeping.flush();
     const stored = store === null ? undefined : await store.read(id);
-    if (stored?.ok !== true) await this.#openAndKeep(read.value);
-    else if (stored.value.text === writeWorksheetFile(read.value.worksheet) && stored.value.deletedAt === null)
-      await this.#open(read.value, { id, stored: stored.value });
+    const told = withMovedValues(read.value);
+    if (stored?.ok !== true) await this.#openAndKeep(told);
+    else if (saysTheSame(stored.value.text, read.value.worksheet) && stored.value.deletedAt === null)
+      await this.#open(told, { id, stored: stored.value });
     else {
-      this.importChoice = { read: read.value, stored: stored.value };
+      this.importChoice = { read: told, stored: stored.value };
       this.#place.askToImport();
     }
     return ok(undefined);
@@ -145,4 +148,23 @@ export class Opening {
       messages: ['The worksheet was read again: another tab had changed it.', ...read.value.messages],
     });
   }
+}
+
+/** What was read from a file, with a sentence for each required line whose value is no longer the one recorded there. */
+function withMovedValues(read: ReadWorksheet): ReadWorksheet {
+  if (read.worksheet.recorded === undefined) return read;
+  const { cases } = read.worksheet;
+  const nameOf = (caseId: string): string => cases.find(({ id }) => id === caseId)?.name ?? caseId;
+  const moved = movedValues(new Evaluation(read.worksheet)).map((value) => describeMoved(value, nameOf));
+  return { ...read, messages: [...read.messages, ...moved] };
+}
+
+/** True when a stored text and a file's worksheet differ in the values recorded at saving at most. */
+function saysTheSame(storedText: string, worksheet: Worksheet): boolean {
+  const stored = readWorksheetFile(storedText);
+  return stored.ok && textWithoutRecorded(stored.value.worksheet) === textWithoutRecorded(worksheet);
+}
+
+function textWithoutRecorded({ recorded: _recorded, ...worksheet }: Worksheet): string {
+  return writeWorksheetFile(worksheet);
 }

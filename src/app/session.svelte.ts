@@ -8,6 +8,7 @@ import type { Evaluation, LineFinding, Reading } from '../engine';
 import { fileNameFor, writeWorksheetFile, type ReadWorksheet } from '../exchange';
 import type { Result } from '../base';
 import type { Repair } from '../findings';
+import { recordedValues } from '../review';
 import type { PlainFault, Store, WorksheetText } from '../store';
 import {
   acceptFinding,
@@ -240,9 +241,12 @@ export class Session {
     this.announcer.say(text);
   }
 
-  /** The worksheet's file: its name and its text. */
+  /** The worksheet's file: its name and its text, with the values of required lines recorded as they are now. */
   exportFile(): { readonly name: string; readonly text: string } {
-    return { name: fileNameFor(this.worksheet.title), text: writeWorksheetFile(this.worksheet) };
+    const recorded = recordedValues(this.evaluation);
+    const { recorded: _before, ...rest } = this.worksheet;
+    const worksheet: Worksheet = recorded === undefined ? rest : { ...rest, recorded };
+    return { name: fileNameFor(this.worksheet.title), text: writeWorksheetFile(worksheet) };
   }
 
   // Inside

@@ -25,7 +25,9 @@ describe('the lines', () => {
 
   it('give file, case, line, severity and code of each finding, with its repair', () => {
     expect(lines.slice(0, -5)).toEqual([
-      expect.stringMatching(/^sheet: clear,rain: F: warning negative-figure: The line is a noise figure and reads −1\.00 dB/) as string,
+      expect.stringMatching(
+        /^sheet: clear,rain: F: warning negative-figure: The line is a noise figure and reads −1\.00 dB/,
+      ) as string,
       expect.stringMatching(/^sheet: clear: S: error levels-summed: .* \[repair: powersum\(C, C\)\]$/) as string,
       expect.stringMatching(/^sheet: rain: S: error levels-summed: .* \[repair: powersum\(C, C\)\]$/) as string,
       expect.stringMatching(/^sheet: clear,rain: T: error waiting: Waits for S, whose value is withheld\.$/) as string,
@@ -43,7 +45,10 @@ describe('the lines', () => {
   });
 
   it('come file by file, in the order given', () => {
-    const world = worldOf({ 'b.json': fileOf('x = 1 dB require >= 0 dB'), 'a.json': fileOf('y = 2 dB require >= 3 dB') });
+    const world = worldOf({
+      'b.json': fileOf('x = 1 dB require >= 0 dB'),
+      'a.json': fileOf('y = 2 dB require >= 3 dB'),
+    });
     expect(run(['check', 'b.json', 'a.json'], world)).toEqual({
       results:
         'b.json: nominal: x: requirement at least 0 dB: met, margin 1.00 dB\n' +
@@ -74,7 +79,12 @@ describe('the lines', () => {
 describe('accepted findings', () => {
   const lines = [
     { symbol: 'F', entry: '-1 dB', quantity: 'noise figure' as const },
-    { symbol: 'G', entry: '-2 dB', quantity: 'noise figure' as const, accepted: [{ code: 'negative-figure', entry: '-2 dB', reason: 'a test\nfigure' }] },
+    {
+      symbol: 'G',
+      entry: '-2 dB',
+      quantity: 'noise figure' as const,
+      accepted: [{ code: 'negative-figure', entry: '-2 dB', reason: 'a test\nfigure' }],
+    },
   ];
 
   it('are told with their reason; warnings leave the exit code at 0 either way', () => {
@@ -89,7 +99,10 @@ describe('accepted findings', () => {
 });
 
 it('has as many lines as findings and requirements, whatever stands in the texts', () => {
-  const hostile = fc.string({ unit: fc.constantFrom('a', ' ', '\n', '\r', '\u2028', '\u2029', '\u0085', '\v', '\f', '\u001b', ':', '"', 'µ'), maxLength: 10 });
+  const hostile = fc.string({
+    unit: fc.constantFrom('a', ' ', '\n', '\r', '\u2028', '\u2029', '\u0085', '\v', '\f', '\u001b', ':', '"', 'µ'),
+    maxLength: 10,
+  });
   const line = fc.record({
     symbol: hostile,
     label: hostile,

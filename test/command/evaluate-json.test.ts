@@ -50,7 +50,10 @@ describe('the object', () => {
       margin: expect.closeTo(3.8067, 3) as number,
       unit: 'dB',
     });
-    expect(caseOf(results, 'SINR', 'storm').requirement).toMatchObject({ met: false, margin: expect.closeTo(-4.1933, 3) as number });
+    expect(caseOf(results, 'SINR', 'storm').requirement).toMatchObject({
+      met: false,
+      margin: expect.closeTo(-4.1933, 3) as number,
+    });
     expect(caseOf(results, 'N')).not.toHaveProperty('requirement');
   });
 
@@ -144,29 +147,29 @@ it('tells the unit of a case that has another one than the line', () => {
 });
 
 describe('the names of lines', () => {
-  it.each(['constructor', 'toString', '__proto__', 'hasOwnProperty', 'valueOf', 'prototype'])(
-    'may be %s',
-    (symbol) => {
-      const file = fileOfLines([
-        { symbol, entry: '3 dB', requirement: { atLeast: '1 dB' } },
-        { symbol: 'y', entry: '4 dB' },
-      ]);
-      const results = resultsOf(file);
-      expect(Object.keys(results.lines)).toEqual([symbol, 'y']);
-      expect(Object.getOwnPropertyDescriptor(results.lines, symbol)?.value).toMatchObject({
-        unit: 'dB',
-        cases: { nominal: { value: 3 } },
-      });
-      for (const format of ['text', 'markdown', 'csv'])
-        expect(runOn(file, 'evaluate', 'sheet', '--format', format, '--line', symbol).exitCode).toBe(0);
-      expect(runOn(file, 'explain', 'sheet', symbol).results).toContain('3.00 dB');
-      expect(runOn(file, 'check', 'sheet').results).toContain('requirement at least 1 dB: met');
-    },
-  );
+  it.each(['constructor', 'toString', '__proto__', 'hasOwnProperty', 'valueOf', 'prototype'])('may be %s', (symbol) => {
+    const file = fileOfLines([
+      { symbol, entry: '3 dB', requirement: { atLeast: '1 dB' } },
+      { symbol: 'y', entry: '4 dB' },
+    ]);
+    const results = resultsOf(file);
+    expect(Object.keys(results.lines)).toEqual([symbol, 'y']);
+    expect(Object.getOwnPropertyDescriptor(results.lines, symbol)?.value).toMatchObject({
+      unit: 'dB',
+      cases: { nominal: { value: 3 } },
+    });
+    for (const format of ['text', 'markdown', 'csv'])
+      expect(runOn(file, 'evaluate', 'sheet', '--format', format, '--line', symbol).exitCode).toBe(0);
+    expect(runOn(file, 'explain', 'sheet', symbol).results).toContain('3.00 dB');
+    expect(runOn(file, 'check', 'sheet').results).toContain('requirement at least 1 dB: met');
+  });
 
   it('do not exist because every object has them', () => {
     for (const symbol of ['constructor', '__proto__', 'toString'])
-      expect(runOn(fileOf('x = 1 dB'), 'evaluate', 'sheet', '--line', symbol)).toMatchObject({ exitCode: 2, results: '' });
+      expect(runOn(fileOf('x = 1 dB'), 'evaluate', 'sheet', '--line', symbol)).toMatchObject({
+        exitCode: 2,
+        results: '',
+      });
   });
 
   it('are ids where there is no symbol, or another line has it', () => {
@@ -199,7 +202,11 @@ describe('the names of lines', () => {
 });
 
 describe('findings that have been accepted', () => {
-  const line = { symbol: 'P', entry: 'a + L', accepted: [{ code: 'loss-added', entry: 'a + L', reason: 'referred back' }] };
+  const line = {
+    symbol: 'P',
+    entry: 'a + L',
+    accepted: [{ code: 'loss-added', entry: 'a + L', reason: 'referred back' }],
+  };
   const inputs = [
     { symbol: 'a', entry: '-90 dBm' },
     { symbol: 'L', entry: '2 dB', quantity: 'loss' as const },
@@ -247,7 +254,12 @@ describe('every value', () => {
       const lines = new Evaluation(worksheet).lines();
       return applyAll(
         worksheet,
-        edits.map(({ at, entry }) => ({ kind: 'set-line', lineId: lines[at % lines.length]?.id ?? '', field: 'entry', value: entry })),
+        edits.map(({ at, entry }) => ({
+          kind: 'set-line',
+          lineId: lines[at % lines.length]?.id ?? '',
+          field: 'entry',
+          value: entry,
+        })),
       ).worksheet;
     });
 
@@ -267,7 +279,9 @@ describe('every value', () => {
             if (figure.state === 'value') expect(found.unit ?? results.lines[symbol]?.unit).toBe(figure.unit.word);
           }
         expect(new Set(results.findings.map(({ line, code }) => `${line} ${code}`))).toEqual(
-          new Set(evaluation.sheetFindings().map(({ lineId, code }) => `${evaluation.line(lineId)?.symbol ?? ''} ${code}`)),
+          new Set(
+            evaluation.sheetFindings().map(({ lineId, code }) => `${evaluation.line(lineId)?.symbol ?? ''} ${code}`),
+          ),
         );
       }),
       { numRuns: 40 },

@@ -49,10 +49,9 @@ describe('a sum', () => {
       'SINR — Ratio, storm: 11.62 dB (× 14.54)',
     ]);
     expect(explained(BUOY, 'N')[0]).toBe('N — Noise, calm, storm and ice: -117.01 dBm (1.991 fW)');
-    expect(explained(BUOY, 'SINR', '--case', 'ice', '--case', 'storm').filter((row) => row.startsWith('SINR'))).toEqual([
-      'SINR — Ratio, storm: 11.62 dB (× 14.54)',
-      'SINR — Ratio, ice: 16.87 dB (× 48.69)',
-    ]);
+    expect(explained(BUOY, 'SINR', '--case', 'ice', '--case', 'storm').filter((row) => row.startsWith('SINR'))).toEqual(
+      ['SINR — Ratio, storm: 11.62 dB (× 14.54)', 'SINR — Ratio, ice: 16.87 dB (× 48.69)'],
+    );
   });
 
   it('of powers is told with shares', () => {
@@ -83,9 +82,14 @@ describe('shares', () => {
   ])('of a %s add to 100 %%', (name, figures) => {
     const unit = name === 'ratiosum' ? 'dB' : 'dBm';
     const lines = figures.map((figure, at) => `a${String(at)} = ${String(figure)} ${unit}`);
-    const rows = explained(fileOf([...lines, `x = ${name}(${figures.map((_, at) => `a${String(at)}`).join(', ')})`].join('\n')), 'x');
+    const rows = explained(
+      fileOf([...lines, `x = ${name}(${figures.map((_, at) => `a${String(at)}`).join(', ')})`].join('\n')),
+      'x',
+    );
     expect(percentages(rows)).toHaveLength(figures.length);
-    expect(Math.abs(percentages(rows).reduce((sum, share) => sum + share, 0) - 100)).toBeLessThanOrEqual(0.05 * figures.length);
+    expect(Math.abs(percentages(rows).reduce((sum, share) => sum + share, 0) - 100)).toBeLessThanOrEqual(
+      0.05 * figures.length,
+    );
   });
 
   it('that would read 0.0 % are told from none at all', () => {
@@ -103,15 +107,35 @@ describe('what stands below the working', () => {
   it('is findings with their cases and answers, source, note and users', () => {
     const file = fileOfLines(
       [
-        { id: 'f', symbol: 'F', entry: '2 dB', quantity: 'noise figure', byCase: { b: '-1 dB' }, source: 'Invented.', note: 'Two\nlines.' },
-        { id: 'g', symbol: 'G', entry: 'F + 1 dB', accepted: [{ code: 'negative-figure', entry: 'F + 1 dB', reason: '' }] },
+        {
+          id: 'f',
+          symbol: 'F',
+          entry: '2 dB',
+          quantity: 'noise figure',
+          byCase: { b: '-1 dB' },
+          source: 'Invented.',
+          note: 'Two\nlines.',
+        },
+        {
+          id: 'g',
+          symbol: 'G',
+          entry: 'F + 1 dB',
+          accepted: [{ code: 'negative-figure', entry: 'F + 1 dB', reason: '' }],
+        },
         { id: 'h', symbol: '', label: 'Loose', entry: 'F' },
       ],
-      { cases: [{ id: 'a', name: 'Calm' }, { id: 'b', name: 'Storm' }] },
+      {
+        cases: [
+          { id: 'a', name: 'Calm' },
+          { id: 'b', name: 'Storm' },
+        ],
+      },
     );
     const rows = explained(file, 'F');
     expect(rows.slice(-5)).toEqual([
-      expect.stringMatching(/^warning negative-figure in Storm: The line is a noise figure and reads −1\.00 dB/) as string,
+      expect.stringMatching(
+        /^warning negative-figure in Storm: The line is a noise figure and reads −1\.00 dB/,
+      ) as string,
       'source: Invented.',
       'note: Two lines.',
       'used by: G, h',
@@ -123,7 +147,12 @@ describe('what stands below the working', () => {
 
   it('has the reason of an accepted finding', () => {
     const file = fileOfLines([
-      { symbol: 'F', entry: '-1 dB', quantity: 'noise figure', accepted: [{ code: 'negative-figure', entry: '-1 dB', reason: 'A test.' }] },
+      {
+        symbol: 'F',
+        entry: '-1 dB',
+        quantity: 'noise figure',
+        accepted: [{ code: 'negative-figure', entry: '-1 dB', reason: 'A test.' }],
+      },
     ]);
     expect(explained(file, 'F').find((row) => row.startsWith('warning'))).toMatch(/ Accepted: A test\.$/);
   });
@@ -146,7 +175,9 @@ describe('what stands below the working', () => {
 });
 
 describe('lines without a figure', () => {
-  const broken = fileOf('a = b + 1 dB\nb = a + 1 dB require >= 3 dB\nc = b + 1 dB\ne =  # Nothing yet\nn = 1 dBm + 1 dBm');
+  const broken = fileOf(
+    'a = b + 1 dB\nb = a + 1 dB require >= 3 dB\nc = b + 1 dB\ne =  # Nothing yet\nn = 1 dBm + 1 dBm',
+  );
 
   it('in a loop are withheld, and the loop is named', () => {
     expect(explained(broken, 'b')).toEqual([
@@ -170,7 +201,11 @@ describe('lines without a figure', () => {
   });
 
   it('may be empty', () => {
-    expect(runOn(broken, 'explain', 'sheet', 'e')).toEqual({ results: 'e — Nothing yet, Nominal: no entry\n', messages: '', exitCode: 0 });
+    expect(runOn(broken, 'explain', 'sheet', 'e')).toEqual({
+      results: 'e — Nothing yet, Nominal: no entry\n',
+      messages: '',
+      exitCode: 0,
+    });
   });
 });
 
@@ -200,7 +235,9 @@ describe.each(STARTERS)('of $title', ({ id, text }) => {
       const answer = run(['explain', id, symbol], worldOf({ [id]: text }));
       expect(answer).toMatchObject({ messages: '', exitCode: 0 });
       expect(answer.results).toContain(`${symbol} — ${label}, `);
-      expect(/\n {2}requirement: at (least|most) .*: met, margin \d/.test(answer.results)).toBe(requirement !== undefined);
+      expect(/\n {2}requirement: at (least|most) .*: met, margin \d/.test(answer.results)).toBe(
+        requirement !== undefined,
+      );
       // No two signs in a row, and nothing that a program would say of what it lacks.
       expect(answer.results).not.toMatch(/[−+×÷/] −|undefined|NaN|Infinity|\[object/);
     }

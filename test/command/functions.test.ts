@@ -14,7 +14,9 @@ describe('the list', () => {
   it('has every group as a heading and every function once, on a line by itself with its text', () => {
     const rows = listing.results.split('\n').filter((row) => row !== '');
     expect(rows.filter((row) => !row.startsWith(' '))).toEqual(FUNCTION_GROUPS);
-    const entries = rows.filter((row) => row.startsWith('  ')).map((row) => /^ {2}(\S.*?) {2,}(\S.*)$/.exec(row)?.slice(1));
+    const entries = rows
+      .filter((row) => row.startsWith('  '))
+      .map((row) => /^ {2}(\S.*?) {2,}(\S.*)$/.exec(row)?.slice(1));
     expect(entries).toHaveLength(FUNCTIONS.length);
     expect(new Map(entries.map((entry) => [entry?.[0], entry?.[1]]))).toEqual(
       new Map(FUNCTIONS.map((entry) => [signatureOf(entry), entry.text])),
@@ -48,7 +50,9 @@ describe.each(FUNCTIONS)('$name', (entry) => {
       expect(text).not.toBe('');
       expect(rows).toContain(`  ${word}: ${text}`);
     }
-    expect(rows.some((row) => row.startsWith('  holds for '))).toBe(entry.form === 'ordinary' && entry.validity !== undefined);
+    expect(rows.some((row) => row.startsWith('  holds for '))).toBe(
+      entry.form === 'ordinary' && entry.validity !== undefined,
+    );
   });
 
   it('has an example that can be evaluated as it stands', () => {

@@ -23,14 +23,22 @@ export const fileOf = (text: string, ...caseIds: readonly string[]): string =>
   writeWorksheetFile(sheetOf(text, ...caseIds));
 
 /** The file of a worksheet of one section with lines that the notation cannot write. */
-export function fileOfLines(lines: readonly (Partial<Line> & { readonly entry: string })[], more: Partial<Worksheet> = {}): string {
+export function fileOfLines(
+  lines: readonly (Partial<Line> & { readonly entry: string })[],
+  more: Partial<Worksheet> = {},
+): string {
   return writeWorksheetFile({
     id: 'w',
     title: 'test',
     cases: ONE_CASE,
     ...more,
     sections: more.sections ?? [
-      { id: 's', kind: 'lines', title: 'all', lines: lines.map((line, at) => ({ id: `l${String(at)}`, symbol: '', label: '', ...line })) },
+      {
+        id: 's',
+        kind: 'lines',
+        title: 'all',
+        lines: lines.map((line, at) => ({ id: `l${String(at)}`, symbol: '', label: '', ...line })),
+      },
     ],
   });
 }

@@ -48,17 +48,19 @@ describe('bad usage', () => {
 });
 
 describe('help', () => {
-  it.each([[['help']], [['--help']], [['-h']], [['evaluate', '--help']], [['explain', 'sheet', '--help']]])('%j', (words) => {
-    expect(run(words, worldOf({}))).toEqual({
-      results: expect.stringMatching(/^levelwright[^]*explain FILE SYMBOL/) as string,
-      messages: '',
-      exitCode: 0,
-    });
-  });
+  it.each([[['help']], [['--help']], [['-h']], [['evaluate', '--help']], [['explain', 'sheet', '--help']]])(
+    '%j',
+    (words) => {
+      expect(run(words, worldOf({}))).toEqual({
+        results: expect.stringMatching(/^levelwright[^]*explain FILE SYMBOL/) as string,
+        messages: '',
+        exitCode: 0,
+      });
+    },
+  );
 });
 
-const document = (more: object): string =>
-  JSON.stringify({ ...(JSON.parse(fileOf('x = 1 dB')) as object), ...more });
+const document = (more: object): string => JSON.stringify({ ...(JSON.parse(fileOf('x = 1 dB')) as object), ...more });
 
 describe('bad files', () => {
   it.each<readonly [string, string | Uint8Array, RegExp]>([
@@ -71,23 +73,50 @@ describe('bad files', () => {
     ['null', 'null', /^sheet: This is no worksheet file/],
     ['no version', document({ version: 'new' }), /^sheet: version: a whole number/],
     ['no cases', document({ cases: [] }), /^sheet: cases/],
-    ['a case given twice', document({ cases: [{ id: 'a', name: '' }, { id: 'a', name: '' }] }), /“a” is given to/],
+    [
+      'a case given twice',
+      document({
+        cases: [
+          { id: 'a', name: '' },
+          { id: 'a', name: '' },
+        ],
+      }),
+      /“a” is given to/,
+    ],
     ['sections that are none', document({ sections: 3 }), /^sheet: sections: a list expected, number 3 found/],
-    ['a line without an entry', SHEET.replace('"entry": "2 dB"', '"enter": "2 dB"'), /^sheet: sections\[0\]\.lines\[1\]\.entry: missing/],
-    ['a key of every object', SHEET.replace('"title"', '"__proto__": {}, "title"'), /^sheet: .*The key __proto__ is not allowed/],
-    ['a constructor', SHEET.replace('"label"', '"constructor": 1, "label"'), /^sheet: .*The key constructor is not allowed/],
+    [
+      'a line without an entry',
+      SHEET.replace('"entry": "2 dB"', '"enter": "2 dB"'),
+      /^sheet: sections\[0\]\.lines\[1\]\.entry: missing/,
+    ],
+    [
+      'a key of every object',
+      SHEET.replace('"title"', '"__proto__": {}, "title"'),
+      /^sheet: .*The key __proto__ is not allowed/,
+    ],
+    [
+      'a constructor',
+      SHEET.replace('"label"', '"constructor": 1, "label"'),
+      /^sheet: .*The key constructor is not allowed/,
+    ],
     ['a key twice', SHEET.replace('"title"', '"title": "", "title"'), /^sheet: .*given twice/],
     ['brackets without end', '['.repeat(1_000_000), /^sheet: .*nested more than 64 deep/],
     ['objects without end', '{"a":'.repeat(100_000), /^sheet: .*nested more than 64 deep/],
     ['33 MiB', new Uint8Array(33 * 1024 * 1024), /^sheet: This file is larger than 32 MiB/],
     ['a number beyond all range', document({}).replace('"version":1', '"version":1e999'), /^sheet: .*too large/],
   ])('%s', (_, content, message) => {
-    for (const words of [['evaluate', 'sheet', '--format', 'json'], ['check', 'sheet'], ['explain', 'sheet', 'x']])
+    for (const words of [
+      ['evaluate', 'sheet', '--format', 'json'],
+      ['check', 'sheet'],
+      ['explain', 'sheet', 'x'],
+    ])
       expect(refusalOf(runOn(content, ...words))).toMatch(message);
   });
 
   it('that are missing', () => {
-    expect(refusalOf(run(['evaluate', 'nowhere'], worldOf({})))).toMatch(/^nowhere: cannot be read \(ENOENT: no such file/);
+    expect(refusalOf(run(['evaluate', 'nowhere'], worldOf({})))).toMatch(
+      /^nowhere: cannot be read \(ENOENT: no such file/,
+    );
   });
 
   it('among good ones leave nothing on standard output', () => {
@@ -108,7 +137,9 @@ describe('files with something to be told', () => {
     const later = SHEET.replace('"version": 1', '"version": 7');
     const answer = runOn(later, 'evaluate', 'sheet', '--format', 'json');
     expect(answer.exitCode).toBe(0);
-    expect(answer.messages).toMatch(/^sheet: This file is of version 7 of the format; version 1 is the last one known here\./);
+    expect(answer.messages).toMatch(
+      /^sheet: This file is of version 7 of the format; version 1 is the last one known here\./,
+    );
     expect(caseOf(JSON.parse(answer.results) as Results, 'EIRP').value).toBe(12);
   });
 
@@ -121,7 +152,12 @@ describe('files with something to be told', () => {
   it('with sections of other kinds and stray cases are evaluated', () => {
     const file = fileOfLines([], {
       sections: [
-        { id: 'a', kind: 'lines', title: 'all', lines: [{ id: 'l', symbol: 'x', label: '', entry: '1 dB', byCase: { fog: '2 dB' } }] },
+        {
+          id: 'a',
+          kind: 'lines',
+          title: 'all',
+          lines: [{ id: 'l', symbol: 'x', label: '', entry: '1 dB', byCase: { fog: '2 dB' } }],
+        },
         { id: 'b', kind: 'garden', title: 'Roses', content: { id: 'b', kind: 'garden', title: 'Roses', beds: 3 } },
       ],
     });
@@ -145,12 +181,17 @@ describe('files with something to be told', () => {
 });
 
 describe('choosing', () => {
-  const named = fileOf('x = 1 dB @ b: 2 dB', 'a', 'b', 'c').replace('"name": "a"', '"name": "Calm sea"').replace('"name": "c"', '"name": "b"');
+  const named = fileOf('x = 1 dB @ b: 2 dB', 'a', 'b', 'c')
+    .replace('"name": "a"', '"name": "Calm sea"')
+    .replace('"name": "c"', '"name": "b"');
 
   it.each([
     [['--case', 'a'], ['a']],
     [['--case', 'Calm sea'], ['a']],
-    [['--case', 'c', '--case', 'a'], ['a', 'c']],
+    [
+      ['--case', 'c', '--case', 'a'],
+      ['a', 'c'],
+    ],
     [['--case', 'a', '--case', 'Calm sea'], ['a']],
     // An id comes before a name.
     [['--case', 'b'], ['b']],
@@ -162,7 +203,10 @@ describe('choosing', () => {
   });
 
   it('lines, by symbol or by the name in results, keeps their order', () => {
-    expect(Object.keys(resultsOf(SHEET, '--line', 'EIRP', '--line', 'P_tx', '--line', 'EIRP').lines)).toEqual(['P_tx', 'EIRP']);
+    expect(Object.keys(resultsOf(SHEET, '--line', 'EIRP', '--line', 'P_tx', '--line', 'EIRP').lines)).toEqual([
+      'P_tx',
+      'EIRP',
+    ]);
     const loose = fileOfLines([{ id: 'q7', symbol: '', entry: '3 dB' }]);
     expect(caseOf(resultsOf(loose, '--line', 'q7'), 'q7').value).toBe(3);
     expect(runOn(loose, 'explain', 'sheet', 'q7').results).toMatch(/^q7, Nominal: 3\.00 dB/);
@@ -193,7 +237,10 @@ describe('exit codes', () => {
     [[], 1],
   ])('of what is chosen by %j', (options, exitCode) => {
     for (const format of ['text', 'json', 'markdown', 'csv'])
-      expect(runOn(mixed, 'evaluate', 'sheet', '--format', format, ...options)).toMatchObject({ exitCode, messages: '' });
+      expect(runOn(mixed, 'evaluate', 'sheet', '--format', format, ...options)).toMatchObject({
+        exitCode,
+        messages: '',
+      });
   });
 
   it.each([
@@ -221,14 +268,34 @@ describe('exit codes', () => {
 
 it('never throws, and with exit 2 prints nothing but a message', () => {
   const word = fc.oneof(
-    fc.constantFrom('evaluate', 'check', 'explain', 'functions', 'sheet', 'bad', '--case', '--line', '--format', 'json', '--linear', '--', 'x', '-', '--help', 'calm', '--case=calm'),
+    fc.constantFrom(
+      'evaluate',
+      'check',
+      'explain',
+      'functions',
+      'sheet',
+      'bad',
+      '--case',
+      '--line',
+      '--format',
+      'json',
+      '--linear',
+      '--',
+      'x',
+      '-',
+      '--help',
+      'calm',
+      '--case=calm',
+    ),
     fc.string({ maxLength: 8 }),
   );
   const content = fc.oneof(
     fc.constant(SHEET),
     fc.json(),
     fc.string(),
-    fc.tuple(fc.nat(SHEET.length), fc.string({ maxLength: 6 })).map(([at, put]) => SHEET.slice(0, at) + put + SHEET.slice(at + put.length)),
+    fc
+      .tuple(fc.nat(SHEET.length), fc.string({ maxLength: 6 }))
+      .map(([at, put]) => SHEET.slice(0, at) + put + SHEET.slice(at + put.length)),
   );
   fc.assert(
     fc.property(fc.array(word, { maxLength: 6 }), content, (words, bad) => {

@@ -41,7 +41,10 @@ describe('sums of decibels are products', () => {
     ['P1 | dBm = 0 dBm\nIM = -40 dBm\nx | dBm = 1.5*P1 - 0.5*IM', '(1 mW)^1.5 ÷ (100 nW)^0.5'],
     ['G = 2 dBd\nP = 10 dBm\nx = P + G', '10 mW × 2.6'],
     ['T = 300 K\nG = 35 dBi\nx | dB/K = G - db(T)', '3162 ÷ 300 K'],
-    ['GT = 12 dB/K\nP = 10 dBW\nx | dBHz = P + GT - db(k_B) - 160 dB', '10 W × (15.85 1/K) ÷ (13.81×10⁻²⁴ J/K) ÷ 10×10¹⁵'],
+    [
+      'GT = 12 dB/K\nP = 10 dBW\nx | dBHz = P + GT - db(k_B) - 160 dB',
+      '10 W × (15.85 1/K) ÷ (13.81×10⁻²⁴ J/K) ÷ 10×10¹⁵',
+    ],
     ['C = 70 dBHz\nR = 4 Mbit/s\nx | dB = C - db(R)', '10 MHz ÷ (4 Mbit/s)'],
     ['d = 3 km\nP = 40 dBm\nx | dBm/m² = P - db(4*pi) - 20*log10(d)', '10 W ÷ 12.57 ÷ (3 km)^2'],
     ['T = 15 °C\nG = 3 dBi\nx | dB/K = G - db(T)', '1.995 ÷ 288.1 K'],
@@ -79,8 +82,14 @@ describe('sums of powers are sums', () => {
     ['a = -90 dBm\nL = 3 dB\nx = powerdiff(a, a - L)', '1 pW − (1 pW ÷ 1.995)'],
     ['a = 0 dBm\nb = -30 dBm\nx = meanpower(a, b)', '(1 mW + 1 µW) ÷ 2'],
     ['a = 20 dB\nb = 17 dB\nx = ratiosum(a, b)', '1 ÷ (1 ÷ 100 + 1 ÷ 50.12)'],
-    ['C = -90 dBm\nN = -110 dBm\nI = -107 dBm\nx = ratiosum(C - N, C - I)', '1 ÷ (1 ÷ (1 pW ÷ 10 fW) + 1 ÷ (1 pW ÷ 19.95 fW))'],
-    ['a = 20 dB\nb = 17 dB\nc = 15 dB\nx = ratiosum(ratiosum(a, b), c)', '1 ÷ (1 ÷ (1 ÷ (1 ÷ 100 + 1 ÷ 50.12)) + 1 ÷ 31.62)'],
+    [
+      'C = -90 dBm\nN = -110 dBm\nI = -107 dBm\nx = ratiosum(C - N, C - I)',
+      '1 ÷ (1 ÷ (1 pW ÷ 10 fW) + 1 ÷ (1 pW ÷ 19.95 fW))',
+    ],
+    [
+      'a = 20 dB\nb = 17 dB\nc = 15 dB\nx = ratiosum(ratiosum(a, b), c)',
+      '1 ÷ (1 ÷ (1 ÷ (1 ÷ 100 + 1 ÷ 50.12)) + 1 ÷ 31.62)',
+    ],
     ['a | dB | impairment ratio = -20 dB\nb | dB | impairment ratio = -17 dB\nx = ratiosum(a, b)', '0.01 + 0.01995'],
     ['a = -100 dBm\nx = powersum(a, meanpower(a, a))', '100 fW + (100 fW + 100 fW) ÷ 2'],
     // Powers of voltages are their squares; the sum is a voltage again.
@@ -118,11 +127,9 @@ it('shows no power as nought', () => {
 
 it('links the factors that are lines to their lines', () => {
   const pieces = stepOf(workingOfLast('P = 14 dBm\nL = 2 dB\nx = P - L + 3 dB'), 'in linear terms');
-  expect(pieces?.filter(({ type }) => type === 'figure').map((piece) => ('lineId' in piece ? piece.lineId : undefined))).toEqual([
-    'l0',
-    undefined,
-    'l1',
-  ]);
+  expect(
+    pieces?.filter(({ type }) => type === 'figure').map((piece) => ('lineId' in piece ? piece.lineId : undefined)),
+  ).toEqual(['l0', undefined, 'l1']);
   const shares = stepOf(workingOfLast('a = -100 dBm\nb = 2 pW\nx = powersum(a, b)'), 'in linear terms');
   expect(shares?.filter(({ type }) => type === 'figure')).toMatchObject([{ lineId: 'l0' }, { lineId: 'l1' }]);
 });
@@ -134,22 +141,47 @@ it.each(STARTERS)('gives the result for every line of $title that has the step',
   const workings = new Evaluation(worksheet)
     .lines()
     .flatMap(({ symbol }) => worksheet.cases.map(({ id }) => workingIn(worksheet, symbol, id)));
-  const written = workings.filter((working) => stepOf(working, 'in linear terms') !== undefined && resultOf(working) > 0);
+  const written = workings.filter(
+    (working) => stepOf(working, 'in linear terms') !== undefined && resultOf(working) > 0,
+  );
   expect(written.length).toBeGreaterThan(10);
   for (const working of written) expectToGiveResult(working);
 });
 
 describe('any sum of a level and ratios', () => {
   const figure = fc.integer({ min: -9000, max: 9000 }).map((hundredths) => hundredths / 100);
-  const level = fc.constantFrom('dBm', 'dBW', 'dBµV', 'dBV', 'dBm/Hz', 'dBHz', 'dBK', 'dB/K', 'dBµV/m', 'dBW/m²', 'dBi', 'dBd');
+  const level = fc.constantFrom(
+    'dBm',
+    'dBW',
+    'dBµV',
+    'dBV',
+    'dBm/Hz',
+    'dBHz',
+    'dBK',
+    'dB/K',
+    'dBµV/m',
+    'dBW/m²',
+    'dBi',
+    'dBd',
+  );
 
   it('multiplies to the result', () => {
     fc.assert(
-      fc.property(level, figure, fc.array(fc.tuple(figure, fc.constantFrom('+', '-'), fc.constantFrom('', '2*', '0.5*')), { minLength: 1, maxLength: 5 }), (unit, first, ratios) => {
-        const lines = ratios.map(([ratio], at) => `r${String(at)} | dB | plain = ${String(ratio)} dB`);
-        const sum = ratios.map(([, sign, factor], at) => ` ${sign} ${factor}r${String(at)}`).join('');
-        expectToGiveResult(workingOfLast([`a = ${String(first)} ${unit}`, ...lines, `x | ${unit} = a${sum}`].join('\n')));
-      }),
+      fc.property(
+        level,
+        figure,
+        fc.array(fc.tuple(figure, fc.constantFrom('+', '-'), fc.constantFrom('', '2*', '0.5*')), {
+          minLength: 1,
+          maxLength: 5,
+        }),
+        (unit, first, ratios) => {
+          const lines = ratios.map(([ratio], at) => `r${String(at)} | dB | plain = ${String(ratio)} dB`);
+          const sum = ratios.map(([, sign, factor], at) => ` ${sign} ${factor}r${String(at)}`).join('');
+          expectToGiveResult(
+            workingOfLast([`a = ${String(first)} ${unit}`, ...lines, `x | ${unit} = a${sum}`].join('\n')),
+          );
+        },
+      ),
       { numRuns: 100 },
     );
   });
@@ -157,11 +189,20 @@ describe('any sum of a level and ratios', () => {
   it('adds to the result, of powers', () => {
     const terms = fc.array(figure, { minLength: 2, maxLength: 6 });
     fc.assert(
-      fc.property(fc.constantFrom('dBm', 'dBW', 'dBµV', 'dB', 'dBK'), fc.constantFrom('powersum', 'meanpower', 'ratiosum'), terms, (unit, name, figures) => {
-        const lines = figures.map((one, at) => `a${String(at)} = ${String(one)} ${unit}`);
-        const list = figures.map((_, at) => `a${String(at)}`).join(', ');
-        expectToGiveResult(workingOfLast([...lines, `x = ${name === 'ratiosum' ? (unit === 'dB' ? name : 'powersum') : name}(${list})`].join('\n')));
-      }),
+      fc.property(
+        fc.constantFrom('dBm', 'dBW', 'dBµV', 'dB', 'dBK'),
+        fc.constantFrom('powersum', 'meanpower', 'ratiosum'),
+        terms,
+        (unit, name, figures) => {
+          const lines = figures.map((one, at) => `a${String(at)} = ${String(one)} ${unit}`);
+          const list = figures.map((_, at) => `a${String(at)}`).join(', ');
+          expectToGiveResult(
+            workingOfLast(
+              [...lines, `x = ${name === 'ratiosum' ? (unit === 'dB' ? name : 'powersum') : name}(${list})`].join('\n'),
+            ),
+          );
+        },
+      ),
       { numRuns: 100 },
     );
   });

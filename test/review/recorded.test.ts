@@ -9,7 +9,13 @@ import type { Worksheet } from '../../src/worksheet';
 import { sheetOf, sheetOfLines } from '../engine/notation';
 
 const SHEET = sheetOf(
-  ['C = -90 dBm @ storm: -98.5 dBm', 'N = -104 dBm', 'CN = C - N require >= 3 dB', 'f = 868.3 MHz require >= 863 MHz', 'P | dBm = 0 W require <= 0 dBm'].join('\n'),
+  [
+    'C = -90 dBm @ storm: -98.5 dBm',
+    'N = -104 dBm',
+    'CN = C - N require >= 3 dB',
+    'f = 868.3 MHz require >= 863 MHz',
+    'P | dBm = 0 W require <= 0 dBm',
+  ].join('\n'),
   'calm',
   'storm',
 );
@@ -20,7 +26,9 @@ const moved = (worksheet: Worksheet): ReturnType<typeof movedValues> => movedVal
 const withEntries = (worksheet: Worksheet, entries: Readonly<Record<string, string>>): Worksheet => ({
   ...worksheet,
   sections: worksheet.sections.map((section) =>
-    'lines' in section ? { ...section, lines: section.lines.map((line) => ({ ...line, entry: entries[line.symbol] ?? line.entry })) } : section,
+    'lines' in section
+      ? { ...section, lines: section.lines.map((line) => ({ ...line, entry: entries[line.symbol] ?? line.entry })) }
+      : section,
   ),
 });
 
@@ -51,12 +59,15 @@ describe('recorded values', () => {
     ).toEqual({ a: {}, x: { nominal: '2.00 dB' } });
   });
 
-  it.each(['constructor', '__proto__', 'toString'])('of a line named %s leave a file that can be read again', (symbol) => {
-    const sheet = sheetOfLines([{ id: 'l', symbol, label: '', entry: '1 dB', requirement: { atLeast: '0 dB' } }]);
-    const values = recorded(sheet);
-    expect(Object.keys(values ?? {})).toEqual([symbol]);
-    expect(readWorksheetFile(writeWorksheetFile({ ...sheet, recorded: values ?? {} })).ok).toBe(true);
-  });
+  it.each(['constructor', '__proto__', 'toString'])(
+    'of a line named %s leave a file that can be read again',
+    (symbol) => {
+      const sheet = sheetOfLines([{ id: 'l', symbol, label: '', entry: '1 dB', requirement: { atLeast: '0 dB' } }]);
+      const values = recorded(sheet);
+      expect(Object.keys(values ?? {})).toEqual([symbol]);
+      expect(readWorksheetFile(writeWorksheetFile({ ...sheet, recorded: values ?? {} })).ok).toBe(true);
+    },
+  );
 });
 
 describe('moved values', () => {

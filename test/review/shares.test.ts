@@ -46,7 +46,14 @@ describe.each(SUMS)('%s of figures in %s %s', (name, unit, kind) => {
         const step = 1e-4;
         for (const [at, share] of shares.entries()) {
           const moved = (by: number): number =>
-            valueIn(sumOf(name, unit, of.map((figure, index) => (index === at ? figure + by : figure)), kind));
+            valueIn(
+              sumOf(
+                name,
+                unit,
+                of.map((figure, index) => (index === at ? figure + by : figure)),
+                kind,
+              ),
+            );
           expect(share).toBeCloseTo((moved(step) - moved(-step)) / (2 * step), 6);
         }
       }),
@@ -57,7 +64,8 @@ describe.each(SUMS)('%s of figures in %s %s', (name, unit, kind) => {
 
 it('a power taken off has a negative share, and they still add to 1', () => {
   const shares = sharesIn('a = -90 dBm\nb = -93 dBm\nx = powerdiff(a, b)');
-  const move = (a: number, b: number): number => valueIn(`a = ${String(a)} dBm\nb = ${String(b)} dBm\nx = powerdiff(a, b)`);
+  const move = (a: number, b: number): number =>
+    valueIn(`a = ${String(a)} dBm\nb = ${String(b)} dBm\nx = powerdiff(a, b)`);
   const step = 1e-4;
   expect(shares[0]).toBeCloseTo((move(-90 + step, -93) - move(-90 - step, -93)) / (2 * step), 5);
   expect(shares[1]).toBeCloseTo((move(-90, -93 + step) - move(-90, -93 - step)) / (2 * step), 5);
@@ -82,7 +90,9 @@ describe('parts of every form', () => {
   ])('%s', (_, text, expected) => {
     const working = workingOfLast(text);
     expect(working.shares).toBe(true);
-    expect(working.terms.map(({ share }) => share)).toEqual(expected.map((share) => expect.closeTo(share, 10) as number));
+    expect(working.terms.map(({ share }) => share)).toEqual(
+      expected.map((share) => expect.closeTo(share, 10) as number),
+    );
   });
 });
 

@@ -87,9 +87,12 @@ export function rounding(pieces: readonly Piece[]): number {
 export const textOf = (pieces: readonly Piece[]): string =>
   pieces
     .map((piece) =>
-      piece.type === 'text' ? piece.text
-      : piece.type === 'symbol' ? piece.symbol
-      : piece.unit === '' ? piece.text
-      : `${piece.text} ${piece.unit}`,
+      piece.type === 'text'
+        ? piece.text
+        : piece.type === 'symbol'
+          ? piece.symbol
+          : piece.unit === ''
+            ? piece.text
+            : `${piece.text} ${piece.unit}`,
     )
     .join('');

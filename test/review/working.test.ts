@@ -6,7 +6,15 @@ import { workingOf } from '../../src/review';
 import { sheetOf, sheetOfLines } from '../engine/notation';
 import { stepOf, stepText, workingIn, workingOfLast } from './support';
 
-const INPUTS = ['C = -92.75 dBm', 'N = -117.01 dBm', 'L = -0.5 dB', 'd = 1839 km', 'v = 3e8 m/s', 'T = 15 °C', 'P | dBm = 0 W'].join('\n');
+const INPUTS = [
+  'C = -92.75 dBm',
+  'N = -117.01 dBm',
+  'L = -0.5 dB',
+  'd = 1839 km',
+  'v = 3e8 m/s',
+  'T = 15 °C',
+  'P | dBm = 0 W',
+].join('\n');
 const shown = (entry: string): ReturnType<typeof workingOfLast> => workingOfLast(`${INPUTS}\nx = ${entry}`);
 
 describe('with values', () => {
@@ -124,7 +132,9 @@ describe('the result', () => {
 
 describe('what it rests on', () => {
   it('is every symbol once, lines with their labels and constants with their texts', () => {
-    const { terms, shares } = workingOfLast('G = 3 dB # Gain\nT = 290 K # Noise\nx | dB/K = G - db(T) + db(T) - db(T_0)');
+    const { terms, shares } = workingOfLast(
+      'G = 3 dB # Gain\nT = 290 K # Noise\nx | dB/K = G - db(T) + db(T) - db(T_0)',
+    );
     expect(shares).toBe(false);
     expect(terms).toEqual([
       { symbol: 'G', label: 'Gain', text: '3.00', unit: 'dB', lineId: 'l0' },
@@ -166,8 +176,22 @@ describe('cases', () => {
     const loop = workingIn(sheetOf('a = b + 1\nb = a + 1'), 'a');
     expect(loop.reading.figure).toEqual({ state: 'withheld', code: 'loop' });
     expect(loop.steps).toEqual([
-      { title: 'in symbols', pieces: [{ type: 'symbol', symbol: 'b', lineId: 'l1' }, { type: 'text', text: ' + ' }, { type: 'text', text: '1' }] },
-      { title: 'with values', pieces: [{ type: 'symbol', symbol: 'b', lineId: 'l1' }, { type: 'text', text: ' + ' }, { type: 'text', text: '1' }] },
+      {
+        title: 'in symbols',
+        pieces: [
+          { type: 'symbol', symbol: 'b', lineId: 'l1' },
+          { type: 'text', text: ' + ' },
+          { type: 'text', text: '1' },
+        ],
+      },
+      {
+        title: 'with values',
+        pieces: [
+          { type: 'symbol', symbol: 'b', lineId: 'l1' },
+          { type: 'text', text: ' + ' },
+          { type: 'text', text: '1' },
+        ],
+      },
     ]);
   });
 
@@ -179,7 +203,9 @@ describe('cases', () => {
 describe('remarks', () => {
   it('give the formula and source of each model, once', () => {
     const { remarks } = workingOfLast('d = 3 km\nf = 868 MHz\nx = free_space_loss(d, f) - free_space_loss(2*d, f)');
-    expect(remarks).toEqual(['free_space_loss: L = 20 log₁₀(4π·d·f/c) (ITU-R P.525, free-space basic transmission loss)']);
+    expect(remarks).toEqual([
+      'free_space_loss: L = 20 log₁₀(4π·d·f/c) (ITU-R P.525, free-space basic transmission loss)',
+    ]);
   });
 
   it('reach into what stands in other calls', () => {
