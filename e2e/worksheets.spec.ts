@@ -83,6 +83,24 @@ test('an earlier state is opened as a worksheet of its own', async ({ sheet }) =
   await expect(again.entries).toHaveCount(2);
 });
 
+test('what is opened from the list is ready to be typed in', async ({ sheet }) => {
+  const { account } = sheet;
+  await sheet.open();
+  await account.draft('P', 'Level', '-70 dBm');
+  await sheet.expectSaved();
+  const worksheets = await sheet.showWorksheets();
+  await worksheets.begin();
+  await expect(account.newLine()).toBeFocused();
+  await account.draft('Q', 'Another level', '-50 dBm');
+  await expect(account.figure('Q')).toHaveText('−50.00 dBm');
+  await sheet.expectSaved();
+
+  const again = await sheet.showWorksheets();
+  await again.dialog.getByRole('button', { name: /^Harbour buoy uplink/ }).click();
+  await expect(sheet.title).toHaveValue('Harbour buoy uplink');
+  await expect(account.cell('f', 'symbol')).toBeFocused();
+});
+
 for (const title of ['Harbour buoy uplink', 'Microwave hop between two ridges', 'Small satellite downlink']) {
   test(`the example “${title}” has no findings, meets its requirements, and is there after a reload`, async ({
     sheet,

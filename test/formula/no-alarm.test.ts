@@ -18,7 +18,12 @@ interface Part {
   readonly figureDb: number;
 }
 
-const signed = (sign: '+' | '-', figure: number): number => (sign === '+' ? figure : -figure);
+/** A part as drawn; `name` is the line that it needs, its symbol the first letter. */
+interface Drawn {
+  readonly text: string;
+  readonly figureDb: number;
+  readonly name?: string;
+}
 
 /** Losses, some of which have the figures of well-known constants. */
 const losses = fc.oneof(
@@ -33,7 +38,7 @@ const losses = fc.oneof(
 const parts: fc.Arbitrary<readonly Part[]> = fc
   .array(
     fc.oneof(
-      losses.map((loss): Omit<Part, 'lines'> & { name?: string } => ({ text: `- ${loss} dB`, figureDb: -loss })),
+      losses.map((loss): Drawn => ({ text: `- ${loss} dB`, figureDb: -loss })),
       tenths(0, 80).map((gain) => ({ text: `+ ${gain} dBi`, figureDb: gain })),
       tenths(0, 80).map((gain) => ({ text: `+ ${gain} dB`, figureDb: gain })),
       tenths(0, 20).map((loss) => ({ text: `- 2*${loss} dB`, figureDb: -2 * loss })),
@@ -50,7 +55,7 @@ const parts: fc.Arbitrary<readonly Part[]> = fc
     { minLength: 1, maxLength: 5 },
   )
   .map((drawn) =>
-    drawn.map(({ text, figureDb, name }, at) => {
+    drawn.map(({ text, figureDb, name }: Drawn, at): Part => {
       const symbol = name?.[0];
       return symbol === undefined || name === undefined
         ? { text, figureDb, lines: '' }
