@@ -9,6 +9,7 @@ import { WorksheetPage } from './pages/worksheet-page';
 import { draftBudget } from './quarry-budget';
 
 profileTest('a budget from an empty worksheet to a colleague’s screen', async ({ startAgain, browser }, testInfo) => {
+  profileTest.slow();
   const sheet = await startAgain();
   const { account } = sheet;
   const errors = watchForErrors(sheet.page);

@@ -5,6 +5,7 @@
 import { FREQUENCY, isDimensionless, LENGTH, raiseDimension, sameDimension, type Unit } from '../quantity';
 import type { Repair } from '../findings';
 import type { Context } from './context';
+import { isLevel } from './net';
 import { withReplacedTerms, type Grouped } from './repairs';
 import type { Tree } from './tree';
 import type { SumTerm } from './types';
@@ -228,9 +229,17 @@ function handStep(terms: readonly SumTerm[], constant: SumTerm, offsetDb: number
 const isFigure = ({ isNumber, plan, tree }: SumTerm): boolean =>
   plan.op === 'constant' && (isNumber || (tree.type === 'literal' && tree.unit?.word === 'dB'));
 
-/** True when one of the numbers is a noise density's or the Boltzmann constant's: it hides a unit whatever the result. */
+/**
+ * True when a bare number hides a noise density, the Boltzmann constant or an impedance although the result has a unit of its
+ * own: nothing in the sum is a level, or 174 is added to a level less a bandwidth. A loss of 114 dB is a loss of 114 dB.
+ */
 export function hidesBoltzmann(terms: readonly SumTerm[]): boolean {
-  return hiddenConstant(terms)?.known?.write !== undefined;
+  const hidden = hiddenConstant(terms);
+  if (hidden?.known?.write === undefined || !hidden.term.isNumber) return false;
+  const isTakenOff =
+    hidden.figure > 0 &&
+    terms.some(({ coefficient, type }) => coefficient < 0 && sameDimension(type.dimension, FREQUENCY));
+  return isTakenOff || !terms.some(isLevel);
 }
 
 /** c + 20 log f + 20 log d is free_space_loss(d, f), whatever the constant. */

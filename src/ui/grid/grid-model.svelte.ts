@@ -42,6 +42,10 @@ export class GridModel {
   editing = $state.raw<Editing | null>(null);
   /** The row whose menu is open, or null. */
   menuRow = $state<string | null>(null);
+  /** The case whose menu is open, and the element beside which it is; or null. */
+  caseMenu = $state.raw<{ readonly caseId: string; readonly anchor: HTMLElement } | null>(null);
+  /** The case whose name is being typed, or null. */
+  renamingCase = $state<string | null>(null);
   /** The line whose unit is being chosen, and the element beside which that happens; or null. */
   unitMenu = $state.raw<{ readonly lineId: string; readonly anchor: HTMLElement } | null>(null);
   /** The cell where a run of Tab began, or null: Enter goes back below it. */
