@@ -93,11 +93,11 @@ function termsThatGive(
       term.overReference !== undefined && levels.includes(term) ? { ...term, type: term.overReference } : term,
     ),
   );
-  const right = readings.filter((reading) => {
+  return readings.find((reading) => {
     const total = reading.reduce((sum, term) => sum + term.coefficient * termDb(term, figures), 0);
-    return total === resultDb || Math.abs(total - resultDb) < 1e-6;
+    const isSame = total === resultDb || Math.abs(total - resultDb) < 1e-6;
+    return isSame && sameDimension(totalDimension(reading), dimension);
   });
-  return right.find((reading) => sameDimension(totalDimension(reading), dimension)) ?? right[0];
 }
 
 const totalDimension = (terms: readonly SumTerm[]): Dimension =>

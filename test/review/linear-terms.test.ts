@@ -62,6 +62,8 @@ describe('sums of decibels are products', () => {
     ['P = 25 mW\nL = 3 dB\nx | dBm = 10*log10(P/(1 mW)) - L', '25 mW ÷ 1.995'],
     ['N = -174 dBm/Hz\nB = 125 kHz\nx | dBm = N + 10*log10(B/(1 Hz)) + 3 dB', '3.981 zW/Hz × 125 kHz × 1.995'],
     ['V = 2 mV\nx | dBµV = 20*log10(V/(1 uV)) + 6 dB', '2 mV × 1.995'],
+    // A bare reference that is nowhere in the line's unit: the product gives the figure, if not the unit.
+    ['B = 125 kHz\nx | dB = 10*log10(B/(1 Hz)) - 3 dB', '125000 ÷ 1.995'],
     ['P = 3 dBm\nx = P + 0 dB', '1.995 mW × 1'],
   ])('%j is %s', (text, step) => {
     const working = workingOfLast(text);
