@@ -1,11 +1,11 @@
 /** What a worksheet must hold beyond the shape of its parts: ids that name one thing each. */
-import { isLinesSection, type Worksheet } from '../worksheet';
+import { isChainSection, isLinesSection, type Worksheet } from '../worksheet';
 import type { FileFault } from './file-fault';
 import { REFUSED_KEYS } from './json-text';
 
 /** The first fault of a worksheet whose shape is right, or undefined. */
 export function checkDocument(worksheet: Worksheet): FileFault | undefined {
-  return checkCases(worksheet) ?? checkSections(worksheet) ?? checkLines(worksheet);
+  return checkCases(worksheet) ?? checkSections(worksheet) ?? checkLines(worksheet) ?? checkStages(worksheet);
 }
 
 function checkCases({ cases }: Worksheet): FileFault | undefined {
@@ -28,14 +28,25 @@ function checkSections({ sections }: Worksheet): FileFault | undefined {
 /** Lines of pools share their ids with all other lines. */
 function checkLines({ sections }: Worksheet): FileFault | undefined {
   return firstRepeated(
-    sections.flatMap((section, i) => {
-      const lines = isLinesSection(section) ? section.lines : section.kind === 'pool' ? section.content['lines'] : [];
-      return (lines as readonly { readonly id: string }[]).map((line, j) => ({
+    sections.flatMap((section, i) =>
+      (isLinesSection(section) ? section.lines : []).map((line, j) => ({
         id: line.id,
         path: `sections[${String(i)}].lines[${String(j)}].id`,
-      }));
-    }),
+      })),
+    ),
   );
+}
+
+/** Stages have ids of their own within their chain. */
+function checkStages({ sections }: Worksheet): FileFault | undefined {
+  for (const [i, section] of sections.entries()) {
+    if (!isChainSection(section)) continue;
+    const fault = firstRepeated(
+      section.stages.map(({ id }, j) => ({ id, path: `sections[${String(i)}].stages[${String(j)}].id` })),
+    );
+    if (fault !== undefined) return fault;
+  }
+  return undefined;
 }
 
 function firstRepeated(ids: readonly { readonly id: string; readonly path: string }[]): FileFault | undefined {

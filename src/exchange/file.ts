@@ -4,7 +4,7 @@
  * Holds: no text makes this throw or hang; unknown keys and sections of other kinds come through untouched.
  */
 import { fail, ok, type Result } from '../base';
-import { allLines, isLinesSection, type Worksheet } from '../worksheet';
+import { allLines, isChainSection, isOtherSection, type Worksheet } from '../worksheet';
 import { checkDocument } from './document-checks';
 import type { FileFault } from './file-fault';
 import { checkJsonText } from './json-text';
@@ -82,13 +82,14 @@ function readLater(document: Readonly<Record<string, unknown>>, version: number)
 function messagesOn(worksheet: Worksheet): string[] {
   const known = new Set(worksheet.cases.map((one) => one.id));
   const unknown = new Map<string, number>();
-  for (const line of allLines(worksheet))
-    for (const id of Object.keys(line.byCase ?? {})) if (!known.has(id)) unknown.set(id, (unknown.get(id) ?? 0) + 1);
+  const stages = worksheet.sections.flatMap((section) => (isChainSection(section) ? section.stages : []));
+  for (const { byCase } of [...allLines(worksheet), ...stages])
+    for (const id of Object.keys(byCase ?? {})) if (!known.has(id)) unknown.set(id, (unknown.get(id) ?? 0) + 1);
   const messages = [...unknown].map(([id, count]) => {
     const what = count === 1 ? 'One line has an entry' : `${String(count)} lines have entries`;
     return `${what} for the case “${id}”, which this worksheet does not have; kept and not used.`;
   });
-  const others = worksheet.sections.filter((section) => !isLinesSection(section));
+  const others = worksheet.sections.filter(isOtherSection);
   if (others.length > 0) {
     const names = others.map((section) => `“${section.title === '' ? section.id : section.title}” (${section.kind})`);
     messages.push(`Sections that cannot be evaluated here are kept as they are: ${names.join(', ')}.`);

@@ -6,7 +6,14 @@
 import * as v from 'valibot';
 
 import { QUANTITY_KINDS, SIDES } from '../quantity';
-import { TEXT_LIMIT, type Requirement } from '../worksheet';
+import {
+  CHAIN_INPUTS,
+  INTERCEPT_ADDITIONS,
+  INTERPOLATIONS,
+  STAGE_FIELDS,
+  TEXT_LIMIT,
+  type Requirement,
+} from '../worksheet';
 
 const listed = (names: readonly string[]): string => `one of ${names.join(', ')}`;
 const withinLimit = (text: string): boolean => text.length <= TEXT_LIMIT || Array.from(text).length <= TEXT_LIMIT;
@@ -16,6 +23,7 @@ const isObject = (value: unknown): value is Record<string, unknown> =>
 const text = v.pipe(v.string('text'), v.check(withinLimit, `text of at most ${String(TEXT_LIMIT)} characters`));
 const id = v.pipe(v.string('an id'), v.nonEmpty('an id that is not empty'), v.check(withinLimit, 'a shorter id'));
 const optionalText = v.exactOptional(text);
+const optionalTruth = v.exactOptional(v.boolean('true or false'));
 const object = v.custom<Record<string, unknown>>(isObject, 'an object');
 const texts = v.pipe(object, v.record(v.string(), text));
 const list = <Item extends v.GenericSchema>(item: Item): v.ArraySchema<Item, string> => v.array(item, 'a list');
@@ -58,6 +66,7 @@ export const lineSchema = v.looseObject(
     quantity,
     side: v.exactOptional(v.picklist(SIDES, listed(SIDES))),
     byCase: v.exactOptional(texts),
+    off: optionalTruth,
     digits: v.exactOptional(
       v.pipe(
         v.number('a number'),
@@ -81,41 +90,40 @@ const symbol = { symbol: text };
 
 const linesSection = v.looseObject({ ...head, lines: list(lineSchema) }, 'an object');
 
-const stageFigures = {
-  gain: optionalText,
-  noiseFigure: optionalText,
-  outputIntercept: optionalText,
-  inputIntercept: optionalText,
-  outputCompression: optionalText,
-  inputCompression: optionalText,
-  temperature: optionalText,
-};
+const stageFigures = v.entriesFromList(STAGE_FIELDS, optionalText);
+const accepted = list(v.looseObject({ code: text, entry: text, reason: text }, 'an object'));
 
 const stage = v.looseObject(
   {
     id,
     symbol: text,
     label: text,
+    off: optionalTruth,
     ...stageFigures,
     byCase: v.exactOptional(v.pipe(object, v.record(v.string(), v.pipe(object, v.looseObject(stageFigures))))),
     tolerance: v.exactOptional(v.pipe(object, v.record(v.string(), tolerance))),
+    source: optionalText,
+    note: optionalText,
+    accepted: v.exactOptional(v.pipe(object, v.record(v.string(), accepted))),
   },
   'an object',
 );
 
-const INTERCEPTS = ['coherent', 'power'] as const;
-
 const chain = v.looseObject({
   ...head,
   ...symbol,
-  signal: optionalText,
-  noise: optionalText,
-  bandwidth: optionalText,
-  intercept: v.exactOptional(v.picklist(INTERCEPTS, listed(INTERCEPTS))),
+  ...v.entriesFromList(CHAIN_INPUTS, optionalText),
+  intercept: v.exactOptional(v.picklist(INTERCEPT_ADDITIONS, listed(INTERCEPT_ADDITIONS))),
   stages: list(stage),
 });
 
-const pool = v.looseObject({ ...head, ...symbol, unit: optionalText, lines: list(lineSchema) });
+const pool = v.looseObject({
+  ...head,
+  ...symbol,
+  unit: optionalText,
+  requirement: v.exactOptional(requirement),
+  lines: list(lineSchema),
+});
 
 const axis = { label: text, unit: text };
 const curve = v.looseObject({
@@ -123,6 +131,8 @@ const curve = v.looseObject({
   ...symbol,
   x: v.looseObject(axis, 'an object'),
   y: v.looseObject({ ...axis, quantity }, 'an object'),
+  interpolation: v.exactOptional(v.picklist(INTERPOLATIONS, listed(INTERPOLATIONS))),
+  logarithmic: optionalTruth,
   points: list(v.custom<readonly [number, number]>(isPair, 'a pair of numbers')),
 });
 

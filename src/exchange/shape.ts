@@ -5,7 +5,7 @@
 import * as v from 'valibot';
 
 import { fail, ok, type Result } from '../base';
-import { LINES_LIMIT, type LinesSection, type OtherSection, type Section, type Worksheet } from '../worksheet';
+import { LINES_LIMIT, type OtherSection, type Section, type Worksheet } from '../worksheet';
 import type { FileFault } from './file-fault';
 import { pathText } from './json-text';
 import { sectionSchemas, unknownSectionSchema, worksheetSchema } from './schema';
@@ -27,29 +27,15 @@ export function readShape(content: unknown): Result<Worksheet, FileFault> {
 
 function readSection(data: Readonly<Record<string, unknown>>, index: number): Result<Section, FileFault> {
   const path = ['sections', index];
-  if (data['kind'] === 'lines') {
-    const section = read(sectionSchemas.lines, data, path);
-    return section.ok ? ok(section.value as LinesSection) : section;
+  const kind = data['kind'];
+  if (typeof kind === 'string' && Object.hasOwn(sectionSchemas, kind)) {
+    const section = read<v.GenericSchema>(sectionSchemas[kind as keyof typeof sectionSchemas], data, path);
+    return section.ok ? ok(section.value as Section) : section;
   }
-  const section = read(schemaOf(data['kind']), data, path);
+  const section = read(unknownSectionSchema, data, path);
   if (!section.ok) return section;
-  const { id, kind, title } = section.value;
-  return ok<OtherSection>({ id, kind, title, content: data });
-}
-
-type SectionHead = Pick<OtherSection, 'id' | 'kind' | 'title'>;
-
-function schemaOf(kind: unknown): v.GenericSchema<unknown, SectionHead> {
-  switch (kind) {
-    case 'chain':
-      return sectionSchemas.chain;
-    case 'pool':
-      return sectionSchemas.pool;
-    case 'curve':
-      return sectionSchemas.curve;
-    default:
-      return unknownSectionSchema;
-  }
+  const { id, title } = section.value;
+  return ok<OtherSection>({ id, kind: section.value.kind, title, content: data });
 }
 
 /** How many lines or stages a section holds. */

@@ -6,12 +6,17 @@
 import {
   CASE_KEYS,
   inOrder,
+  isChainSection,
   isLinesSection,
+  isOtherSection,
   LINE_KEYS,
-  SECTION_KEYS,
+  sectionKeys,
+  STAGE_FIELDS,
+  STAGE_KEYS,
   WORKSHEET_KEYS,
   type Line,
   type Section,
+  type Stage,
   type Worksheet,
 } from '../worksheet';
 import { FORMAT } from './file';
@@ -36,8 +41,24 @@ export function writeWorksheetFile(worksheet: Worksheet): string {
 }
 
 function sectionContent(section: Section): object {
-  if (!isLinesSection(section)) return section.content;
-  return { ...inOrder(section, SECTION_KEYS), lines: section.lines.map(lineContent) };
+  if (isOtherSection(section)) return section.content;
+  const ordered = inOrder(section, sectionKeys(section));
+  if (isLinesSection(section)) return { ...ordered, lines: section.lines.map(lineContent) };
+  return isChainSection(section) ? { ...ordered, stages: section.stages.map(stageContent) } : ordered;
+}
+
+function stageContent(stage: Stage): object {
+  const { byCase, tolerance, accepted } = stage;
+  const each = <T extends object>(record: Readonly<Record<string, T>>, map: (value: T) => object): object =>
+    Object.fromEntries(Object.entries(record).map(([key, value]) => [key, map(value)]));
+  return {
+    ...inOrder(stage, STAGE_KEYS),
+    ...(byCase && { byCase: each(byCase, (values) => inOrder(values, STAGE_FIELDS)) }),
+    ...(tolerance && { tolerance: each(tolerance, (one) => inOrder(one, TOLERANCE_KEYS)) }),
+    ...(accepted && {
+      accepted: each(accepted, (list) => list.map((one) => inOrder(one, ACCEPTED_KEYS))),
+    }),
+  };
 }
 
 function lineContent(line: Line): object {

@@ -3,7 +3,9 @@
  * Holds: applying a change and then its inverse gives back an equal document with its keys in the same order; whatever a
  * change does not concern keeps its identity. A change that does not fit its document is a broken program.
  */
-import type { Case, Line, Section, Worksheet } from './document';
+import type { ChainSection } from './chain';
+import type { CurveSection } from './curve';
+import type { Case, Line, PoolSection, Section, Worksheet } from './document';
 import { Draft } from './draft';
 
 /** A field of a line that a change may set. */
@@ -22,6 +24,24 @@ type SetLineField = {
 /** Sets one field of a line. */
 export type SetLine = SetLineField[LineField];
 
+/** The fields of sections that a change may set; lists of stages and points are set as a whole. */
+type SectionFields = { readonly title: string; readonly symbol: string } & Pick<PoolSection, 'unit' | 'requirement'> &
+  Omit<ChainSection, 'id' | 'kind' | 'title' | 'symbol'> &
+  Omit<CurveSection, 'id' | 'kind' | 'title' | 'symbol'>;
+
+export type SectionField = keyof SectionFields;
+
+/** Sets one field of a section, which must be of a kind that has it. */
+export type SetSection = {
+  [Field in SectionField]-?: {
+    readonly kind: 'set-section';
+    readonly sectionId: string;
+    readonly field: Field;
+    /** Absent or undefined: the field is taken away. */
+    readonly value?: SectionFields[Field] | undefined;
+  };
+}[SectionField];
+
 /** Sets one field of the worksheet itself. */
 export type SetWorksheet =
   | { readonly kind: 'set-worksheet'; readonly field: 'title'; readonly value: string }
@@ -37,7 +57,7 @@ export type Change =
   | { readonly kind: 'insert-section'; readonly index: number; readonly section: Section }
   | { readonly kind: 'remove-section'; readonly sectionId: string }
   | { readonly kind: 'move-section'; readonly sectionId: string; readonly index: number }
-  | { readonly kind: 'set-section'; readonly sectionId: string; readonly field: 'title'; readonly value: string }
+  | SetSection
   | { readonly kind: 'insert-case'; readonly index: number; readonly case: Case }
   | { readonly kind: 'remove-case'; readonly caseId: string }
   | { readonly kind: 'move-case'; readonly caseId: string; readonly index: number }

@@ -4,6 +4,8 @@
  * Objects may carry further keys that a later version wrote; copies made by spreading keep them.
  */
 import type { QuantityKind, Side } from '../quantity';
+import type { ChainSection } from './chain';
+import type { CurveSection } from './curve';
 
 /** A column of values: each case may override any entry. */
 export interface Case {
@@ -53,6 +55,8 @@ export interface Line {
   readonly side?: Side;
   /** Entries that stand in place of `entry` in the named cases, by case id. */
   readonly byCase?: Readonly<Record<string, string>>;
+  /** True: a contribution that its pool leaves out for now. */
+  readonly off?: boolean;
   /** Digits shown after the point (decibel figures) or significant figures (linear); absent: 2 and 4. */
   readonly digits?: number;
   readonly tolerance?: Tolerance;
@@ -64,14 +68,30 @@ export interface Line {
 }
 
 /** A titled group of lines. */
-export interface LinesSection {
+export interface PlainSection {
   readonly id: string;
   readonly kind: 'lines';
   readonly title: string;
   readonly lines: readonly Line[];
 }
 
-/** A section of a kind that this version does not evaluate: kept word for word, shown as such. */
+/** A group of lines that add as powers (ratios: by their reciprocals); its symbol stands for their total. */
+export interface PoolSection {
+  readonly id: string;
+  readonly kind: 'pool';
+  readonly symbol: string;
+  readonly title: string;
+  /** The unit of the total; absent: that of the lines. */
+  readonly unit?: string;
+  /** A bound on the total. */
+  readonly requirement?: Requirement;
+  readonly lines: readonly Line[];
+}
+
+/** A section that holds lines. */
+export type LinesSection = PlainSection | PoolSection;
+
+/** A section of a kind that this version does not know: kept word for word, shown as such. */
 export interface OtherSection {
   readonly id: string;
   readonly kind: string & {};
@@ -80,11 +100,30 @@ export interface OtherSection {
   readonly content: Readonly<Record<string, unknown>>;
 }
 
-export type Section = LinesSection | OtherSection;
+export type Section = LinesSection | ChainSection | CurveSection | OtherSection;
 
-/** True for sections whose lines are evaluated. */
+const isKnown = (section: Section, kind: string): boolean => section.kind === kind && !('content' in section);
+
+/** True for sections that hold lines: plain ones and pools. */
 export function isLinesSection(section: Section): section is LinesSection {
-  return section.kind === 'lines';
+  return isKnown(section, 'lines') || isKnown(section, 'pool');
+}
+
+export function isPoolSection(section: Section): section is PoolSection {
+  return isKnown(section, 'pool');
+}
+
+export function isChainSection(section: Section): section is ChainSection {
+  return isKnown(section, 'chain');
+}
+
+export function isCurveSection(section: Section): section is CurveSection {
+  return isKnown(section, 'curve');
+}
+
+/** True for sections of kinds that this version does not know. */
+export function isOtherSection(section: Section): section is OtherSection {
+  return 'content' in section;
 }
 
 /** One budget: sections of lines, and its cases (at least one). */

@@ -4,9 +4,17 @@
  * Holds: nothing that the draft was given, and nothing that it returned in an inverse, is ever written to.
  */
 import { assert, present, unreachable } from '../base';
-import type { Change, LineField, SetLine } from './changes';
-import { isLinesSection, type Case, type Line, type LinesSection, type Section, type Worksheet } from './document';
-import { CASE_KEYS, LINE_KEYS, WORKSHEET_KEYS, withKey } from './keys';
+import type { Change, LineField, SetLine, SetSection } from './changes';
+import {
+  isLinesSection,
+  isOtherSection,
+  type Case,
+  type Line,
+  type LinesSection,
+  type Section,
+  type Worksheet,
+} from './document';
+import { CASE_KEYS, LINE_KEYS, sectionKeys, WORKSHEET_KEYS, withKey } from './keys';
 import { handOnIndex, placeOfLine } from './line-index';
 
 const NEEDED: ReadonlySet<LineField> = new Set(['symbol', 'label', 'entry']);
@@ -71,9 +79,14 @@ export class Draft {
       }
       case 'set-section': {
         const index = this.#sectionIndex(change.sectionId);
-        const section = this.#linesSectionAt(index);
-        if (section.title !== change.value) this.#openSections()[index] = { ...section, title: change.value };
-        return { ...change, value: section.title };
+        const section = present(this.#nowSections()[index], 'the section to set');
+        assert(!isOtherSection(section), `the section ${section.id} is of a kind whose content is kept word for word`);
+        assert(sectionKeys(section).includes(change.field), `a ${section.kind} section has the field ${change.field}`);
+        const fields: Readonly<Record<string, unknown>> = { ...section };
+        const after = withKey(fields, change.field, change.value, sectionKeys(section));
+        // The field belongs to the section's kind, and its value has that field's type.
+        if (after !== fields) this.#openSections()[index] = after as unknown as Section;
+        return { ...change, value: fields[change.field] } as SetSection;
       }
       case 'insert-case':
         assert(!this.#worksheet.cases.some((one) => one.id === change.case.id), `the case ${change.case.id} is new`);
@@ -186,7 +199,7 @@ export class Draft {
 
   #linesSectionAt(index: number): LinesSection {
     const section = present(this.#nowSections()[index], 'the section');
-    assert(isLinesSection(section), `the section ${section.id} is of a kind whose content is kept word for word`);
+    assert(isLinesSection(section), `the section ${section.id} holds lines`);
     return section;
   }
 

@@ -5,8 +5,11 @@
  */
 import { assert } from '../base';
 import type { Change } from './changes';
-import type { Line, Worksheet } from './document';
+import type { Stage } from './chain';
+import { isChainSection, type Line, type Worksheet } from './document';
 import { changesBetween, type Edit, type Focus } from './edit';
+import { chainChanges } from './edit-symbols';
+import { STAGE_KEYS, withKey } from './keys';
 import { withCurrentAcceptances, withOverride } from './edit-fields';
 import { allLines, caseOf, overrideIn } from './lookup';
 
@@ -20,10 +23,14 @@ export function addCase(worksheet: Worksheet, name: string, copyFrom?: string): 
     const entry = source === undefined ? undefined : overrideIn(line, source);
     return entry === undefined ? [] : changesBetween(line, withOverride(worksheet, line, id, entry));
   });
+  const ofStages = stageChanges(worksheet, (byCase) => {
+    const values = source === undefined ? undefined : ownValue(byCase, source);
+    return values === undefined ? byCase : { ...byCase, [id]: values };
+  });
   const last = worksheet.cases[worksheet.cases.length - 1];
   return {
     label: `Add case ${name}`,
-    changes: [{ kind: 'insert-case', index: worksheet.cases.length, case: { id, name } }, ...copied],
+    changes: [{ kind: 'insert-case', index: worksheet.cases.length, case: { id, name } }, ...copied, ...ofStages],
     focus: onCase(id),
     ...(last && { focusBefore: onCase(last.id) }),
   };
@@ -53,12 +60,35 @@ export function removeCase(worksheet: Worksheet, caseId: string): Edit {
       ...allLines(worksheet).flatMap((line) =>
         overrideIn(line, caseId) === undefined ? [] : changesBetween(line, without(line)),
       ),
+      ...stageChanges(worksheet, (byCase) =>
+        ownValue(byCase, caseId) === undefined
+          ? byCase
+          : Object.fromEntries(Object.entries(byCase).filter(([key]) => key !== caseId)),
+      ),
       ...withoutRecorded(worksheet, caseId),
       { kind: 'remove-case', caseId },
     ],
     ...(next && { focus: onCase(next.id) }),
     focusBefore: onCase(caseId),
   };
+}
+
+type ByCase = NonNullable<Stage['byCase']>;
+
+const ownValue = (byCase: ByCase, caseId: string): ByCase[string] | undefined =>
+  Object.hasOwn(byCase, caseId) ? byCase[caseId] : undefined;
+
+/** The changes that give every stage the entries of single cases that `map` makes of those it has. */
+function stageChanges(worksheet: Worksheet, map: (byCase: ByCase) => ByCase): Change[] {
+  return worksheet.sections.filter(isChainSection).flatMap((chain) => {
+    const stages = chain.stages.map((stage) => {
+      if (stage.byCase === undefined) return stage;
+      const mapped = map(stage.byCase);
+      if (mapped === stage.byCase) return stage;
+      return withKey(stage, 'byCase', Object.keys(mapped).length === 0 ? undefined : mapped, STAGE_KEYS);
+    });
+    return chainChanges(chain, stages.some((stage, i) => stage !== chain.stages[i]) ? { ...chain, stages } : chain);
+  });
 }
 
 function withoutRecorded(worksheet: Worksheet, caseId: string): Change[] {
@@ -90,7 +120,11 @@ export function moveCase(worksheet: Worksheet, caseId: string, direction: 'left'
 /** An id of small letters, digits and hyphens made from the name, that no case has and no line knows. */
 function freeCaseId(worksheet: Worksheet, name: string): string {
   const used = new Set(worksheet.cases.map((one) => one.id));
-  for (const line of allLines(worksheet)) for (const id of Object.keys(line.byCase ?? {})) used.add(id);
+  for (const { byCase = {} } of [
+    ...allLines(worksheet),
+    ...worksheet.sections.filter(isChainSection).flatMap(({ stages }) => stages),
+  ])
+    for (const id of Object.keys(byCase)) used.add(id);
   const plain = name.normalize('NFKD').replace(/\p{M}/gu, '').toLowerCase();
   const words = plain.match(/[a-z0-9]+/g) ?? [];
   const stem = (/^[a-z]/.test(words[0] ?? '') ? words : ['case', ...words]).join('-');

@@ -20,6 +20,7 @@ const FIELD_NAMES: Readonly<Record<PlainField, string>> = {
   unit: 'unit',
   quantity: 'quantity kind',
   side: 'side',
+  off: 'switch',
   digits: 'digits',
   tolerance: 'tolerance',
   requirement: 'requirement',

@@ -1,31 +1,36 @@
 /** Edits of sections, and of the worksheet's own texts. */
 import type { Change } from './changes';
-import type { Section, Worksheet } from './document';
+import { isOtherSection, type Section, type Worksheet } from './document';
 import type { Edit, Focus } from './edit';
-import { linesSectionOf, sectionOf } from './lookup';
+import { sectionOf } from './lookup';
 import { newSection } from './new';
 
 const onSection = (sectionId: string): Focus => ({ kind: 'section', sectionId });
 
 const sectionName = (section: Section): string => (section.title === '' ? 'section' : `section “${section.title}”`);
 
-/** Inserts an empty section of lines before the section that now has this index, or at the end. */
-export function insertSection(worksheet: Worksheet, index: number, title = ''): Edit {
-  const section = newSection(title);
+/** Inserts an empty section of lines, or the one given, before the section that now has this index, or at the end. */
+export function insertSection(worksheet: Worksheet, index: number, section: Section | string = ''): Edit {
+  return sectionInsertion(worksheet, index, typeof section === 'string' ? newSection(section) : section);
+}
+
+function sectionInsertion(worksheet: Worksheet, index: number, section: Section): Edit {
   const beside = worksheet.sections[index - 1] ?? worksheet.sections[0];
   return {
-    label: 'Insert section',
+    label: `Insert ${section.kind === 'lines' ? 'section' : section.kind}`,
     changes: [{ kind: 'insert-section', index, section }],
     focus: onSection(section.id),
     focusBefore: beside === undefined ? { kind: 'worksheet' } : onSection(beside.id),
   };
 }
 
-/** Gives a section of lines another title. */
+/** Gives a section another title; sections of kinds not known here keep theirs. */
 export function renameSection(worksheet: Worksheet, sectionId: string, title: string): Edit {
-  const section = linesSectionOf(worksheet, sectionId);
+  const section = sectionOf(worksheet, sectionId);
   const changes: Change[] =
-    section.title === title ? [] : [{ kind: 'set-section', sectionId, field: 'title', value: title }];
+    section.title === title || isOtherSection(section)
+      ? []
+      : [{ kind: 'set-section', sectionId, field: 'title', value: title }];
   return {
     label: `Rename ${sectionName(section)}`,
     changes,

@@ -3,10 +3,27 @@
  * Holds: known keys come first, in these orders; keys that this version does not know follow, in the order they were met.
  * Because every object keeps that order, taking a key away and setting it again gives back the same text.
  */
+import { CHAIN_INPUTS, STAGE_FIELDS } from './chain';
+import { isChainSection, isCurveSection, isPoolSection, type Section } from './document';
 
 export const WORKSHEET_KEYS = ['id', 'title', 'summary', 'cases', 'sections', 'recorded'] as const;
 export const CASE_KEYS = ['id', 'name'] as const;
-export const SECTION_KEYS = ['id', 'kind', 'title', 'lines'] as const;
+const SECTION_KEYS = ['id', 'kind', 'title', 'lines'] as const;
+const POOL_KEYS = ['id', 'kind', 'symbol', 'title', 'unit', 'requirement', 'lines'] as const;
+const CHAIN_KEYS = ['id', 'kind', 'symbol', 'title', ...CHAIN_INPUTS, 'intercept', 'stages'] as const;
+const CURVE_KEYS = ['id', 'kind', 'symbol', 'title', 'x', 'y', 'interpolation', 'logarithmic', 'points'] as const;
+export const STAGE_KEYS = [
+  'id',
+  'symbol',
+  'label',
+  'off',
+  ...STAGE_FIELDS,
+  'byCase',
+  'tolerance',
+  'source',
+  'note',
+  'accepted',
+] as const;
 export const LINE_KEYS = [
   'id',
   'symbol',
@@ -16,6 +33,7 @@ export const LINE_KEYS = [
   'quantity',
   'side',
   'byCase',
+  'off',
   'digits',
   'tolerance',
   'requirement',
@@ -24,6 +42,13 @@ export const LINE_KEYS = [
   'accepted',
   'signOff',
 ] as const;
+
+/** The keys of a section, by its kind. */
+export function sectionKeys(section: Section): readonly string[] {
+  if (isPoolSection(section)) return POOL_KEYS;
+  if (isChainSection(section)) return CHAIN_KEYS;
+  return isCurveSection(section) ? CURVE_KEYS : SECTION_KEYS;
+}
 
 /** The object with its known keys in the given order and the others after them; values are kept as they are. */
 export function inOrder<T extends object>(object: T, order: readonly string[]): T {

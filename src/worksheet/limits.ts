@@ -3,7 +3,7 @@
  * Holds: a worksheet that was read from a file, changed by edits without a problem, and written, can be read again.
  */
 import type { Change } from './changes';
-import { isLinesSection, type Section, type Worksheet } from './document';
+import { isChainSection, isLinesSection, isOtherSection, type Section, type Worksheet } from './document';
 import type { Edit } from './edit';
 
 /** Characters of one text field. */
@@ -26,11 +26,14 @@ export function editProblem(worksheet: Worksheet, edit: Edit): string | undefine
 
 function addedRows(change: Change): number {
   if (change.kind === 'insert-line') return 1;
+  if (change.kind === 'set-section' && change.field === 'stages') return change.value?.length ?? 0;
   return change.kind === 'insert-section' ? rowsOf(change.section) : 0;
 }
 
 function rowsOf(section: Section): number {
   if (isLinesSection(section)) return section.lines.length;
+  if (isChainSection(section)) return section.stages.length;
+  if (!isOtherSection(section)) return 0;
   const count = (rows: unknown): number => (Array.isArray(rows) ? rows.length : 0);
   return count(section.content['lines']) + count(section.content['stages']);
 }

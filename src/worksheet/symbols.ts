@@ -3,7 +3,7 @@
  * Holds: a symbol that `symbolProblem` accepts is read by the scanner as one symbol.
  */
 import type { Worksheet } from './document';
-import { isLinesSection } from './document';
+import { isLinesSection, isOtherSection } from './document';
 
 const SYMBOL = /^\p{L}[\p{L}\p{M}\p{N}_]*$/u;
 const SYMBOLS_IN_TEXT = /\p{L}[\p{L}\p{M}\p{N}_]*/gu;
@@ -29,44 +29,38 @@ export function symbolFault(symbol: string): string | undefined {
   return undefined;
 }
 
-/** Every symbol that is in use: of lines, and of sections of other kinds and their lines. */
+/** Every symbol that is in use: of lines, pools, chains and curves, and of sections of other kinds. */
 export function symbolsIn(worksheet: Worksheet): Set<string> {
   const symbols = new Set<string>();
-  const add = (holder: unknown): void => {
-    if (typeof holder !== 'object' || holder === null || !('symbol' in holder)) return;
-    if (typeof holder.symbol === 'string' && holder.symbol !== '') symbols.add(holder.symbol);
+  const add = (holder: object): void => {
+    if ('symbol' in holder && typeof holder.symbol === 'string' && holder.symbol !== '') symbols.add(holder.symbol);
   };
   for (const section of worksheet.sections) {
-    if (isLinesSection(section)) {
-      section.lines.forEach(add);
-      continue;
-    }
-    add(section.content);
-    const lines = section.content['lines'];
-    if (Array.isArray(lines)) lines.forEach(add);
+    add(isOtherSection(section) ? section.content : section);
+    if (isLinesSection(section)) section.lines.forEach(add);
   }
   return symbols;
 }
 
 /**
  * What speaks against giving the line this symbol, as a sentence for the user, or undefined.
- * Without `lineId` the symbol is meant for a new line.
+ * `id` is that of the line or section; without it the symbol is meant for a new one.
  */
-export function symbolProblem(worksheet: Worksheet, symbol: string, lineId?: string): string | undefined {
+export function symbolProblem(worksheet: Worksheet, symbol: string, id?: string): string | undefined {
   const fault = symbolFault(symbol);
   if (fault !== undefined) return fault;
-  return isTakenByAnother(worksheet, symbol, lineId)
+  return isTakenByAnother(worksheet, symbol, id)
     ? `Another line has the symbol ${symbol}; choose a free one.`
     : undefined;
 }
 
-/** True when a line or section other than the line named carries the symbol. */
-export function isTakenByAnother(worksheet: Worksheet, symbol: string, lineId?: string): boolean {
-  return worksheet.sections.some((section) =>
-    isLinesSection(section)
-      ? section.lines.some((line) => line.symbol === symbol && line.id !== lineId)
-      : symbolsIn({ ...worksheet, sections: [section] }).has(symbol),
-  );
+/** True when a line or section other than the one named carries the symbol. */
+export function isTakenByAnother(worksheet: Worksheet, symbol: string, id?: string): boolean {
+  return worksheet.sections.some((section) => {
+    const holder = isOtherSection(section) ? section.content : section;
+    if ('symbol' in holder && holder['symbol'] === symbol && section.id !== id) return true;
+    return isLinesSection(section) && section.lines.some((line) => line.symbol === symbol && line.id !== id);
+  });
 }
 
 /**

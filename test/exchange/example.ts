@@ -79,8 +79,8 @@ export const EXAMPLE = `{
       "xFolded": true
     },
     {
-      "kind": "chain",
       "id": "rx",
+      "kind": "chain",
       "symbol": "rx",
       "title": "Receiver",
       "signal": "P_ant",

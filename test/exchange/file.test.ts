@@ -61,20 +61,64 @@ describe('a good file', () => {
     expect(writeWorksheetFile(read(EXAMPLE).worksheet)).toBe(EXAMPLE);
   });
 
-  it('keeps sections of other kinds word for word', () => {
-    const chain = read(EXAMPLE).worksheet.sections[1];
-    expect(chain).toEqual({
-      id: 'rx',
-      kind: 'chain',
-      title: 'Receiver',
-      content: (exampleDocument()['sections'] as unknown[])[1],
+  it('gives chains, pools and curves with what they hold, and keeps sections of other kinds word for word', () => {
+    const [, chain, pool, curve, other] = read(EXAMPLE).worksheet.sections;
+    expect(chain).toEqual((exampleDocument()['sections'] as unknown[])[1]);
+    expect(pool).toMatchObject({ kind: 'pool', symbol: 'N_I', unit: 'dBm', lines: [{ symbol: 'I_1' }] });
+    expect(curve).toMatchObject({
+      kind: 'curve',
+      symbol: 'G_scan',
+      points: [
+        [0, 32],
+        [10, 31.6],
+      ],
+    });
+    expect(other).toEqual({
+      id: 'later',
+      kind: 'waterfall',
+      title: 'Not known yet',
+      content: (exampleDocument()['sections'] as unknown[])[4],
     });
   });
 
   it('tells of sections that are kept and not evaluated', () => {
     expect(read(EXAMPLE).messages).toEqual([
-      'Sections that cannot be evaluated here are kept as they are: “Receiver” (chain), “Noise and interference” (pool), “Gain over scan angle” (curve), “Not known yet” (waterfall).',
+      'Sections that cannot be evaluated here are kept as they are: “Not known yet” (waterfall).',
     ]);
+  });
+
+  it.each([
+    [
+      'a bypass that is neither true nor false',
+      ['sections', 1, 'stages', 0, 'off'],
+      'yes',
+      'sections[1].stages[0].off',
+    ],
+    [
+      'a value of a stage that is no text',
+      ['sections', 1, 'stages', 0, 'selectivity'],
+      3,
+      'sections[1].stages[0].selectivity',
+    ],
+    ['a way of adding that there is none of', ['sections', 1, 'intercept'], 'sometimes', 'sections[1].intercept'],
+    ['an interpolation that there is none of', ['sections', 3, 'interpolation'], 'wild', 'sections[3].interpolation'],
+    ['a point that is no pair', ['sections', 3, 'points', 0], [1], 'sections[3].points[0]'],
+    [
+      'a requirement with two bounds',
+      ['sections', 2, 'requirement'],
+      { atLeast: '1', atMost: '2' },
+      'sections[2].requirement',
+    ],
+  ])('refuses %s, with the place', (_what, path, value, place) => {
+    expect(faultOf(changed(path, value))).toMatchObject({ code: 'wrong-shape', path: place });
+  });
+
+  it('refuses two stages with one id', () => {
+    const stages = (exampleDocument()['sections'] as { stages: unknown[] }[])[1]?.stages ?? [];
+    expect(faultOf(changed(['sections', 1, 'stages'], [...stages, ...stages]))).toMatchObject({
+      code: 'id-given-twice',
+      path: 'sections[1].stages[1].id',
+    });
   });
 
   it('keeps entries for a case that it has not, and says so', () => {

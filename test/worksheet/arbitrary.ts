@@ -68,6 +68,104 @@ const line = (id: string, caseIds: readonly string[]): fc.Arbitrary<Line> =>
     })
     .map(({ more, ...fields }) => withoutUndefined({ id, ...fields, ...more }) as Line);
 
+const values = fc.dictionary(fc.constantFrom(...w.STAGE_FIELDS), text, { maxKeys: 4, noNullPrototype: true });
+
+const stage = (id: string, caseIds: readonly string[]): fc.Arbitrary<w.Stage> =>
+  fc
+    .record({
+      symbol: fc.constantFrom('lna', 'mix', 'pad', ''),
+      label: text,
+      off: maybe(fc.boolean()),
+      values,
+      byCase: maybe(
+        fc.dictionary(fc.constantFrom(...caseIds, 'elsewhere'), values, { minKeys: 1, noNullPrototype: true }),
+      ),
+      tolerance: maybe(
+        fc.dictionary(fc.constantFrom(...w.STAGE_FIELDS), tolerance, { minKeys: 1, noNullPrototype: true }),
+      ),
+      source: maybe(text),
+      note: maybe(text),
+      accepted: maybe(
+        fc.dictionary(
+          fc.constantFrom(...w.STAGE_FIELDS),
+          fc.array(fc.record({ code: text, entry: text, reason: text }), { minLength: 1, maxLength: 2 }),
+          { minKeys: 1, noNullPrototype: true },
+        ),
+      ),
+      more: unknown,
+    })
+    .map(({ symbol, label, off, values: own, more, ...rest }) =>
+      w.inOrder(withoutUndefined({ id, symbol, label, off, ...own, ...rest, ...more }) as w.Stage, w.STAGE_KEYS),
+    );
+
+const chain = (index: number, caseIds: readonly string[]): fc.Arbitrary<Section> =>
+  fc
+    .record({
+      title: text,
+      signal: maybe(text),
+      noise: maybe(text),
+      bandwidth: maybe(text),
+      interferer: maybe(text),
+      intercept: maybe(fc.constantFrom(...w.INTERCEPT_ADDITIONS)),
+      stages: fc.tuple(...['a', 'b', 'c'].map((id) => stage(id, caseIds))),
+      more: unknown,
+    })
+    .map(({ title, more, ...rest }) =>
+      withoutUndefined({
+        id: `s${String(index)}`,
+        kind: 'chain',
+        symbol: `rx${String(index)}`,
+        title,
+        ...rest,
+        ...more,
+      } as Section),
+    );
+
+const pool = (index: number, caseIds: readonly string[]): fc.Arbitrary<Section> =>
+  fc
+    .record({
+      title: text,
+      unit: maybe(text),
+      requirement: maybe(requirement),
+      lines: fc.tuple(...[0, 1].map((i) => line(`l${String(index)}-${String(i)}`, caseIds))),
+      more: unknown,
+    })
+    .map(({ title, more, ...rest }) =>
+      withoutUndefined({
+        id: `s${String(index)}`,
+        kind: 'pool',
+        symbol: `N_${String(index)}`,
+        title,
+        ...rest,
+        ...more,
+      } as Section),
+    );
+
+const curve = (index: number): fc.Arbitrary<Section> =>
+  fc
+    .record({
+      title: text,
+      interpolation: maybe(fc.constantFrom(...w.INTERPOLATIONS)),
+      logarithmic: maybe(fc.boolean()),
+      points: fc.array(fc.tuple(fc.integer(), fc.integer()), { maxLength: 3 }),
+      more: unknown,
+    })
+    .map(({ title, points, more, ...rest }) => {
+      const axis = { label: 'x', unit: 'deg' };
+      const symbol = `C_${String(index)}`;
+      return withoutUndefined({
+        id: `s${String(index)}`,
+        kind: 'curve',
+        symbol,
+        title,
+        x: axis,
+        y: axis,
+        ...rest,
+        points,
+        ...more,
+      } as Section);
+    });
+
 const section = (index: number, caseIds: readonly string[]): fc.Arbitrary<Section> =>
   fc.oneof(
     {
@@ -95,16 +193,18 @@ const section = (index: number, caseIds: readonly string[]): fc.Arbitrary<Sectio
       arbitrary: fc
         .record({
           title: text,
-          points: fc.array(fc.tuple(fc.integer(), fc.integer()), { maxLength: 3 }),
+          anything: fc.array(fc.tuple(fc.integer(), fc.integer()), { maxLength: 3 }),
           more: unknown,
         })
-        .map(({ title, points, more }) => {
+        .map(({ title, anything, more }) => {
           const id = `s${String(index)}`;
-          const axis = { label: 'x', unit: 'deg' };
-          const content = { symbol: `C_${String(index)}`, title, kind: 'curve', id, y: axis, x: axis, points, ...more };
-          return { id, kind: 'curve', title, content };
+          const content = { symbol: `C_${String(index)}`, title, kind: 'waterfall', id, anything, ...more };
+          return { id, kind: 'waterfall', title, content };
         }),
     },
+    { weight: 1, arbitrary: chain(index, caseIds) },
+    { weight: 1, arbitrary: pool(index, caseIds) },
+    { weight: 1, arbitrary: curve(index) },
   );
 
 /** Options of tests that try many documents: time for a machine with other work to do. */
@@ -209,6 +309,44 @@ export function editOf(worksheet: Worksheet, draw: EditDraw): Edit | undefined {
     () => w.moveLines(worksheet, some, direction),
     (id) => (place === undefined ? w.setEntry(worksheet, id, typed) : w.moveLinesTo(worksheet, some, place)),
   ];
+  const oneChain = pick(worksheet.sections.filter(w.isChainSection), a);
+  const oneStage = oneChain && pick(oneChain.stages, b);
+  if (oneChain !== undefined && oneStage !== undefined) {
+    const field = pick(w.STAGE_FIELDS, c) ?? 'gain';
+    const { id } = oneChain;
+    always.push(
+      () =>
+        w.insertStage(worksheet, id, c % 4, {
+          id: `new ${String(which)}${String(a)}${String(b)}`,
+          symbol: 'x',
+          label: typed,
+        }),
+      () => w.duplicateStage(worksheet, id, oneStage.id),
+      () => w.deleteStage(worksheet, id, oneStage.id),
+      () => w.moveStageTo(worksheet, id, oneStage.id, c % 4),
+      () => w.setStageOff(worksheet, id, oneStage.id, c % 2 === 0),
+      () => w.setStageValue(worksheet, id, oneStage.id, field, typed),
+      () => w.setStageValue(worksheet, id, oneStage.id, field, typed, caseId),
+      () => w.setStageText(worksheet, id, oneStage.id, 'source', typed),
+      () => w.setStageSymbol(worksheet, id, oneStage.id, typed),
+      () => w.setChainInput(worksheet, id, pick(w.CHAIN_INPUTS, c) ?? 'noise', typed),
+      () => w.setInterceptAddition(worksheet, id, c % 2 === 0 ? 'power' : 'coherent'),
+      () => w.setSectionSymbol(worksheet, id, typed),
+    );
+  }
+  const oneCurve = pick(worksheet.sections.filter(w.isCurveSection), a);
+  if (oneCurve !== undefined)
+    always.push(
+      () => w.setPoints(worksheet, oneCurve.id, [[a, b]]),
+      () => w.setCurveField(worksheet, oneCurve.id, 'interpolation', c % 2 === 0 ? 'monotone' : undefined),
+      () => w.setSectionSymbol(worksheet, oneCurve.id, typed),
+    );
+  const onePool = pick(worksheet.sections.filter(w.isPoolSection), a);
+  if (onePool !== undefined)
+    always.push(
+      () => w.setPoolField(worksheet, onePool.id, 'unit', c % 2 === 0 ? typed : undefined),
+      () => w.setPoolField(worksheet, onePool.id, 'requirement', c % 2 === 0 ? { atMost: typed } : undefined),
+    );
   const n = which % (always.length + onLine.length);
   const make =
     n < always.length ? always[n] : lineId === undefined ? undefined : () => onLine[n - always.length]?.(lineId);

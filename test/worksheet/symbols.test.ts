@@ -69,12 +69,13 @@ describe('symbols in use', () => {
           { id: 'm', symbol: '', label: '', entry: '' },
         ],
       },
-      { id: 'p', kind: 'pool', title: '', content: { symbol: 'N_I', lines: [{ id: 'q', symbol: 'I_1' }, null] } },
+      { id: 'p', kind: 'pool', symbol: 'N_I', title: '', lines: [{ id: 'q', symbol: 'I_1', label: '', entry: '' }] },
+      { id: 'o', kind: 'waterfall', title: '', content: { symbol: 'Z', lines: [null] } },
     ],
   };
 
   it('are those of lines, sections and the lines in these', () => {
-    expect([...symbolsIn(worksheet)].sort()).toEqual(['I_1', 'N_I', 'P_tx']);
+    expect([...symbolsIn(worksheet)].sort()).toEqual(['I_1', 'N_I', 'P_tx', 'Z']);
   });
 
   it('are refused to others, not to the line itself', () => {
