@@ -18,6 +18,8 @@ export function remarksOf(node: Node, figures: Figures, value?: number): readonl
   const late = [...own];
   if (barred?.code === 'duplicate-symbol')
     late.unshift({ code: 'duplicate-symbol', facts: { name: node.line.symbol, holder: barred.holder }, repairs: [] });
+  // A derived figure that is not there says so in its place; the entry at fault has the finding.
+  if (node.isDerived) return late;
   const figure = figureOfNode(node, figures, value);
   if (figure.state === 'waiting')
     late.push({ code: 'waiting', facts: { roots: figure.roots.join(', ') }, repairs: [] });

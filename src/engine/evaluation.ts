@@ -5,11 +5,12 @@
  */
 import { present } from '../base';
 import { checkLine, type Checked, type Scope, type SymbolInfo } from '../formula';
-import { isLinesSection, type Change, type Line, type Worksheet } from '../worksheet';
+import type { Change, Line, Worksheet } from '../worksheet';
 import { buildGraph, entryOf, inputsOf, nodeIn, type Graph } from './graph';
 import { describeRemark, remarksOf } from './describe';
 import { neighboursOf, reachOf, restsUpon } from './neighbours';
-import type { Node } from './node';
+import { itemsOf, type Item, type ItemPlace } from './item';
+import { Node } from './node';
 import type { Pass } from './pass';
 import { Figuring, settled } from './recompute';
 import { gatherFindings } from './gather';
@@ -31,13 +32,13 @@ export class Evaluation {
   private findingCache = new Map<string, readonly LineFinding[]>();
   private sheetCache: readonly LineFinding[] | undefined;
   private around = new Set<Node>();
-  private byId: Map<string, Line>;
+  private byId: Map<string, Item>;
   private edits = 0;
 
   constructor(worksheet: Worksheet) {
     this.current = worksheet;
     this.graph = buildGraph(worksheet, undefined, this.figuring.newSlot);
-    this.byId = new Map(this.graph.lines.map((line) => [line.id, line]));
+    this.byId = itemsById(this.graph);
     this.figuring.setOrder(this.graph.order);
     this.settleStale(this.graph.order, new Set(), true);
     this.figuring.run([]);
@@ -77,12 +78,15 @@ export class Evaluation {
     const before = this.byId.get(change.lineId);
     const nodes = this.graph.nodes.get(change.lineId);
     if (before === undefined || nodes === undefined) return undefined;
-    const line: Line = { ...before, [change.field]: change.value };
-    this.byId.set(line.id, line);
+    // Which lines a pool's total counts depends on them.
+    if (before.alias !== undefined && (change.field === 'off' || change.field === 'entry')) return undefined;
+    const line: Line = { ...before.line, [change.field]: change.value };
+    const item: Item = { ...before, line };
+    this.byId.set(line.id, item);
     const stale: Node[] = [];
     for (const node of nodes.values()) {
       const symbols = node.symbols;
-      node.take(line, entryOf(line, node.caseId));
+      node.take(item, entryOf(line, node.caseId));
       if (!node.isStale) continue;
       if (!sameSymbols(symbols, node.symbols)) return undefined;
       stale.push(node);
@@ -95,7 +99,7 @@ export class Evaluation {
   private rebuild(next: Worksheet): Pass {
     const before = this.graph;
     this.graph = buildGraph(next, before, this.figuring.newSlot);
-    this.byId = new Map(this.graph.lines.map((line) => [line.id, line]));
+    this.byId = itemsById(this.graph);
     const kept = new Set(this.graph.order);
     const dropped = before.order.filter((node) => !kept.has(node));
     for (const node of dropped) this.around.delete(node);
@@ -165,15 +169,15 @@ export class Evaluation {
 
   private scopeOf(caseId: string | null): Scope {
     const { graph } = this;
-    const infoOf = (line: Line): SymbolInfo | undefined => nodeIn(graph, line.id, caseId)?.info();
+    const infoOf = ({ line }: Item): SymbolInfo | undefined => nodeIn(graph, line.id, caseId)?.info();
     return {
       find: (symbol) => {
-        const line = graph.holders.get(symbol);
-        return line === undefined ? undefined : (infoOf(line) ?? 'withheld');
+        const item = graph.holders.get(symbol);
+        return item === undefined ? undefined : (infoOf(item) ?? 'withheld');
       },
       *all() {
-        for (const line of graph.holders.values()) {
-          const info = infoOf(line);
+        for (const item of graph.holders.values()) {
+          const info = item.origin === undefined ? infoOf(item) : undefined;
           if (info !== undefined) yield info;
         }
       },
@@ -191,7 +195,7 @@ export class Evaluation {
   reading(lineId: string, caseId: string): Reading {
     const node = nodeIn(this.graph, lineId, caseId);
     if (node === undefined) return { figure: { state: 'empty' } };
-    return readingOf(node, present(this.byId.get(lineId), 'line'), this.figuring);
+    return readingOf(node, present(this.byId.get(lineId), 'line').line, this.figuring);
   }
 
   /** The figure alone. */
@@ -220,7 +224,7 @@ export class Evaluation {
   findings(lineId: string): readonly LineFinding[] {
     const known = this.findingCache.get(lineId);
     if (known !== undefined) return known;
-    const line = this.byId.get(lineId);
+    const line = this.byId.get(lineId)?.line;
     const found =
       line === undefined
         ? []
@@ -236,9 +240,9 @@ export class Evaluation {
 
   /** Every finding of the worksheet, in its order. */
   sheetFindings(): readonly LineFinding[] {
-    this.sheetCache ??= this.graph.lines
-      .filter(({ id }) => this.mayHaveFindings(id))
-      .flatMap(({ id }) => this.findings(id));
+    this.sheetCache ??= this.graph.items
+      .filter(({ line }) => this.mayHaveFindings(line.id))
+      .flatMap(({ line }) => this.findings(line.id));
     return this.sheetCache;
   }
 
@@ -269,6 +273,18 @@ export class Evaluation {
   preview(lineId: string, caseId: string, entry: string): Preview {
     const node = nodeIn(this.graph, lineId, caseId);
     if (node === undefined) return { reading: { figure: { state: 'empty' } }, findings: [] };
+    return this.previewAt(node, caseId, entry);
+  }
+
+  /** An entry in a case as a line that is not there yet would give it: no line rests on it, so it closes no loop. */
+  previewNew(caseId: string, entry: string): Preview {
+    const node = new Node(-1, { line: { id: '', symbol: '', label: '', entry } }, null, entry);
+    // After all others: nothing is searched for a way back to it.
+    node.rank = Infinity;
+    return this.previewAt(node, caseId, entry);
+  }
+
+  private previewAt(node: Node, caseId: string, entry: string): Preview {
     const tried = this.tryOut(node, caseId, entry);
     const tryOut = (other: string, unit?: string): Reading => this.tryOut(node, caseId, other, unit).reading;
     return {
@@ -325,19 +341,29 @@ export class Evaluation {
   /** The line that a symbol stands for. */
   lineOf(symbol: string): Line | undefined {
     const holder = this.graph.holders.get(symbol);
-    return holder === undefined ? undefined : this.byId.get(holder.id);
+    return holder === undefined ? undefined : this.byId.get(holder.line.id)?.line;
   }
 
   /** The line with this id, as of the last edit. */
   line(lineId: string): Line | undefined {
-    return this.byId.get(lineId);
+    return this.byId.get(lineId)?.line;
   }
 
-  /** Every evaluated line in the order of the worksheet. */
+  /** Where a line stands that is none of the worksheet's own: in which chain, pool or curve. */
+  originOf(lineId: string): ItemPlace | undefined {
+    return this.byId.get(lineId)?.origin;
+  }
+
+  /** Every line that has a figure of its own in the account, in its order: what chains and pools give among them. */
   lines(): readonly Line[] {
-    return this.current.sections.flatMap((section) => (isLinesSection(section) ? section.lines : []));
+    return this.current.sections
+      .flatMap(itemsOf)
+      .filter(({ line, origin, curve }) => origin === undefined || (line.symbol !== '' && curve === undefined))
+      .map(({ line }) => line);
   }
 }
+
+const itemsById = ({ items }: Graph): Map<string, Item> => new Map(items.map((item) => [item.line.id, item]));
 
 const sameSymbols = (a: readonly string[], b: readonly string[]): boolean =>
   a.length === b.length && a.every((symbol, index) => symbol === b[index]);

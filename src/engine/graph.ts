@@ -4,13 +4,14 @@
  */
 import { present } from '../base';
 import { readEntry } from '../formula';
-import { entryIn, isLinesSection, type Line, type Worksheet } from '../worksheet';
+import { entryIn, type Line, type Worksheet } from '../worksheet';
+import { itemsOf, type Item } from './item';
 import { Node } from './node';
 
 export interface Graph {
-  readonly lines: readonly Line[];
-  /** The line that holds each symbol: the first one, where several claim it. */
-  readonly holders: ReadonlyMap<string, Line>;
+  readonly items: readonly Item[];
+  /** The item that holds each symbol: the first one, where several claim it. */
+  readonly holders: ReadonlyMap<string, Item>;
   /** Nodes by line id; the shared one under the empty case id. */
   readonly nodes: ReadonlyMap<string, ReadonlyMap<string, Node>>;
   /** Every node, inputs before users. */
@@ -29,26 +30,29 @@ export function nodeIn(graph: Pick<Graph, 'nodes'>, lineId: string, caseId: stri
 
 /** Builds the graph, taking over nodes of the one before, so that what has not changed need not be checked again. */
 export function buildGraph(worksheet: Worksheet, before: Graph | undefined, newSlot: () => number): Graph {
-  const lines = worksheet.sections.flatMap((section) => (isLinesSection(section) ? section.lines : []));
-  const holders = new Map<string, Line>();
-  for (const line of lines)
-    if (line.symbol !== '' && !RESERVED.has(line.symbol) && !holders.has(line.symbol)) holders.set(line.symbol, line);
-  const differing = findDiffering(worksheet, lines, holders);
+  const items = worksheet.sections.flatMap(itemsOf);
+  const holders = new Map<string, Item>();
+  for (const item of items)
+    for (const symbol of [item.line.symbol, item.alias])
+      if (symbol !== undefined && symbol !== '' && !RESERVED.has(symbol) && !holders.has(symbol))
+        holders.set(symbol, item);
+  const differing = findDiffering(worksheet, items, holders);
   const nodes = new Map<string, Map<string, Node>>();
-  for (const line of lines) {
+  for (const item of items) {
+    const { line } = item;
     const own = new Map<string, Node>();
     const make = (key: string, caseId: string | null, entry: string): void => {
       const old = before?.nodes.get(line.id)?.get(key);
-      own.set(key, old ?? new Node(newSlot(), line, caseId, entry));
+      own.set(key, old ?? new Node(newSlot(), item, caseId, entry));
     };
     const cases = differing.get(line.id);
     if (cases === undefined || cases.size < worksheet.cases.length) make('', null, line.entry);
     for (const caseId of cases ?? []) make(caseId, caseId, entryOf(line, caseId));
     nodes.set(line.id, own);
   }
-  const order = connect({ lines, holders, nodes });
+  const order = connect({ items, holders, nodes });
   return {
-    lines,
+    items,
     holders,
     nodes,
     order,
@@ -61,20 +65,20 @@ export function entryOf(line: Line, caseId: string | null): string {
   return entryIn(line, caseId ?? undefined);
 }
 
-/** For each line the cases in which its figure may differ: those that override it, or anything it rests on. */
+/** For each item the cases in which its figure may differ: those that override it, or anything it rests on. */
 function findDiffering(
   worksheet: Worksheet,
-  lines: readonly Line[],
-  holders: ReadonlyMap<string, Line>,
+  items: readonly Item[],
+  holders: ReadonlyMap<string, Item>,
 ): Map<string, Set<string>> {
   const differing = new Map<string, Set<string>>();
-  const overridden = lines.filter(({ byCase }) => byCase !== undefined && Object.keys(byCase).length > 0);
+  const overridden = items.filter(({ line: { byCase } }) => byCase !== undefined && Object.keys(byCase).length > 0);
   if (overridden.length === 0) return differing;
   for (const { id: caseId } of worksheet.cases) {
-    const roots = overridden.filter((line) => line.byCase !== undefined && Object.hasOwn(line.byCase, caseId));
+    const roots = overridden.filter(({ line: { byCase } }) => byCase !== undefined && Object.hasOwn(byCase, caseId));
     if (roots.length === 0) continue;
-    const users = usersInCase(lines, holders, caseId);
-    const open = roots.map(({ id }) => id);
+    const users = usersInCase(items, holders, caseId);
+    const open = roots.map(({ line }) => line.id);
     const reached = new Set(open);
     for (let lineId = open.pop(); lineId !== undefined; lineId = open.pop()) {
       for (const user of users.get(lineId) ?? []) {
@@ -92,33 +96,40 @@ function findDiffering(
   return differing;
 }
 
-/** Who uses each line in a case, by line id. */
+/** Who uses each item in a case, by id. */
 function usersInCase(
-  lines: readonly Line[],
-  holders: ReadonlyMap<string, Line>,
+  items: readonly Item[],
+  holders: ReadonlyMap<string, Item>,
   caseId: string,
 ): Map<string, string[]> {
   const users = new Map<string, string[]>();
-  for (const line of lines) {
-    const read = readEntry(entryOf(line, caseId));
-    for (const symbol of read.form === 'expression' ? read.symbols : []) {
-      const used = holders.get(symbol)?.id;
-      if (used === undefined) continue;
+  for (const item of items) {
+    for (const used of usedBy(item, caseId, holders)) {
       const list = users.get(used);
-      if (list === undefined) users.set(used, [line.id]);
-      else list.push(line.id);
+      if (list === undefined) users.set(used, [item.line.id]);
+      else list.push(item.line.id);
     }
   }
   return users;
 }
 
-/** The nodes that a node's entry uses, each once. */
+/** The ids of what an item uses in a case. */
+function usedBy({ line, derived }: Item, caseId: string, holders: ReadonlyMap<string, Item>): readonly string[] {
+  if (derived !== undefined) return derived.inputs;
+  const read = readEntry(entryOf(line, caseId));
+  return read.form === 'expression' ? read.symbols.flatMap((symbol) => holders.get(symbol)?.line.id ?? []) : [];
+}
+
+/** The nodes that a node uses: of an entry each once, of a derived item one for each of its inputs. */
 export function inputsOf(graph: Pick<Graph, 'holders' | 'nodes'>, node: Node): Node[] {
+  const { derived } = node.item;
+  if (derived !== undefined)
+    return derived.inputs.map((lineId) => present(nodeIn(graph, lineId, node.caseId), 'an input of a derived item'));
   const inputs: Node[] = [];
   for (const symbol of node.symbols) {
     const holder = graph.holders.get(symbol);
-    const input = holder === undefined ? undefined : nodeIn(graph, holder.id, node.caseId);
-    if (input !== undefined) inputs.push(input);
+    const input = holder === undefined ? undefined : nodeIn(graph, holder.line.id, node.caseId);
+    if (input !== undefined && !inputs.includes(input)) inputs.push(input);
   }
   return inputs;
 }
@@ -130,12 +141,13 @@ function markStale(node: Node): void {
 }
 
 /** Sets inputs, users, ranks and bars; returns the order. */
-function connect(graph: Pick<Graph, 'lines' | 'holders' | 'nodes'>): Node[] {
+function connect(graph: Pick<Graph, 'items' | 'holders' | 'nodes'>): Node[] {
   const all: Node[] = [];
-  for (const line of graph.lines) {
+  for (const item of graph.items) {
+    const { line } = item;
     for (const node of present(graph.nodes.get(line.id), 'nodes of a line').values()) {
-      node.take(line, entryOf(line, node.caseId));
-      const holder = graph.holders.get(line.symbol);
+      node.take(item, entryOf(line, node.caseId));
+      const holder = graph.holders.get(line.symbol)?.line;
       const isTaken = line.symbol !== '' && holder?.id !== line.id;
       const wasBarred = node.barred !== undefined;
       node.barred = isTaken
@@ -263,14 +275,17 @@ export function loopPath(node: Node): string {
       open.push(input);
     }
   }
-  const begun = open.slice(0, LOOP_NAMES_LIMIT).map(({ line }) => line.symbol);
+  const begun = open.flatMap(nameOf).slice(0, LOOP_NAMES_LIMIT);
   return [...begun, '…', node.line.symbol].join(' → ');
 }
+
+/** How a member of a loop is told; what has no name of its own is passed over. */
+const nameOf = ({ line }: Node): string[] => (line.symbol === '' ? [] : [line.symbol]);
 
 function writePath(node: Node, last: Node, cameFrom: ReadonlyMap<Node, Node>): string {
   const names: string[] = [];
   for (let member: Node | undefined = last; member !== undefined && member !== node; member = cameFrom.get(member))
-    names.unshift(member.line.symbol);
+    names.unshift(...nameOf(member));
   const shown = names.length > LOOP_NAMES_LIMIT ? [...names.slice(0, LOOP_NAMES_LIMIT - 1), '…'] : names;
   return [node.line.symbol, ...shown, node.line.symbol].join(' → ');
 }

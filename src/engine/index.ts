@@ -6,4 +6,8 @@ export * from './reading';
 export * from './pass';
 export { Evaluation, type Preview } from './evaluation';
 export type { Node } from './node';
+export type { Item, ItemPlace } from './item';
+export { itemId } from './item';
+export { poolTotalId } from './pool-items';
+export { STAGE_PARTS, type StagePart } from './chain-parts';
 export { convertFigure, readBound } from './state';

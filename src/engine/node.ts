@@ -17,6 +17,8 @@ import {
   type Checked,
 } from '../formula';
 import type { Line } from '../worksheet';
+import { curveResult, derivedResult } from './derived';
+import type { Item } from './item';
 
 /** Why a line is withheld whatever its entry says. */
 export type Barred = { readonly code: 'duplicate-symbol'; readonly holder: string } | { readonly code: 'loop' };
@@ -26,7 +28,7 @@ export class Node {
   readonly lineId: string;
   /** null: the node that cases without differences share. */
   readonly caseId: string | null;
-  line: Line;
+  item: Item;
   entry: string;
   read: ReadEntry;
   result: LineResult;
@@ -39,14 +41,23 @@ export class Node {
   /** True while the entry has to be checked again. */
   isStale = true;
 
-  constructor(slot: number, line: Line, caseId: string | null, entry: string) {
+  constructor(slot: number, item: Item, caseId: string | null, entry: string) {
     this.slot = slot;
-    this.lineId = line.id;
+    this.lineId = item.line.id;
     this.caseId = caseId;
-    this.line = line;
+    this.item = item;
     this.entry = entry;
     this.read = readEntry(entry);
     this.result = UNCHECKED;
+  }
+
+  get line(): Line {
+    return this.item.line;
+  }
+
+  /** True when its figure is computed from other items and not from an entry. */
+  get isDerived(): boolean {
+    return this.item.derived !== undefined;
   }
 
   get symbols(): readonly string[] {
@@ -54,9 +65,12 @@ export class Node {
   }
 
   /** Takes the line's present text; the node becomes stale when what the checker sees has changed. */
-  take(line: Line, entry: string): void {
+  take(item: Item, entry: string): void {
+    const { line } = item;
     const before = this.line;
     const changed =
+      item.derived !== this.item.derived ||
+      item.curve !== this.item.curve ||
       entry !== this.entry ||
       (this.caseId !== null && line.entry !== before.entry) ||
       line.symbol !== before.symbol ||
@@ -68,7 +82,7 @@ export class Node {
       this.entry = entry;
       this.read = readEntry(entry);
     }
-    this.line = line;
+    this.item = item;
     if (changed) this.isStale = true;
   }
 
@@ -76,8 +90,14 @@ export class Node {
   check(scope: Scope): boolean {
     const before = this.info();
     this.isStale = false;
-    this.result = checkLine(this.spec(), scope, this.read);
+    this.result = this.resultIn(scope);
     return !sameInfo(before, this.info());
+  }
+
+  private resultIn(scope: Scope): LineResult {
+    const { derived, curve } = this.item;
+    if (derived !== undefined) return derivedResult(derived, this.slot, this.inputs);
+    return curve === undefined ? checkLine(this.spec(), scope, this.read) : curveResult(curve);
   }
 
   /** What the checker is told of the line. An override follows the unit typed in the line's own entry. */
@@ -92,7 +112,7 @@ export class Node {
 
   /** A node with another entry in this one's place, outside the graph. */
   trial(line: Line, entry: string, caseId: string): Node {
-    return new Node(this.slot, line, caseId, entry);
+    return new Node(this.slot, { line }, caseId, entry);
   }
 
   /** The checked expression, which is not kept, for the working. */
@@ -107,7 +127,7 @@ export class Node {
 
   /** How other lines meet this one; undefined while it has no type or is barred. */
   info(): SymbolInfo | undefined {
-    const { unit, type, kind, side, constant } = this.result;
+    const { unit, type, kind, side, constant, curve } = this.result;
     if (unit === undefined || type === undefined || this.barred !== undefined) return undefined;
     const isDeclared = kind?.origin === 'declared' || side?.origin === 'declared';
     return {
@@ -120,6 +140,7 @@ export class Node {
       side: isDeclared ? side?.side : undefined,
       isDeclared,
       constant,
+      ...(curve === undefined ? {} : { curve }),
     };
   }
 }
@@ -144,6 +165,7 @@ function sameInfo(a: SymbolInfo | undefined, b: SymbolInfo | undefined): boolean
     a.side === b.side &&
     a.isDeclared === b.isDeclared &&
     a.constant === b.constant &&
+    a.curve === b.curve &&
     sameType(a.type, b.type)
   );
 }
@@ -163,6 +185,7 @@ function sameType(a: SymbolInfo['type'], b: SymbolInfo['type']): boolean {
   if (!sameMeaning || a.bandwidth?.key !== b.bandwidth?.key || a.noiseTemperature?.key !== b.noiseTemperature?.key)
     return false;
   if (a.bandwidth?.text !== b.bandwidth?.text || a.noiseTemperature?.text !== b.noiseTemperature?.text) return false;
+  if (a.plane?.key !== b.plane?.key || a.plane?.text !== b.plane?.text || a.plane?.gain !== b.plane?.gain) return false;
   if (a.form === 'linear')
     return b.form === 'linear' && a.degree === b.degree && a.sort === b.sort && sameDimensionText(a, b);
   return b.form === 'decibel' && a.offsetDb === b.offsetDb && sameDimensionText(a, b);

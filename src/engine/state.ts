@@ -21,6 +21,7 @@ export function figureOfNode(node: Node, figures: Figures, value: number = figur
       isFitted: result.isFitted,
       ...(result.typedDigits === undefined ? {} : { digits: result.typedDigits }),
     };
+  if (isMissing(node, figures)) return { state: 'empty' };
   const roots = rootsOf(node, figures);
   return roots.length > 0
     ? { state: 'waiting', roots }
@@ -51,17 +52,30 @@ export function rootsOf(node: Node, figures: Figures): readonly string[] {
   return [...roots];
 }
 
+/** True for a derived figure that is not there because nobody has given what it needs, through no fault of any entry. */
+function isMissing(node: Node, figures: Figures): boolean {
+  if (!node.isDerived) return false;
+  const seen = new Set<Node>();
+  const open = [node];
+  for (let next = open.pop(); next !== undefined; next = open.pop()) {
+    if (seen.has(next)) continue;
+    seen.add(next);
+    if (next.isDerived) open.push(...withheldInputs(next, figures));
+    else if (!next.result.isEmpty || next.barred !== undefined || ownError(next) !== undefined) return false;
+  }
+  return true;
+}
+
 const withheldInputs = (node: Node, figures: Figures): Node[] =>
   node.inputs.filter(({ slot }) => Number.isNaN(figures.values[slot]));
 
 /** Why a plan whose inputs have figures has none itself. */
-export function diagnose(
-  plan: Plan,
-  figures: Figures,
-): { readonly code: 'no-power' | 'not-finite'; readonly why: string } {
+export function diagnose(plan: Plan, figures: Figures): { readonly code: FindingCode; readonly why: string } {
   const value = evaluatePlan(plan, figures);
   for (const part of partsOf(plan))
     if (!Number.isFinite(evaluatePlan(part, figures)) && part.op !== 'slot') return diagnose(part, figures);
+  if (plan.op === 'apply' && plan.fault !== undefined)
+    return { code: plan.fault, why: `${plan.name} has no value there` };
   if (plan.op === 'decibels') return { code: 'no-power', why: 'the decibel of zero or less than zero is asked for' };
   if (plan.op === 'apply' && plan.name === 'powerdiff')
     return { code: 'no-power', why: 'the power taken off is larger than the one it is taken from' };

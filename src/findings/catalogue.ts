@@ -104,6 +104,26 @@ export const CATALOGUE = {
     'Zero or negative power has no decibel figure.',
     (x) => `${f(x, 'what')}. The decibel figure does not exist; the value is withheld until its inputs are put right.`,
   ),
+  'pool-mixed': entry(
+    'error',
+    'The pool holds what cannot be added',
+    'A pool adds powers: levels of one dimension, temperatures, signal ratios or impairment ratios, and one sort alone.',
+    (x) =>
+      `${f(x, 'first')} is ${f(x, 'firstSort')} and ${f(x, 'second')} is ${f(x, 'secondSort')}: their powers have no total. Bring them into one form, or move one to another pool.`,
+  ),
+  'bad-curve': entry(
+    'error',
+    'The curve cannot be read',
+    'A curve needs known units and one value at each place.',
+    (x) => f(x, 'what'),
+  ),
+  'outside-curve': entry(
+    'error',
+    'Read outside the curve',
+    'A table says nothing of what lies beyond its ends, and nothing is made up there.',
+    (x) =>
+      `${f(x, 'curve')} is known from ${f(x, 'from')} to ${f(x, 'to')} and is read at ${f(x, 'value')}. Add points, or stay within them.`,
+  ),
   loop: entry(
     'error',
     'The line rests on itself',
@@ -199,6 +219,35 @@ export const CATALOGUE = {
       `${f(x, 'first')} is in ${f(x, 'firstBandwidth')} and ${f(x, 'second')} in ${f(x, 'secondBandwidth')}${given(x['now'], (now) => `; the result now is ${now}`)}.` +
       instead(x, 'In one bandwidth'),
   ),
+  'figure-below-loss': entry(
+    'warning',
+    'A noise figure below the loss',
+    'A loss at a physical temperature adds the noise of that temperature: its noise figure cannot be less.',
+    (x) =>
+      `${f(x, 'stage')} has a loss of ${f(x, 'loss')} dB and a noise figure of ${f(x, 'figure')} dB; at ${f(x, 'temperature')} K a loss of that size has ${f(x, 'least')} dB. Leave the noise figure out, or state the temperature.`,
+  ),
+  'compression-above-intercept': entry(
+    'warning',
+    'Compression above the intercept',
+    'A stage compresses some 10 dB below its third-order intercept; above it the two figures do not fit one another.',
+    (x) =>
+      `${f(x, 'stage')} has its 1 dB compression at ${f(x, 'compression')} dBm and its third-order intercept at ${f(x, 'intercept')} dBm, both at the output: compression comes first, as a rule some 10 dB below. One of them may be meant for the input.`,
+  ),
+  'stage-compressed': entry(
+    'warning',
+    'The stage is driven into compression',
+    'Above its compression a stage no longer has the gain that the account counts on.',
+    (x) =>
+      `${f(x, 'stage')} gets ${f(x, 'level')} dBm and compresses by 1 dB at ${f(x, 'limit')} dBm at its input: ${f(x, 'excess')} dB too much. Take gain off ahead of it, or a stage that bears more.`,
+  ),
+  'planes-differ': entry(
+    'warning',
+    'Figures from two places of a chain',
+    'A level or a temperature holds at one place; between two places lies gain.',
+    (x) =>
+      `${f(x, 'first')} holds ${f(x, 'firstPlane')} and ${f(x, 'second')} ${f(x, 'secondPlane')}: the gain between lies in neither${given(x['now'], (now) => `, and ${now} counts it as none`)}.` +
+      instead(x, 'Referred to one place'),
+  ),
   'outside-validity': entry(
     'warning',
     'Outside the range of the model',
@@ -282,6 +331,20 @@ export const CATALOGUE = {
     'A small difference of large powers carries the errors of both.',
     (x) =>
       `The difference${given(x['now'], (now) => `, ${now},`)} is more than 10 dB below its inputs: small errors in them change it much.`,
+  ),
+  'first-stage-weak': entry(
+    'note',
+    'The first stage does not set the noise figure',
+    'With enough gain in front, what follows adds little; here it adds most of the noise.',
+    (x) =>
+      `In ${f(x, 'chain')} the first stage that is more than a loss makes ${f(x, 'share')} % of the noise from it on; the rest comes from behind it although an amplifier follows. More gain in front would bring the noise figure down.`,
+  ),
+  'source-temperature': entry(
+    'note',
+    'Noise figures beside another source temperature',
+    'Noise figures are stated for a source at 290 K; with a colder or hotter one S/N falls by another amount.',
+    (x) =>
+      `The source of ${f(x, 'chain')} is at ${f(x, 'temperature')} K, while its noise figures are stated for 290 K. Noise is carried in temperatures, so that levels and S/N are right; S/N falls by another figure than the noise figure.`,
   ),
   'reference-temperature': entry(
     'note',

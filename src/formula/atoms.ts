@@ -147,6 +147,14 @@ export function checkSymbol(tree: SymbolTree, context: Context): Checked {
     context.waitsFor.push(tree.name);
     return broken(tree);
   }
+  if (info.curve !== undefined)
+    return context.stop('wrong-arguments', tree, {
+      facts: {
+        what: `${tree.name} is a curve and has no figure by itself: say where it is to be read`,
+        signature: `${tree.name}(x)`,
+      },
+      repairs: [],
+    });
   return {
     tree,
     type: info.type,

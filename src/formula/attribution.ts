@@ -135,12 +135,12 @@ export function exportedType(
     (checked.type.form !== 'decibel' && checked.type.form !== 'linear')
   )
     return type;
-  const { bandwidth, noiseTemperature } = checked.type;
+  const { bandwidth, noiseTemperature, plane } = checked.type;
   const degree = type.form === 'linear' && checked.type.form === 'linear' ? checked.type.degree : 0;
-  if (bandwidth === undefined && noiseTemperature === undefined && degree === 0) return type;
+  if (bandwidth === undefined && noiseTemperature === undefined && plane === undefined && degree === 0) return type;
   return type.form === 'linear'
-    ? { ...type, bandwidth, noiseTemperature, degree }
-    : { ...type, bandwidth, noiseTemperature };
+    ? { ...type, bandwidth, noiseTemperature, plane, degree }
+    : { ...type, bandwidth, noiseTemperature, plane };
 }
 
 function exportedMeaning(

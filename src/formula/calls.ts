@@ -26,6 +26,7 @@ import {
   type Parameter,
   type ParameterKind,
 } from './catalogue';
+import { checkCurveCall } from './curve-calls';
 import { decibelsOf, describeType } from './forms';
 import { parseEntry } from './grammar';
 import { consume } from './judge';
@@ -38,7 +39,7 @@ import type { Checked } from './types';
 /** Checks a call. */
 export function checkCall(tree: CallTree, context: Context, check: Check): Checked {
   const entry = findFunction(tree.name);
-  if (entry === undefined) return unknownFunction(tree, context);
+  if (entry === undefined) return checkCurveCall(tree, context, check) ?? unknownFunction(tree, context);
   const given = tree.parameters.length;
   const most = entry.repeats > 0 ? Infinity : entry.parameters.length;
   if (given < fewestOf(entry) || given > most || !isWholeGroup(entry, given))

@@ -33,7 +33,7 @@ export function decibelsOf(
 ): { type: DecibelType; plan: Plan } {
   const fieldLike = isFieldLike(linear.type);
   const decibels: Plan = { op: 'decibels', of: linear.plan, zeroIsNoPower };
-  const { meaning, bandwidth, noiseTemperature } = linear.type;
+  const { meaning, bandwidth, noiseTemperature, plane } = linear.type;
   return {
     type: {
       form: 'decibel',
@@ -43,6 +43,7 @@ export function decibelsOf(
       meaning: fieldLike ? squared(meaning) : meaning,
       bandwidth,
       noiseTemperature,
+      plane,
       // A power that came out of dBm goes back into dBm.
       unitHint: linear.type.unitHint?.form === 'decibel' ? linear.type.unitHint : undefined,
     },
@@ -67,6 +68,7 @@ export function linearOf(decibel: { type: DecibelType; plan: Plan }): { type: Li
       sort: 'ratio',
       meaning: root && type.meaning !== undefined ? combineMeanings(NEUTRAL, type.meaning, 0.5) : type.meaning,
       bandwidth: type.bandwidth,
+      plane: type.plane,
       noiseTemperature: type.noiseTemperature,
       unitHint: type.unitHint,
     },

@@ -10,7 +10,7 @@ export * from './nearest';
 export * from './plan';
 export * from './types';
 export * from './catalogue';
-export { CONSTANTS, type Constant } from './atoms';
+export { CONSTANTS, typeOfUnit, type Constant } from './atoms';
 export { parameterAt } from './calls';
 export * from './line';
 export type { AttributedKind, AttributedSide, KindOrigin, LineSpec } from './attribution';

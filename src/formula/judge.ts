@@ -26,6 +26,7 @@ import {
   type Grouped,
 } from './repairs';
 import { sayBandwidthsDiffer } from './bandwidths';
+import { sayPlanesDiffer } from './planes';
 import type { Tree } from './tree';
 import type { Checked, SumTerm } from './types';
 
@@ -69,7 +70,9 @@ function judge(checked: Checked, terms: readonly SumTerm[], context: Context, li
   const averaged = findAveraged(checked.tree, terms, context);
   sayMeaning(checked.tree, terms, net, context);
   if (!averaged) sayNotes(checked, terms, net, context, line);
-  sayBandwidthsDiffer(terms.filter(({ coefficient }) => Math.abs(coefficient) === 1).filter(isLevel), context);
+  const powers = terms.filter(({ coefficient }) => Math.abs(coefficient) === 1).filter(isLevel);
+  sayBandwidthsDiffer(powers, context);
+  sayPlanesDiffer(powers, terms, context);
   return true;
 }
 

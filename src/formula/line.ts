@@ -4,7 +4,15 @@
  */
 import { fail, ok, type Result } from '../base';
 import { CATALOGUE } from '../findings';
-import { assumeFromName, findUnit, isDimensionless, sameDimension, UNIT_WORDS, type Unit } from '../quantity';
+import {
+  assumeFromName,
+  findUnit,
+  isDimensionless,
+  sameDimension,
+  UNIT_WORDS,
+  type Curve,
+  type Unit,
+} from '../quantity';
 import {
   attributeKind,
   attributeSide,
@@ -15,6 +23,7 @@ import {
   type AttributedSide,
   type LineSpec,
 } from './attribution';
+import { findFunction } from './catalogue';
 import { check } from './check';
 import { Context } from './context';
 import { convertResult, readOverReference } from './conversion';
@@ -46,6 +55,8 @@ export interface LineResult {
   readonly side?: AttributedSide | undefined;
   /** The bare number it holds, for use as a coefficient. */
   readonly constant?: number | undefined;
+  /** What is called by the symbol of a curve. */
+  readonly curve?: Curve | undefined;
   /** Significant digits typed, for plain quantities. */
   readonly typedDigits?: number | undefined;
   readonly isEmpty: boolean;
@@ -73,9 +84,12 @@ export function readEntry(entry: string): ReadEntry {
   if (plain !== undefined) return { form: 'quantity', ...plain };
   const parsed = parseEntry(entry);
   return parsed.ok
-    ? { form: 'expression', tree: parsed.value, symbols: symbolsOf(parsed.value) }
+    ? { form: 'expression', tree: parsed.value, symbols: symbolsOf(parsed.value, isCurveName) }
     : { form: 'unreadable', fault: parsed.fault };
 }
+
+/** A call of what is no function of the catalogue may be one of a curve. */
+const isCurveName = (name: string): boolean => findFunction(name) === undefined;
 
 interface Draft {
   readonly checked: Checked | undefined;

@@ -23,16 +23,22 @@ export function nearestName(name: string, candidates: Iterable<string>): string 
   return best;
 }
 
-/** Insertions, removals and replacements that turn `a` into `b`, counted up to `limit`. */
+/** Insertions, removals, replacements and swaps of neighbours that turn `a` into `b`, counted up to `limit`. */
 function editDistance(a: string, b: string, limit: number): number {
+  let before: number[] = [];
   let previous = Array.from({ length: b.length + 1 }, (_, index) => index);
   for (let i = 1; i <= a.length; i++) {
     const current = [i];
     for (let j = 1; j <= b.length; j++) {
-      const replaced = (previous[j - 1] ?? 0) + (a[i - 1] === b[j - 1] ? 0 : 1);
-      current.push(Math.min(replaced, (previous[j] ?? 0) + 1, (current[j - 1] ?? 0) + 1));
+      const isSame = a[i - 1] === b[j - 1];
+      const isSwap = !isSame && i > 1 && j > 1 && a[i - 1] === b[j - 2] && a[i - 2] === b[j - 1];
+      const replaced = (previous[j - 1] ?? 0) + (isSame ? 0 : 1);
+      const swapped = isSwap ? (before[j - 2] ?? 0) + 1 : Infinity;
+      current.push(Math.min(replaced, swapped, (previous[j] ?? 0) + 1, (current[j - 1] ?? 0) + 1));
     }
-    if (Math.min(...current) > limit) return limit + 1;
+    // A swap reaches two rows back: only when both are beyond the limit is there no way left within it.
+    if (Math.min(...current) > limit && Math.min(...previous) > limit) return limit + 1;
+    before = previous;
     previous = current;
   }
   return previous[b.length] ?? limit + 1;

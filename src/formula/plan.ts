@@ -3,6 +3,7 @@
  * between units stands in the plan as a constant; compilers (one value, columns) need to know nothing of units.
  * Holds: a plan evaluates to NaN exactly when there is no figure; −∞ stands for *no power* in decibel figures.
  */
+import type { FindingCode } from '../findings';
 
 export type Comparison = '=' | '<>' | '<' | '>' | '<=' | '>=';
 
@@ -32,6 +33,8 @@ export type Plan =
       readonly name: string;
       readonly compute: (...values: number[]) => number;
       readonly parameters: readonly Plan[];
+      /** The finding that says why there is no figure, where it is not the usual one. */
+      readonly fault?: FindingCode;
     };
 
 export const constantPlan = (value: number): Plan => ({ op: 'constant', value });

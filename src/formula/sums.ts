@@ -21,6 +21,7 @@ import {
 import type { Check } from './check';
 import { asFactor, broken, type Context } from './context';
 import { describeType, termsOf } from './forms';
+import { sayPlanesDiffer } from './planes';
 import { scalePlan, type Plan } from './plan';
 import type { BinaryTree, NegationTree, Tree } from './tree';
 import type { Checked, DecibelType, LinearType, Origin, SumTerm } from './types';
@@ -283,6 +284,11 @@ function addLinear(tree: Tree, parts: readonly SignedPart[], context: Context): 
     meaning: agree && (all || told.length === 0) ? judged[0]?.type.meaning : isNeutral(typed) ? NEUTRAL : undefined,
     unitHint: typed.find(({ type: { unitHint } }) => unitHint !== undefined)?.type.unitHint,
   };
+  sayPlanesDiffer(
+    typed.map(({ checked, type: part }) => ({ tree: checked.tree, text: context.textOf(checked.tree), type: part })),
+    [],
+    context,
+  );
   const constant = typed.every(({ checked }) => checked.constant !== undefined)
     ? typed.reduce((sum, { sign, checked }) => sum + sign * (checked.constant ?? 0), 0)
     : undefined;

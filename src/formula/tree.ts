@@ -69,13 +69,13 @@ export function walkTree(tree: Tree, visit: (node: Tree) => void): void {
   }
 }
 
-/** The symbols that a tree uses, each once, in order of appearance. */
-export function symbolsOf(tree: Tree): readonly string[] {
+/** The symbols that a tree uses, each once, in order of appearance; those of curves among them, where they are called. */
+export function symbolsOf(tree: Tree, isCurveName: (name: string) => boolean): readonly string[] {
   if (tree.type === 'symbol') return [tree.name];
   if (tree.type === 'literal' || tree.type === 'text') return [];
   const names = new Set<string>();
   walkTree(tree, (node) => {
-    if (node.type === 'symbol') names.add(node.name);
+    if (node.type === 'symbol' || (node.type === 'call' && isCurveName(node.name))) names.add(node.name);
   });
   return [...names];
 }

@@ -3,7 +3,7 @@
  * took its bandwidth and temperature.
  */
 import type { FindingSeed } from '../findings';
-import type { Dimension, Meaning, QuantityKind, Side, Unit } from '../quantity';
+import type { Curve, Dimension, Meaning, QuantityKind, Side, Unit } from '../quantity';
 import type { Plan } from './plan';
 import type { Tree } from './tree';
 
@@ -14,6 +14,18 @@ export interface Origin {
   readonly plan: Plan;
 }
 
+/** The place of a chain at which a level or a temperature holds. */
+export interface Plane {
+  /** The symbol of the chain. */
+  readonly chain: string;
+  /** Equal for the same place. */
+  readonly key: string;
+  /** `behind lna`. */
+  readonly text: string;
+  /** The symbol of the gain from the chain's input up to here; absent at the input itself. */
+  readonly gain?: string;
+}
+
 interface Attributes {
   /** undefined: nothing is known and the layer of meaning is silent. */
   readonly meaning: Meaning | undefined;
@@ -21,6 +33,7 @@ interface Attributes {
   readonly bandwidth?: Origin | undefined;
   /** The temperature that a thermal noise was computed from, in K. */
   readonly noiseTemperature?: Origin | undefined;
+  readonly plane?: Plane | undefined;
   /** The unit in which a result that declares none is shown. */
   readonly unitHint?: Unit | undefined;
 }
@@ -123,6 +136,8 @@ export interface SymbolInfo {
   readonly isDeclared: boolean;
   /** For lines that hold a bare number: that number, usable as a coefficient. */
   readonly constant?: number | undefined;
+  /** For curves: called by the symbol, and never a figure by itself. */
+  readonly curve?: Curve;
 }
 
 /** What an entry can see. */

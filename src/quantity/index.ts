@@ -11,3 +11,4 @@ export * from './meaning';
 export * from './assume';
 export * from './combine';
 export * from './write';
+export * from './curve';

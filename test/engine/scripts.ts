@@ -4,7 +4,7 @@
  */
 import fc from 'fast-check';
 import * as w from '../../src/worksheet';
-import type { Change, Line, LinesSection, Worksheet } from '../../src/worksheet';
+import type { Change, Line, LinesSection, Section, Worksheet } from '../../src/worksheet';
 import { QUANTITY_KINDS, SIDES } from '../../src/quantity';
 
 export const SYMBOLS = [
@@ -145,6 +145,16 @@ const TEMPLATES = [
   '1/0',
   'k_B*$*$',
   '$ + $ + $ + $',
+  'rx.nf',
+  'rx.gain + $',
+  'rx.lna.out.signal - rx.noise',
+  '$ - rx.noise',
+  'powersum(tot, $)',
+  'tot + 3 dB',
+  'C(12 deg)',
+  'C($)',
+  'C + 1 dB',
+  'pool($; $)',
 ] as const;
 
 const symbol = fc.constantFrom(...SYMBOLS.filter((name) => name !== ''));
@@ -198,14 +208,87 @@ function lineOf({ overrides, unit, quantity, side, requirement, ...rest }: Draft
   };
 }
 
-/** Worksheets of one to three cases and up to twelve lines in two sections. */
+/** What stages and chains are given; their own outputs too, which closes loops. */
+const VALUES = [
+  '10 dB',
+  '-3 dB',
+  '2 dB',
+  '30 dBm',
+  '-10 dBm',
+  '100 K',
+  '1 MHz',
+  'G_1',
+  '-L_1',
+  'NF',
+  'T',
+  'rx.gain',
+  '',
+  '3 +',
+] as const;
+const value = fc.constantFrom(...VALUES);
+
+const stageValues = fc.dictionary(fc.constantFrom(...w.STAGE_FIELDS), value, { maxKeys: 5, noNullPrototype: true });
+
+/** A chain of up to three stages, a pool and a curve. */
+const furtherSections: fc.Arbitrary<readonly Section[]> = fc
+  .record({
+    stages: fc.array(
+      fc.tuple(fc.constantFrom('lna', 'mix', 'amp', ''), stageValues, optional(stageValues), fc.boolean()),
+      { maxLength: 3 },
+    ),
+    inputs: fc.record({ signal: value, noise: value, bandwidth: value, interferer: value }),
+    isPower: fc.boolean(),
+    pool: fc.array(fc.tuple(drafts, fc.boolean()), { maxLength: 3 }),
+    unit: optional(fc.constantFrom(...UNITS)),
+    points: fc.uniqueArray(fc.tuple(fc.integer({ min: 0, max: 30 }), fc.integer({ min: -5, max: 5 })), {
+      maxLength: 4,
+    }),
+  })
+  .map(({ stages, inputs, isPower, pool, unit, points }) => [
+    {
+      id: 'ch',
+      kind: 'chain',
+      symbol: 'rx',
+      title: 'Chain',
+      ...inputs,
+      ...(isPower ? { intercept: 'power' as const } : {}),
+      stages: stages.map(([symbol, values, override, off], i) => ({
+        id: `st${String(i)}`,
+        symbol,
+        label: '',
+        ...(off ? { off: true } : {}),
+        ...values,
+        ...(override === undefined ? {} : { byCase: { rain: override } }),
+      })),
+    },
+    {
+      id: 'po',
+      kind: 'pool',
+      symbol: 'tot',
+      title: 'Pool',
+      ...(unit ? { unit } : {}),
+      lines: pool.map(([draft, off], i) => ({ ...lineOf(draft, `p${String(i)}`, 1), ...(off ? { off: true } : {}) })),
+    },
+    {
+      id: 'cu',
+      kind: 'curve',
+      symbol: 'C',
+      title: 'Curve',
+      x: { label: 'x', unit: 'deg' },
+      y: { label: 'y', unit: 'dB' },
+      points,
+    },
+  ]);
+
+/** Worksheets of one to three cases and up to twelve lines in two sections; half of them with a chain, a pool and a curve. */
 export const worksheets: fc.Arbitrary<Worksheet> = fc
   .record({
     caseCount: fc.integer({ min: 1, max: 3 }),
     lines: fc.array(drafts, { minLength: 1, maxLength: 12 }),
     cut: fc.nat(12),
+    further: fc.oneof(fc.constant<readonly Section[]>([]), furtherSections),
   })
-  .map(({ caseCount, lines, cut }) => {
+  .map(({ caseCount, lines, cut, further }) => {
     const all = lines.map((draft, index) => lineOf(draft, `l${String(index)}`, caseCount));
     const section = (id: string, part: readonly Line[]): LinesSection => ({
       id,
@@ -217,7 +300,7 @@ export const worksheets: fc.Arbitrary<Worksheet> = fc
       id: 'w',
       title: 'random',
       cases: CASES.slice(0, caseCount).map((id) => ({ id, name: id })),
-      sections: [section('a', all.slice(0, cut)), section('b', all.slice(cut))],
+      sections: [section('a', all.slice(0, cut)), ...further, section('b', all.slice(cut))],
     };
   });
 
@@ -236,8 +319,8 @@ export const steps: fc.Arbitrary<Step> = fc.record({
   draft: drafts,
 });
 
-/** An id that no line has. */
-function newIdIn(lines: readonly Line[]): string {
+/** An id that none of these has. */
+function newIdIn(lines: readonly { readonly id: string }[]): string {
   const taken = new Set(lines.map(({ id }) => id));
   let count = 0;
   while (taken.has(`n${String(count)}`)) count++;
@@ -299,5 +382,53 @@ export function changesOf(worksheet: Worksheet, { which, a, b, draft }: Step): r
         ? []
         : w.setSymbol(worksheet, line.id, draft.symbol).changes,
   ];
-  return choices[which % choices.length]?.() ?? [];
+  const chain = worksheet.sections.find(w.isChainSection);
+  const stage = chain?.stages[a % Math.max(chain.stages.length, 1)];
+  const field = w.STAGE_FIELDS[b % w.STAGE_FIELDS.length] ?? 'gain';
+  const typed = VALUES[which % VALUES.length] ?? '';
+  const onChain: readonly (() => readonly Change[])[] =
+    chain === undefined
+      ? []
+      : [
+          () =>
+            w.insertStage(worksheet, chain.id, b % 3, {
+              id: newIdIn(chain.stages),
+              symbol: 'new',
+              label: '',
+              gain: typed,
+              noiseFigure: '2 dB',
+            }).changes,
+          () => w.setChainInput(worksheet, chain.id, w.CHAIN_INPUTS[b % 4] ?? 'noise', typed).changes,
+          () => w.setInterceptAddition(worksheet, chain.id, a % 2 === 0 ? 'power' : 'coherent').changes,
+          () => w.setSectionSymbol(worksheet, chain.id, 'front').changes,
+          ...(stage === undefined
+            ? []
+            : [
+                (): readonly Change[] => w.setStageValue(worksheet, chain.id, stage.id, field, typed).changes,
+                (): readonly Change[] =>
+                  w.setStageValue(worksheet, chain.id, stage.id, field, typed, oneCase.id).changes,
+                (): readonly Change[] => w.setStageOff(worksheet, chain.id, stage.id, stage.off !== true).changes,
+                (): readonly Change[] => w.moveStageTo(worksheet, chain.id, stage.id, b % 3).changes,
+                (): readonly Change[] => w.deleteStage(worksheet, chain.id, stage.id).changes,
+                (): readonly Change[] => w.setStageSymbol(worksheet, chain.id, stage.id, 'first').changes,
+              ]),
+        ];
+  const curve = worksheet.sections.find(w.isCurveSection);
+  const onCurve: readonly (() => readonly Change[])[] =
+    curve === undefined
+      ? []
+      : [
+          () =>
+            w.setPoints(worksheet, curve.id, [
+              [0, a % 7],
+              [b % 40, 3],
+            ]).changes,
+          () => w.setCurveField(worksheet, curve.id, 'interpolation', 'monotone').changes,
+          () => w.setCurveField(worksheet, curve.id, 'y', { label: 'y', unit: a % 2 === 0 ? 'dBi' : 'K' }).changes,
+        ];
+  const onPool: readonly (() => readonly Change[])[] = worksheet.sections.some(w.isPoolSection)
+    ? [() => set({ field: 'off', value: line.off === true ? undefined : true })]
+    : [];
+  const all = [...choices, ...onChain, ...onCurve, ...onPool];
+  return all[which % all.length]?.() ?? [];
 }

@@ -2,7 +2,7 @@
 import { describe, expect, it } from 'vitest';
 import { CATALOGUE, FINDING_CODES, type Facts } from '../../src/findings';
 
-/** The codes of the algebra's table with their severities; planes-differ comes with chains, in a later milestone. */
+/** The codes of the algebra's table with their severities, and those of chains, pools and curves. */
 const TABLE = {
   error: [
     'levels-summed',
@@ -21,6 +21,9 @@ const TABLE = {
     'wrong-arguments',
     'not-finite',
     'waiting',
+    'pool-mixed',
+    'bad-curve',
+    'outside-curve',
   ],
   warning: [
     'ratios-summed',
@@ -34,6 +37,10 @@ const TABLE = {
     'constant-hides-unit',
     'field-ratio-in-power-log',
     'negative-figure',
+    'planes-differ',
+    'figure-below-loss',
+    'compression-above-intercept',
+    'stage-compressed',
   ],
   note: [
     'loss-added',
@@ -43,11 +50,13 @@ const TABLE = {
     'number-as-decibels',
     'cancellation',
     'reference-temperature',
+    'first-stage-weak',
+    'source-temperature',
   ],
 } as const;
 
 describe('the catalogue of findings', () => {
-  it('has the codes of the algebra, with their severities', () => {
+  it('has the codes of the algebra, of chains, pools and curves, with their severities', () => {
     const found = Object.fromEntries(
       (['error', 'warning', 'note'] as const).map((severity) => [
         severity,

@@ -6,26 +6,31 @@ import { readdirSync, readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { CATALOGUE, FINDING_CODES, type FindingCode, type Repair, type Severity } from '../../src/findings';
 import { Evaluation, type LineFinding } from '../../src/engine';
-import { applyAll, applyRepair, type Change, type Line, type Worksheet } from '../../src/worksheet';
+import { applyAll, applyRepair, type Change, type Line, type Section, type Worksheet } from '../../src/worksheet';
 import { sheetOf } from '../engine/notation';
 
 interface Golden {
   readonly severity: Severity;
-  readonly lines: readonly string[];
+  /** The worksheet in the notation of lines, or whole sections as a file holds them. */
+  readonly lines?: readonly string[];
+  readonly sections?: readonly Section[];
+  /** The sections put right by hand, and the symbol whose figure then is `after`. */
+  readonly mended?: readonly Section[];
+  readonly of?: string;
   /** Symbol of the line that has the finding; `#2` is the second line. */
   readonly on: string;
   /** What the message must contain: both figures, where there are two. */
   readonly says: readonly string[];
   readonly derivation: string;
   /** The repair: of the line itself when it is offered; otherwise by hand, perhaps of another line. */
-  readonly repair: {
+  readonly repair?: {
     readonly line?: string;
     readonly entry?: string;
     readonly unit?: string;
     readonly quantity?: string;
     readonly symbol?: string;
   };
-  readonly offered: boolean;
+  readonly offered?: boolean;
   readonly after: string;
 }
 
@@ -44,10 +49,30 @@ function lineOf(evaluation: Evaluation, symbol: string): Line {
   return line;
 }
 
+const worksheetOf = (lines: readonly string[] | undefined, sections: readonly Section[] | undefined): Worksheet =>
+  lines === undefined
+    ? { id: 'w', title: '', cases: [{ id: 'nominal', name: 'Nominal' }], sections: sections ?? [] }
+    : sheetOf(lines.join('\n'));
+
+/** The line, or what stands for one in a chain, on which a finding is, by its symbol or label. */
+function itemOf(evaluation: Evaluation, code: FindingCode, on: string): Line {
+  const found = evaluation.sheetFindings().filter((finding) => finding.code === code);
+  const lines = found.flatMap(({ lineId }) => evaluation.line(lineId) ?? []);
+  const line = lines.find(({ symbol, label }) => symbol === on || label === on);
+  if (line === undefined) throw new Error(`${code} is on ${lines.map(({ label }) => label).join(', ')}, not on ${on}`);
+  return line;
+}
+
+/** The changes that put other sections in the place of all. */
+const replacing = (worksheet: Worksheet, sections: readonly Section[]): readonly Change[] => [
+  ...worksheet.sections.map(({ id }): Change => ({ kind: 'remove-section', sectionId: id })),
+  ...sections.map((section, index): Change => ({ kind: 'insert-section', index, section })),
+];
+
 const findingOf = (evaluation: Evaluation, lineId: string, code: FindingCode): LineFinding | undefined =>
   evaluation.findings(lineId).find((finding) => finding.code === code);
 
-function isRepair(repair: Repair, wanted: Golden['repair']): boolean {
+function isRepair(repair: Repair, wanted: NonNullable<Golden['repair']>): boolean {
   switch (repair.kind) {
     case 'entry':
       return repair.entry === wanted.entry;
@@ -63,7 +88,7 @@ function mending(
   worksheet: Worksheet,
   evaluation: Evaluation,
   code: FindingCode,
-  { on, repair, offered }: Golden,
+  { on, repair = {}, offered = false }: Golden,
 ): readonly Change[] {
   const line = lineOf(evaluation, offered ? on : (repair.line ?? on));
   if (offered) {
@@ -95,9 +120,10 @@ describe('golden findings', () => {
   });
 
   describe.each(goldens)('$code', ({ code, golden }) => {
-    const worksheet = sheetOf(golden.lines.join('\n'));
+    const worksheet = worksheetOf(golden.lines, golden.sections);
     const evaluation = new Evaluation(worksheet);
-    const { id } = lineOf(evaluation, golden.on);
+    const line = golden.sections === undefined ? lineOf(evaluation, golden.on) : itemOf(evaluation, code, golden.on);
+    const { id } = line;
 
     it('is found on its line, with its severity, once', () => {
       const found = evaluation.findings(id).filter((finding) => finding.code === code);
@@ -122,7 +148,7 @@ describe('golden findings', () => {
 
     it('stands at a place inside the entry, or nowhere', () => {
       const finding = findingOf(evaluation, id, code);
-      const { entry } = lineOf(evaluation, golden.on);
+      const { entry } = line;
       if (finding?.place === undefined) return;
       expect(finding.place.start).toBeGreaterThanOrEqual(0);
       expect(finding.place.end).toBeLessThanOrEqual(entry.length);
@@ -130,16 +156,19 @@ describe('golden findings', () => {
     });
 
     it(
-      golden.offered
+      golden.offered === true
         ? 'is gone after the repair it offers, and the figure is right'
         : 'is gone once mended by hand, and the figure is right',
       () => {
-        const changes = mending(worksheet, evaluation, code, golden);
+        const { mended, of: result = golden.on } = golden;
+        const changes =
+          mended === undefined ? mending(worksheet, evaluation, code, golden) : replacing(worksheet, mended);
         const repaired = applyAll(worksheet, changes).worksheet;
         evaluation.edit(repaired, changes);
-        expect(findingOf(evaluation, id, code)).toBeUndefined();
-        expect(written(evaluation, id, golden.after)).toBe(golden.after);
-        expect(evaluation.findings(id).filter(({ severity }) => severity !== 'note')).toEqual([]);
+        expect(evaluation.sheetFindings().filter((finding) => finding.code === code)).toEqual([]);
+        const after = golden.sections === undefined ? id : lineOf(evaluation, result).id;
+        expect(written(evaluation, after, golden.after)).toBe(golden.after);
+        expect(evaluation.findings(after).filter(({ severity }) => severity !== 'note')).toEqual([]);
       },
     );
   });

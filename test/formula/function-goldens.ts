@@ -140,6 +140,22 @@ export const FUNCTION_GOLDENS: Readonly<Record<string, FunctionGolden>> = {
     ],
     outside: [],
   },
+  pool: {
+    example: [-95.2357, 'dBm'],
+    derivation: '10 log10(10^−10 + 10^−9.7) = 10 log10 2.995262e-10 = −95.2357',
+    more: [
+      ['pool(40 K; 60 K)', 100, 'K'],
+      ['pool(1 W; 3 W)', 4, 'W'],
+      ['pool(30 dBm; 1 W)', 33.0103, 'dBm'],
+      ['pool(-60 dBc; -60 dBc)', -56.9897, 'dBc'],
+    ],
+    refused: [
+      ['pool()', 'wrong-arguments'],
+      ['pool(3 dBm; 290 K)', 'pool-mixed'],
+      ['pool(-100 dBm; -174 dBm/Hz)', 'pool-mixed'],
+    ],
+    outside: [],
+  },
   rebase: {
     example: [-107.4473, 'dBm'],
     derivation: '10 log10(180/1000) = −7.4473',

@@ -55,9 +55,9 @@ describe('entries as read', () => {
     expect(readEntry(entry).form).toBe(form);
   });
 
-  it('tell the symbols they use, each once, constants among them', () => {
+  it('tell the symbols they use, each once, constants and what may be curves among them', () => {
     const read = readEntry('P + G - L + P + k_B*f(T_0)');
-    expect(read.form === 'expression' && read.symbols).toEqual(['P', 'G', 'L', 'k_B', 'T_0']);
+    expect(read.form === 'expression' && read.symbols).toEqual(['P', 'G', 'L', 'k_B', 'f', 'T_0']);
   });
 });
 

@@ -13,14 +13,16 @@ import {
 } from '../../quantity';
 import { align } from '../alignment';
 import { sayBandwidthsDiffer } from '../bandwidths';
+import { sayPlanesDiffer } from '../planes';
 import { broken, type Context } from '../context';
 import { decibelsOf, describeType, isFieldLike, linearOf } from '../forms';
 import { shiftPlan, type Plan } from '../plan';
 import { overWrittenReference } from '../logarithms';
 import { originOf } from '../products';
 import type { CallTree } from '../tree';
-import type { Checked, DecibelType } from '../types';
+import type { Checked, DecibelType, LinearType } from '../types';
 import { quantityParameter, type FunctionEntry, type StructuralFunction } from './entry';
+import { total } from './choices';
 import { commonMeaning } from './mathematics-shared';
 
 const DEFINITION = 'definition of the decibel, ISO 80000-1 and IEC 60027-3';
@@ -147,10 +149,9 @@ function combinePowers(
 ): Checked {
   const alignment = align(tree, operands, context, true);
   if (alignment?.type.form !== 'decibel') return broken(tree);
-  sayBandwidthsDiffer(
-    operands.map((operand) => ({ tree: operand.tree, text: context.textOf(operand.tree), type: operand.type })),
-    context,
-  );
+  const powers = operands.map(({ tree: part, type }) => ({ tree: part, text: context.textOf(part), type }));
+  sayBandwidthsDiffer(powers, context);
+  sayPlanesDiffer(powers, [], context);
   const plan: Plan = { op: 'apply', name, compute: (...figures) => combine(figures), parameters: alignment.plans };
   const bandwidths = operands.map(({ type }) =>
     type.form === 'decibel' || type.form === 'linear' ? type.bandwidth : undefined,
@@ -166,6 +167,15 @@ function combinePowers(
   };
   return { tree, type, plan, parts: operands };
 }
+
+const powerSumming = combining(
+  'powersum',
+  'The total of powers that do not interfere: incoherent addition.',
+  '10 log₁₀ Σ 10^(xᵢ/10)',
+  DEFINITION,
+  powerSum,
+  'powersum(-100 dBm, -97 dBm)',
+);
 
 const isMoreThan10DbBelow = (depthDb: number): boolean => depthDb > 10;
 
@@ -227,6 +237,50 @@ const ratios: StructuralFunction = {
   },
 };
 
+/** What sort of thing an operand of a pool is: things of one sort have a total. */
+function sortInPool(operand: Checked): string {
+  const { type } = operand;
+  if (type.form !== 'decibel' && type.form !== 'linear') return describeType(type);
+  const isRatio = isDimensionless(type.dimension);
+  const { meaning } = type;
+  if (isRatio && meaning !== undefined && meaning.w === 1 && meaning.u === -1) return 'a signal ratio';
+  if (isRatio && meaning !== undefined && meaning.w === -1 && meaning.u === 1) return 'an impairment ratio';
+  return describeType({ ...type, form: 'linear', degree: 0, sort: 'ratio' });
+}
+
+const pool: StructuralFunction = {
+  form: 'structural',
+  name: 'pool',
+  group: 'Decibels',
+  parameters: [quantityParameter('x', 'contributions of one sort: levels, temperatures, signal or impairment ratios')],
+  repeats: 1,
+  text: 'The total of contributions, each sort in its way: levels as powers, temperatures as they are, signal ratios by reciprocals.',
+  formula: 'powersum of levels, sum of temperatures, ratiosum of ratios',
+  source: DEFINITION,
+  result: 'a quantity of the same sort',
+  example: 'pool(-100 dBm, -97 dBm)',
+  check: (tree, operands, context) => {
+    const [first] = operands;
+    if (first === undefined || operands.some(({ type }) => type.form === 'broken')) return broken(tree);
+    const sort = sortInPool(first);
+    const odd = operands.find((operand) => sortInPool(operand) !== sort);
+    if (odd !== undefined)
+      return context.stop('pool-mixed', tree, {
+        facts: {
+          first: context.textOf(first.tree),
+          firstSort: sort,
+          second: context.textOf(odd.tree),
+          secondSort: sortInPool(odd),
+        },
+        repairs: [],
+      });
+    const isRatio = sort === 'a signal ratio' || sort === 'an impairment ratio';
+    const isLinear = operands.every(({ type }) => type.form === 'linear');
+    const way = isRatio ? ratios : isLinear ? total : powerSumming;
+    return way.check({ ...tree, name: way.name }, operands, context);
+  },
+};
+
 const rebase: StructuralFunction = {
   form: 'structural',
   name: 'rebase',
@@ -283,14 +337,7 @@ const rebase: StructuralFunction = {
 export const DECIBEL_FUNCTIONS: readonly FunctionEntry[] = [
   toDecibels,
   toLinear,
-  combining(
-    'powersum',
-    'The total of powers that do not interfere: incoherent addition.',
-    '10 log₁₀ Σ 10^(xᵢ/10)',
-    DEFINITION,
-    powerSum,
-    'powersum(-100 dBm, -97 dBm)',
-  ),
+  powerSumming,
   difference,
   combining(
     'fieldsum',
@@ -309,5 +356,6 @@ export const DECIBEL_FUNCTIONS: readonly FunctionEntry[] = [
     'meanpower(0 dBm, -30 dBm)',
   ),
   ratios,
+  pool,
   rebase,
 ];

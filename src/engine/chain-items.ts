@@ -1,0 +1,136 @@
+/**
+ * A chain as items: what is typed of each stage as lines with entries, and from them, stage by stage, what the signal, the noise
+ * and the intercepts have come to behind each stage, and the chain's outputs.
+ * Holds: everything is referred to the chain's input; a bypassed stage passes on what stands ahead of it; what the stages do not
+ * give is not there, and never guessed.
+ */
+import {
+  blockingDb,
+  figureOfTemperatureDb,
+  noiseBehindDbm,
+  productLevelDbm,
+  riseDb,
+  spuriousFreeRangeDb,
+  REFERENCE_TEMPERATURE_K,
+} from '../radio';
+import type { ChainSection } from '../worksheet';
+import { ChainBuilder, type Ref } from './chain-builder';
+import { addFirstStageCheck, addSourceCheck, addStageChecks } from './chain-checks';
+import { addShares, addStage, START, type Running } from './chain-stages';
+import type { Item } from './item';
+
+/** All items of a chain: its inputs, each stage's values and running values, its outputs. */
+export function expandChain(chain: ChainSection): readonly Item[] {
+  const builder = new ChainBuilder(chain);
+  const inputs = {
+    signal: builder.input('signal', 'wanted level at the input', 'dBm', 'level', 'wanted'),
+    noise: builder.input('noise', 'source noise temperature', 'K', 'temperature'),
+    bandwidth: builder.input('bandwidth', 'bandwidth', 'Hz', 'bandwidth'),
+    interferer: builder.input('interferer', 'interferer at the input', 'dBm', 'level', 'unwanted'),
+  };
+  const source: Ref = inputs.noise ?? REFERENCE_TEMPERATURE_K;
+  if (chain.stages.length > 0) addInputPlane(builder, inputs, source);
+  let running: Running = { ...START, ...inputs, source };
+  const stages = chain.stages.map((stage) => {
+    const refs = addStage(builder, stage, running);
+    running = refs.behind;
+    return refs;
+  });
+  if (stages.length === 0) return builder.items;
+  addOutputs(builder, running);
+  addShares(builder, stages, running);
+  for (const refs of stages) addStageChecks(builder, refs);
+  addFirstStageCheck(builder, stages);
+  addSourceCheck(builder, stages, source);
+  return builder.items;
+}
+
+interface Inputs {
+  readonly signal: Ref | undefined;
+  readonly noise: Ref | undefined;
+  readonly bandwidth: Ref | undefined;
+}
+
+function addInputPlane(builder: ChainBuilder, { signal, bandwidth }: Inputs, source: Ref): void {
+  const plane = builder.plane(0, undefined);
+  const noise = builder.derive('in.noise', 'noise at the input', 'dBm', [source, bandwidth], noiseAtInput, {
+    quantity: 'level',
+    side: 'unwanted',
+    plane,
+  });
+  builder.derive('in.signal', 'wanted level at the input', 'dBm', [signal], (level = NaN) => level, {
+    quantity: 'level',
+    side: 'wanted',
+    plane,
+  });
+  builder.difference('in.snr', 'S/N at the input', signal, noise, { quantity: 'signal ratio' });
+}
+
+const noiseAtInput = (kelvin = NaN, bandwidthHz = NaN): number => noiseBehindDbm(kelvin, bandwidthHz, 0);
+
+function addOutputs(builder: ChainBuilder, running: Running): void {
+  const { gain, temperature, intercept, intercept2, compression, source, bandwidth, signal, interferer } = running;
+  const input = builder.plane(0, undefined);
+  const plane = builder.plane(gain, running.last);
+  builder.copy('gain', 'gain', 'dB', gain, { quantity: 'gain' });
+  builder.derive('nf', 'noise figure', 'dB', [temperature], figureOfTemperatureDb, {
+    quantity: 'noise figure',
+  });
+  builder.copy('te', 'noise temperature', 'K', temperature, { quantity: 'temperature', plane: input });
+  const system = builder.derive('tsys', 'system noise temperature at the input', 'K', [source, temperature], plus, {
+    quantity: 'temperature',
+    plane: input,
+  });
+  const level = { quantity: 'level' } as const;
+  builder.copy('iip3', 'third-order input intercept', 'dBm', intercept, level);
+  builder.derive('oip3', 'third-order output intercept', 'dBm', [intercept, gain], plus, level);
+  builder.copy('iip2', 'second-order input intercept', 'dBm', intercept2, level);
+  builder.derive('oip2', 'second-order output intercept', 'dBm', [intercept2, gain], plus, level);
+  builder.copy('ip1db', 'input level for 1 dB compression', 'dBm', compression, level);
+  builder.derive('op1db', 'output level at 1 dB compression', 'dBm', [compression, gain], outputCompression, level);
+  const floor = builder.derive('mds', 'minimum detectable signal', 'dBm', [system, bandwidth], noiseAtInput, level);
+  builder.derive('sfdr', 'spurious-free dynamic range', 'dB', [intercept, floor], spuriousFreeRangeDb);
+  const output = builder.copy('signal', 'wanted level at the output', 'dBm', running.signalBehind, {
+    ...level,
+    side: 'wanted',
+    plane,
+  });
+  const noise = builder.copy('noise', 'noise at the output', 'dBm', running.noiseBehind, {
+    ...level,
+    side: 'unwanted',
+    plane,
+  });
+  builder.difference('snr', 'S/N at the output', output, noise, { quantity: 'signal ratio' });
+  const tone = interferer ?? signal;
+  const selective = running.selectiveIntercept ?? intercept;
+  const unwanted = { ...level, side: 'unwanted', plane } as const;
+  const products = builder.derive(
+    'im3',
+    'third-order products at the output',
+    'dBm',
+    [tone, selective, gain],
+    third,
+    unwanted,
+  );
+  builder.derive('im2', 'second-order products at the output', 'dBm', [tone, intercept2, gain], second, unwanted);
+  if (interferer === undefined) return;
+  builder.derive('rise', 'rise of the noise by third-order products', 'dB', [products, noise], riseDb);
+  builder.derive(
+    'blocking',
+    'gain lost beside the interferer',
+    'dB',
+    [interferer, running.blockedIntercept],
+    blockingDb,
+    {
+      quantity: 'loss',
+    },
+  );
+}
+
+type Compute = (...values: number[]) => number;
+
+const plus: Compute = (a = NaN, b = NaN) => a + b;
+/** At 1 dB compression the gain is 1 dB less. */
+const outputCompression: Compute = (input = NaN, gain = NaN) => input + gain - 1;
+const third: Compute = (tone = NaN, intercept = NaN, gain = NaN) => productLevelDbm(tone, intercept, gain, 3);
+const second: Compute = (tone = NaN, intercept = NaN, gain = NaN) => productLevelDbm(tone, intercept, gain, 2);
