@@ -25,6 +25,8 @@ export interface Selection {
   readonly lines: readonly Line[];
   readonly findings: readonly LineFinding[];
   readonly linear: boolean;
+  /** True when lines were asked for by their symbols. */
+  readonly isByName: boolean;
 }
 
 /** Evaluates a file. Findings and the exit code are those of the chosen lines and cases. */
@@ -33,15 +35,22 @@ export function evaluateFile(file: string, options: EvaluateOptions, world: Worl
   const { evaluation } = opened;
   const cases = chooseCases(opened, options.cases);
   const chosen = new Set(options.lines.map((symbol) => lineWithSymbol(opened, symbol).id));
-  const lines = evaluation.lines().filter(({ id }) => chosen.size === 0 || chosen.has(id));
+  const isChosen = (id: string): boolean =>
+    chosen.size === 0 ? evaluation.originOf(id) === undefined || isGiven(evaluation, id, cases) : chosen.has(id);
+  const lines = evaluation.lines().filter(({ id }) => isChosen(id));
   const caseIds = new Set(cases.map(({ id }) => id));
   const findings = evaluation
     .sheetFindings()
     .filter(({ lineId }) => chosen.size === 0 || chosen.has(lineId))
     .map((finding) => ({ ...finding, caseIds: finding.caseIds.filter((id) => caseIds.has(id)) }))
     .filter(({ caseIds: found }) => found.length > 0);
-  const selection = { evaluation, cases, lines, findings, linear: options.linear };
+  const selection = { evaluation, cases, lines, findings, linear: options.linear, isByName: chosen.size > 0 };
   return { results: write(selection, options.format), messages: opened.messages, exitCode: exitCodeOf(selection) };
+}
+
+/** True unless a chain or pool has nothing to give there in any case. */
+function isGiven(evaluation: Evaluation, lineId: string, cases: readonly Case[]): boolean {
+  return cases.some(({ id }) => evaluation.figure(lineId, id).state !== 'empty');
 }
 
 function write(selection: Selection, format: Format): string {
@@ -58,7 +67,7 @@ function write(selection: Selection, format: Format): string {
 }
 
 /** 1 when an error finding or a requirement that is not met, or not known to be, is among what was chosen. */
-export function exitCodeOf({ evaluation, cases, lines, findings }: Omit<Selection, 'linear'>): ExitCode {
+export function exitCodeOf({ evaluation, cases, lines, findings }: Omit<Selection, 'linear' | 'isByName'>): ExitCode {
   const hasError = findings.some(({ severity }) => severity === 'error');
   const hasUnmet = lines.some((line) => cases.some(({ id }) => isUnmet(line, evaluation.reading(line.id, id))));
   return hasError || hasUnmet ? 1 : 0;
@@ -68,6 +77,7 @@ export function exitCodeOf({ evaluation, cases, lines, findings }: Omit<Selectio
 function asJson({ evaluation, cases, lines, findings }: Selection): unknown {
   const byName = Object.create(null) as Record<string, unknown>;
   const names = new Map(lines.map((line) => [line.id, nameOfLine(evaluation, line)]));
+  for (const { lineId } of findings) if (!names.has(lineId)) names.set(lineId, nameOfOther(evaluation, lineId));
   for (const line of lines) byName[names.get(line.id) ?? line.id] = lineAsJson(evaluation, line, cases);
   return {
     title: evaluation.worksheet.title,
@@ -85,6 +95,12 @@ function asJson({ evaluation, cases, lines, findings }: Selection): unknown {
       })),
     ),
   };
+}
+
+/** What a finding is on that is no line of the account: the stage's value, or else the stage or the chain. */
+function nameOfOther(evaluation: Evaluation, lineId: string): string {
+  const line = evaluation.line(lineId);
+  return line === undefined ? lineId : line.symbol || line.label;
 }
 
 /** The first repair in words: the new entry, the unit or the kind. */

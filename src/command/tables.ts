@@ -5,7 +5,7 @@
 import type { Figure } from '../engine';
 import { linearFigure, linearValue, writeQuantity } from '../quantity';
 import { CAUTIONS } from '../review';
-import { isLinesSection, type Line } from '../worksheet';
+import { isLinesSection, type Line, type Worksheet } from '../worksheet';
 import type { Selection } from './evaluate';
 import { oneLine } from './plain-text';
 import { boundText, standingText } from './requirement-text';
@@ -66,11 +66,34 @@ const headOf = ({ cases }: Selection): string[] =>
 
 /** Lines by section, sections without chosen lines left out. */
 function sectionsOf({ evaluation, lines }: Selection): { title: string; lines: readonly Line[] }[] {
-  const chosen = new Set(lines);
-  return evaluation.worksheet.sections
-    .filter(isLinesSection)
-    .map(({ title, lines: all }) => ({ title, lines: all.filter((line) => chosen.has(line)) }))
-    .filter((section) => section.lines.length > 0);
+  const bySection = new Map<string, Line[]>();
+  const homes = new Map(allLinesWithSection(evaluation.worksheet));
+  for (const line of lines) {
+    const sectionId = homes.get(line.id) ?? evaluation.originOf(line.id)?.sectionId ?? '';
+    const known = bySection.get(sectionId);
+    if (known === undefined) bySection.set(sectionId, [line]);
+    else known.push(line);
+  }
+  return evaluation.worksheet.sections.flatMap(({ id, title }) => {
+    const own = bySection.get(id);
+    return own === undefined ? [] : [{ title, lines: own }];
+  });
+}
+
+const allLinesWithSection = ({ sections }: Worksheet): [string, string][] =>
+  sections.flatMap((section) =>
+    isLinesSection(section) ? section.lines.map(({ id }): [string, string] => [id, section.id]) : [],
+  );
+
+/** As `sectionsOf`, for people: what has come about behind each stage of a chain is left to other formats. */
+function sectionsToRead(selection: Selection): { title: string; lines: readonly Line[] }[] {
+  const isToRead = ({ id, entry }: Line): boolean => {
+    const origin = selection.evaluation.originOf(id);
+    return origin?.stageId === undefined || entry !== '' || selection.isByName;
+  };
+  return sectionsOf(selection)
+    .map(({ title, lines }) => ({ title, lines: lines.filter(isToRead) }))
+    .filter(({ lines }) => lines.length > 0);
 }
 
 function findingTexts({ evaluation, findings, cases }: Selection): string[] {
@@ -89,7 +112,7 @@ const columnsOf = (text: string): number => Array.from(text).length;
 /** Columns padded to their widest cell; trailing blanks are dropped. */
 export function writeText(selection: Selection): string {
   const head = headOf(selection);
-  const sections = sectionsOf(selection).map(({ title, lines }) => ({ title, rows: rowsOf(selection, lines) }));
+  const sections = sectionsToRead(selection).map(({ title, lines }) => ({ title, rows: rowsOf(selection, lines) }));
   const all = [head, ...sections.flatMap(({ rows }) => rows.map(({ cells }) => cells))];
   const widths = head.map((_, column) => Math.max(...all.map((cells) => columnsOf(cells[column] ?? ''))));
   const isFigure = (column: number): boolean => column >= 2 && column < head.length - 1;
@@ -125,7 +148,7 @@ export function writeMarkdown(selection: Selection): string {
   const findings = findingTexts(selection);
   return [
     `# ${escapeMarkdown(selection.evaluation.worksheet.title)}`,
-    ...sectionsOf(selection).flatMap(({ title, lines }) => [
+    ...sectionsToRead(selection).flatMap(({ title, lines }) => [
       '',
       `## ${escapeMarkdown(title)}`,
       '',
