@@ -35,6 +35,15 @@ const page: ViteUserConfig = {
     // Inlined data: fonts and images would be stopped by the content security policy.
     assetsInlineLimit: 0,
     modulePreload: { polyfill: false },
+    // Importing a module of the project does nothing but define, save for styles and the start itself. Without this the index
+    // of a folder draws all of that folder into the script for the start, also what only a dialog uses.
+    rolldownOptions: {
+      treeshake: {
+        moduleSideEffects: [
+          { test: /[\\/]src[\\/](?:.*[\\/])?(?!main\.ts$)[^\\/?]*\.(?:ts|svelte)$/, sideEffects: false },
+        ],
+      },
+    },
   },
   worker: { format: 'es' },
   preview: {

@@ -1,10 +1,12 @@
 /**
  * `npm run bench`: load, full recompute, and one edit to settled values, for each sheet, in milliseconds (medians), with ratios
- * to hand-written closures in the same process. Prints one JSON object and nothing else.
+ * to hand-written closures in the same process; and the page's script, built into the folder named by the first argument, in
+ * gzipped bytes. Prints one JSON object and nothing else.
  */
 import { Evaluation } from '../../src/engine';
 import { applyChange, type Worksheet } from '../../src/worksheet';
 import { handChain, handFanOut, handLattice, handTens, type Baseline } from './closures';
+import { scriptSize } from './script-size';
 import { budget, chain, fanOut, lattice, tens } from './sheets';
 
 const COUNT = 10_000;
@@ -127,6 +129,8 @@ const sixtyEdit = time((round) => {
 }, 200);
 const withheld = evaluation.sheetFindings().filter(({ severity }) => severity === 'error').length;
 
+const pageFolder = process.argv[2];
+
 process.stdout.write(
   `${JSON.stringify(
     {
@@ -139,6 +143,7 @@ process.stdout.write(
         fullRecomputeMs: time(() => evaluation.recomputeAll(), 200),
         editMs: sixtyEdit,
       },
+      ...(pageFolder === undefined ? {} : { script: scriptSize(pageFolder) }),
     },
     null,
     2,

@@ -1,5 +1,6 @@
-// Builds the benchmark as the page is built, bundled and minified, and runs it on Node. Only the benchmark writes to
-// standard output (one JSON document); the bundler's messages go to standard error.
+// Builds the benchmark as the page is built, bundled and minified, and runs it on Node; and builds the page itself, whose
+// script is weighed. Only the benchmark writes to standard output (one JSON document); the bundler's messages go to standard
+// error.
 import { spawnSync } from 'node:child_process';
 import { fileURLToPath } from 'node:url';
 
@@ -16,5 +17,9 @@ const node = (words, output) => {
   if (result.status !== 0) process.exit(result.status ?? 1);
 };
 
-node(['node_modules/vite/bin/vite.js', 'build', '--mode', 'bench', '--logLevel', 'error'], 2);
-node(['--expose-gc', 'node_modules/.cache/levelwright-bench/bench.js', ...process.argv.slice(2)], 'inherit');
+const vite = 'node_modules/vite/bin/vite.js';
+const page = `${root}node_modules/.cache/levelwright-bench-page`;
+
+node([vite, 'build', '--mode', 'bench', '--logLevel', 'error'], 2);
+node([vite, 'build', '--outDir', page, '--manifest', '--logLevel', 'error'], 2);
+node(['--expose-gc', 'node_modules/.cache/levelwright-bench/bench.js', page], 'inherit');

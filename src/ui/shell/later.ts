@@ -1,3 +1,5 @@
-/** What the page needs only after it stands: dialogs and the print view, in one script of their own. */
+/** What the page needs only after its first view stands: the side panel, search, dialogs, the print view: one script of their own. */
 export { default as DialogSet } from './DialogSet.svelte';
+export { default as PanelHost } from './PanelHost.svelte';
 export { default as PrintHost } from './PrintHost.svelte';
+export { default as SearchBar } from './SearchBar.svelte';
