@@ -27,8 +27,15 @@ export class ChainBuilder {
   readonly items: Item[] = [];
   /** How the chain is called in sentences. */
   readonly name: string;
+  /** Symbols that several stages have: none of them can be called by it. */
+  readonly #ambiguous = new Set<string>();
 
   constructor(readonly chain: ChainSection) {
+    const met = new Set<string>();
+    for (const { symbol } of chain.stages) {
+      if (met.has(symbol)) this.#ambiguous.add(symbol);
+      met.add(symbol);
+    }
     this.name = chain.title || chain.symbol || 'the chain';
   }
 
@@ -158,8 +165,7 @@ export class ChainBuilder {
 
   /** `lna.gain`; nothing for a stage that cannot be called. */
   private part(stage: Stage, part: string): string {
-    const isAlone = this.chain.stages.every((other) => other === stage || other.symbol !== stage.symbol);
-    return stage.symbol === '' || !isAlone ? '' : `${stage.symbol}.${part}`;
+    return stage.symbol === '' || this.#ambiguous.has(stage.symbol) ? '' : `${stage.symbol}.${part}`;
   }
 
   private add(

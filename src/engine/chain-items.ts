@@ -13,14 +13,48 @@ import {
   spuriousFreeRangeDb,
   REFERENCE_TEMPERATURE_K,
 } from '../radio';
-import type { ChainSection } from '../worksheet';
+import { CHAIN_INPUTS, saysAnything, STAGE_FIELDS, type ChainSection } from '../worksheet';
 import { ChainBuilder, type Ref } from './chain-builder';
 import { addFirstStageCheck, addSourceCheck, addStageChecks } from './chain-checks';
 import { addShares, addStage, START, type Running } from './chain-stages';
-import type { Item } from './item';
+import type { Derived, Item } from './item';
 
-/** All items of a chain: its inputs, each stage's values and running values, its outputs. */
+/** Derived parts of chains by their structure: which stages there are, what they say, and what they are called. */
+const structures = new Map<string, readonly (Derived | undefined)[]>();
+const STRUCTURES_LIMIT = 50;
+
+/**
+ * All items of a chain: its inputs, each stage's values and running values, its outputs. A chain that says the same things in
+ * the same places has the same derived parts, so that typing another figure leaves all but that figure as it was.
+ */
 export function expandChain(chain: ChainSection): readonly Item[] {
+  const items = buildChain(chain);
+  const key = structureOf(chain);
+  const known = structures.get(key);
+  if (known !== undefined)
+    return items.map((item, i) => (known[i] === undefined ? item : { ...item, derived: known[i] }));
+  if (structures.size >= STRUCTURES_LIMIT) structures.clear();
+  structures.set(
+    key,
+    items.map(({ derived }) => derived),
+  );
+  return items;
+}
+
+/** All that the derived parts depend on, as a text. */
+function structureOf({ id, symbol, title, intercept, stages, ...inputs }: ChainSection): string {
+  const said = CHAIN_INPUTS.filter((input) => (inputs[input] ?? '').trim() !== '');
+  const parts = stages.map((stage) => [
+    stage.id,
+    stage.symbol,
+    stage.label,
+    stage.off === true,
+    STAGE_FIELDS.filter((field) => saysAnything(stage, field)),
+  ]);
+  return JSON.stringify([id, symbol, title, intercept, said, parts]);
+}
+
+function buildChain(chain: ChainSection): readonly Item[] {
   const builder = new ChainBuilder(chain);
   const inputs = {
     signal: builder.input('signal', 'wanted level at the input', 'dBm', 'level', 'wanted'),

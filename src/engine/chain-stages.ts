@@ -12,7 +12,7 @@ import {
   REFERENCE_TEMPERATURE_K,
 } from '../radio';
 import { powerSum } from '../quantity';
-import { STAGE_FIELDS, type ChainSection, type Stage, type StageField } from '../worksheet';
+import { saysAnything, STAGE_FIELDS, type ChainSection, type Stage, type StageField } from '../worksheet';
 import { decibels, nameOf, type About, type ChainBuilder, type Ref } from './chain-builder';
 import { STAGE_PARTS } from './chain-parts';
 
@@ -140,7 +140,7 @@ const noiseLevel: Compute = (source = NaN, chain = NaN, bandwidthHz = NaN, gainD
 /** What is typed of the stage, and what follows from it alone. */
 function addValues(builder: ChainBuilder, stage: Stage, ahead: Running): Own {
   const typed: Partial<Record<StageField, Ref>> = {};
-  for (const field of STAGE_FIELDS) if (isSaid(stage, field)) typed[field] = builder.cell(stage, field);
+  for (const field of STAGE_FIELDS) if (saysAnything(stage, field)) typed[field] = builder.cell(stage, field);
   const gain = typed.gain ?? 0;
   const about = { quantity: 'temperature', stage, plane: builder.plane(ahead.gain, ahead.last) } as const;
   const temperature =
@@ -195,11 +195,6 @@ function addValues(builder: ChainBuilder, stage: Stage, ahead: Running): Own {
     outputCompression: compression.output,
   };
 }
-
-/** True when the stage says something there, in any case. */
-const isSaid = (stage: Stage, field: StageField): boolean =>
-  (stage[field] ?? '').trim() !== '' ||
-  Object.values(stage.byCase ?? {}).some((values) => (values[field] ?? '').trim() !== '');
 
 /** The running values with one more stage. They have no symbols of their own: the copies behind the stage have. */
 function pass(builder: ChainBuilder, own: Own, ahead: Running): Running {

@@ -32,13 +32,11 @@ export class Evaluation {
   private findingCache = new Map<string, readonly LineFinding[]>();
   private sheetCache: readonly LineFinding[] | undefined;
   private around = new Set<Node>();
-  private byId: Map<string, Item>;
   private edits = 0;
 
   constructor(worksheet: Worksheet) {
     this.current = worksheet;
     this.graph = buildGraph(worksheet, undefined, this.figuring.newSlot);
-    this.byId = itemsById(this.graph);
     this.figuring.setOrder(this.graph.order);
     this.settleStale(this.graph.order, new Set(), true);
     this.figuring.run([]);
@@ -75,14 +73,14 @@ export class Evaluation {
     if (change.kind !== 'set-line' || change.field === 'symbol' || change.field === 'byCase') return undefined;
     // The finding on a second line with a symbol quotes the label of the first.
     if (change.field === 'label' && this.graph.hasDuplicates) return undefined;
-    const before = this.byId.get(change.lineId);
+    const before = this.graph.byId.get(change.lineId);
     const nodes = this.graph.nodes.get(change.lineId);
     if (before === undefined || nodes === undefined) return undefined;
     // Which lines a pool's total counts depends on them.
     if (before.alias !== undefined && (change.field === 'off' || change.field === 'entry')) return undefined;
     const line: Line = { ...before.line, [change.field]: change.value };
     const item: Item = { ...before, line };
-    this.byId.set(line.id, item);
+    this.graph.byId.set(line.id, item);
     const stale: Node[] = [];
     for (const node of nodes.values()) {
       const symbols = node.symbols;
@@ -99,7 +97,6 @@ export class Evaluation {
   private rebuild(next: Worksheet): Pass {
     const before = this.graph;
     this.graph = buildGraph(next, before, this.figuring.newSlot);
-    this.byId = itemsById(this.graph);
     const kept = new Set(this.graph.order);
     const dropped = before.order.filter((node) => !kept.has(node));
     for (const node of dropped) this.around.delete(node);
@@ -107,7 +104,7 @@ export class Evaluation {
     this.figuring.setOrder(this.graph.order);
     const touched = new Set<string>();
     // Lines that lost a node of their own now read the shared one.
-    for (const { lineId } of dropped) if (this.byId.has(lineId)) touched.add(lineId);
+    for (const { lineId } of dropped) if (this.graph.byId.has(lineId)) touched.add(lineId);
     this.settleStale(
       this.graph.order.filter(({ isStale }) => isStale),
       touched,
@@ -145,7 +142,10 @@ export class Evaluation {
       const node = open[at] as Node;
       queued.delete(node);
       touched.add(node.lineId);
-      if (!this.checkNode(node)) continue;
+      const stood = standing(node);
+      const looksDifferent = this.checkNode(node);
+      if (stood !== standing(node)) touchDerived(node, touched);
+      if (!looksDifferent) continue;
       for (const user of node.users) {
         if (queued.has(user) || user.rank < node.rank) continue;
         queued.add(user);
@@ -195,7 +195,7 @@ export class Evaluation {
   reading(lineId: string, caseId: string): Reading {
     const node = nodeIn(this.graph, lineId, caseId);
     if (node === undefined) return { figure: { state: 'empty' } };
-    return readingOf(node, present(this.byId.get(lineId), 'line').line, this.figuring);
+    return readingOf(node, present(this.graph.byId.get(lineId), 'line').line, this.figuring);
   }
 
   /** The figure alone. */
@@ -224,7 +224,7 @@ export class Evaluation {
   findings(lineId: string): readonly LineFinding[] {
     const known = this.findingCache.get(lineId);
     if (known !== undefined) return known;
-    const line = this.byId.get(lineId)?.line;
+    const line = this.graph.byId.get(lineId)?.line;
     const found =
       line === undefined
         ? []
@@ -341,17 +341,17 @@ export class Evaluation {
   /** The line that a symbol stands for. */
   lineOf(symbol: string): Line | undefined {
     const holder = this.graph.holders.get(symbol);
-    return holder === undefined ? undefined : this.byId.get(holder.line.id)?.line;
+    return holder === undefined ? undefined : this.graph.byId.get(holder.line.id)?.line;
   }
 
   /** The line with this id, as of the last edit. */
   line(lineId: string): Line | undefined {
-    return this.byId.get(lineId)?.line;
+    return this.graph.byId.get(lineId)?.line;
   }
 
   /** Where a line stands that is none of the worksheet's own: in which chain, pool or curve. */
   originOf(lineId: string): ItemPlace | undefined {
-    return this.byId.get(lineId)?.origin;
+    return this.graph.byId.get(lineId)?.origin;
   }
 
   /** Every line that has a figure of its own in the account, in its order: what chains and pools give among them. */
@@ -363,7 +363,22 @@ export class Evaluation {
   }
 }
 
-const itemsById = ({ items }: Graph): Map<string, Item> => new Map(items.map((item) => [item.line.id, item]));
+/** What decides whether derived figures above a node are missing or wait: it can change while no figure does. */
+const standing = ({ result, barred }: Node): string =>
+  barred !== undefined || result.isInError ? 'at fault' : result.isEmpty ? 'empty' : 'there';
+
+/** Adds the derived items that rest on a node, through derived items alone. */
+function touchDerived(node: Node, touched: Set<string>): void {
+  const seen = new Set<Node>();
+  const open = [node];
+  for (let next = open.pop(); next !== undefined; next = open.pop())
+    for (const user of next.users) {
+      if (!user.isDerived || seen.has(user)) continue;
+      seen.add(user);
+      touched.add(user.lineId);
+      open.push(user);
+    }
+}
 
 const sameSymbols = (a: readonly string[], b: readonly string[]): boolean =>
   a.length === b.length && a.every((symbol, index) => symbol === b[index]);

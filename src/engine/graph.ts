@@ -10,6 +10,8 @@ import { Node } from './node';
 
 export interface Graph {
   readonly items: readonly Item[];
+  /** Items by id, as of the last edit. */
+  readonly byId: Map<string, Item>;
   /** The item that holds each symbol: the first one, where several claim it. */
   readonly holders: ReadonlyMap<string, Item>;
   /** Nodes by line id; the shared one under the empty case id. */
@@ -37,15 +39,22 @@ export function buildGraph(worksheet: Worksheet, before: Graph | undefined, newS
       if (symbol !== undefined && symbol !== '' && !RESERVED.has(symbol) && !holders.has(symbol))
         holders.set(symbol, item);
   const differing = findDiffering(worksheet, items, holders);
-  const nodes = new Map<string, Map<string, Node>>();
+  const nodes = new Map<string, ReadonlyMap<string, Node>>();
+  const byId = new Map<string, Item>();
   for (const item of items) {
     const { line } = item;
+    byId.set(line.id, item);
+    const cases = differing.get(line.id);
+    const known = before?.nodes.get(line.id);
+    if (known !== undefined && cases === undefined && known.size === 1 && known.has('')) {
+      nodes.set(line.id, known);
+      continue;
+    }
     const own = new Map<string, Node>();
     const make = (key: string, caseId: string | null, entry: string): void => {
-      const old = before?.nodes.get(line.id)?.get(key);
+      const old = known?.get(key);
       own.set(key, old ?? new Node(newSlot(), item, caseId, entry));
     };
-    const cases = differing.get(line.id);
     if (cases === undefined || cases.size < worksheet.cases.length) make('', null, line.entry);
     for (const caseId of cases ?? []) make(caseId, caseId, entryOf(line, caseId));
     nodes.set(line.id, own);
@@ -53,6 +62,7 @@ export function buildGraph(worksheet: Worksheet, before: Graph | undefined, newS
   const order = connect({ items, holders, nodes });
   return {
     items,
+    byId,
     holders,
     nodes,
     order,
@@ -161,7 +171,7 @@ function connect(graph: Pick<Graph, 'items' | 'holders' | 'nodes'>): Node[] {
       all.push(node);
     }
   }
-  for (const node of all) node.users = [];
+  for (const node of all) node.users.length = 0;
   for (const node of all) {
     const inputs = inputsOf(graph, node);
     const isSame = inputs.length === node.inputs.length && inputs.every((input, index) => input === node.inputs[index]);
@@ -174,37 +184,27 @@ function connect(graph: Pick<Graph, 'items' | 'holders' | 'nodes'>): Node[] {
 
 /** Kahn's algorithm; what is left over are loops and what rests on them. */
 function sortNodes(all: readonly Node[]): Node[] {
-  const waiting = new Map<Node, number>();
+  // The list of what is ready is the order itself: what is appended to it has its place.
   const order: Node[] = [];
-  const ready: Node[] = [];
   for (const node of all) {
-    if (node.inputs.length === 0) ready.push(node);
-    else waiting.set(node, node.inputs.length);
+    node.pending = node.inputs.length;
+    if (node.pending === 0) order.push(node);
   }
+  let next = 0;
   const run = (): void => {
-    for (let next = 0; next < ready.length; next++) {
-      const node = ready[next] as Node;
-      node.rank = order.length;
-      order.push(node);
-      for (const user of node.users) {
-        const left = waiting.get(user);
-        if (left === undefined) continue;
-        if (left > 1) waiting.set(user, left - 1);
-        else {
-          waiting.delete(user);
-          ready.push(user);
-        }
-      }
+    for (; next < order.length; next++) {
+      const node = order[next] as Node;
+      node.rank = next;
+      for (const user of node.users) if (user.pending > 0 && --user.pending === 0) order.push(user);
     }
-    ready.length = 0;
   };
   run();
-  if (waiting.size > 0) {
-    for (const node of findLoops([...waiting.keys()])) {
+  if (order.length < all.length) {
+    for (const node of findLoops(all.filter(({ pending }) => pending > 0))) {
       node.barred = { code: 'loop' };
       markStale(node);
-      waiting.delete(node);
-      ready.push(node);
+      node.pending = 0;
+      order.push(node);
     }
     run();
   }

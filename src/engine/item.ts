@@ -9,6 +9,7 @@ import type { QuantityKind, Side } from '../quantity';
 import {
   isChainSection,
   isCurveSection,
+  isLinesSection,
   isPoolSection,
   type CurveSection,
   type Line,
@@ -75,13 +76,23 @@ function expand(section: Section): readonly Item[] {
     const lines = section.lines.map((line, i): Item => ({ line, alias: `${section.symbol}.line${String(i + 1)}` }));
     return [...lines, poolTotal(section)];
   }
-  if (section.kind === 'lines' && 'lines' in section) return section.lines.map((line) => ({ line }));
+  if (isLinesSection(section)) return section.lines.map(itemOfLine);
   if (isChainSection(section)) return expandChain(section);
   if (isCurveSection(section)) {
     const line: Line = { id: section.id, symbol: section.symbol, label: section.title, entry: '' };
     return [{ line, origin: { sectionId: section.id }, curve: section }];
   }
   return [];
+}
+
+const ofLines = new WeakMap<Line, Item>();
+
+function itemOfLine(line: Line): Item {
+  const known = ofLines.get(line);
+  if (known !== undefined) return known;
+  const item = { line };
+  ofLines.set(line, item);
+  return item;
 }
 
 /** An id that no line of a file has: control characters do not come in files. */

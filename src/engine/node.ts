@@ -38,6 +38,8 @@ export class Node {
   users: Node[] = [];
   /** Place in the topological order. */
   rank = 0;
+  /** While nodes are being put in order: inputs that have no place yet. */
+  pending = 0;
   /** True while the entry has to be checked again. */
   isStale = true;
 
@@ -66,6 +68,7 @@ export class Node {
 
   /** Takes the line's present text; the node becomes stale when what the checker sees has changed. */
   take(item: Item, entry: string): void {
+    if (item === this.item && entry === this.entry) return;
     const { line } = item;
     const before = this.line;
     const changed =

@@ -67,7 +67,8 @@ function isMissing(node: Node, figures: Figures): boolean {
 }
 
 const withheldInputs = (node: Node, figures: Figures): Node[] =>
-  node.inputs.filter(({ slot }) => Number.isNaN(figures.values[slot]));
+  // A curve has no figure of its own; one that can be called is no reason to wait.
+  node.inputs.filter(({ slot, result }) => result.curve === undefined && Number.isNaN(figures.values[slot]));
 
 /** Why a plan whose inputs have figures has none itself. */
 export function diagnose(plan: Plan, figures: Figures): { readonly code: FindingCode; readonly why: string } {

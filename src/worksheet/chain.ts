@@ -77,3 +77,11 @@ export function stageOverrideIn(stage: Stage, field: StageField, caseId: string)
   const text = byCase !== undefined && Object.hasOwn(byCase, caseId) ? byCase[caseId]?.[field] : undefined;
   return text === undefined || text.trim() === '' ? undefined : text;
 }
+
+/** True when the stage says something there, in any case. */
+export function saysAnything(stage: Stage, field: StageField): boolean {
+  if ((stage[field] ?? '').trim() !== '') return true;
+  return (
+    stage.byCase !== undefined && Object.values(stage.byCase).some((values) => (values[field] ?? '').trim() !== '')
+  );
+}

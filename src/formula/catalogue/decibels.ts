@@ -20,7 +20,7 @@ import { shiftPlan, type Plan } from '../plan';
 import { overWrittenReference } from '../logarithms';
 import { originOf } from '../products';
 import type { CallTree } from '../tree';
-import type { Checked, DecibelType, LinearType } from '../types';
+import type { Checked, DecibelType } from '../types';
 import { quantityParameter, type FunctionEntry, type StructuralFunction } from './entry';
 import { total } from './choices';
 import { commonMeaning } from './mathematics-shared';
