@@ -123,6 +123,8 @@ test('search finds labels, entries and notes, in folded sections too', async ({ 
   await expect(bar.getByRole('status')).toHaveText('4 lines');
   await sheet.account.press('Enter');
   await expect(bar.getByRole('status')).toHaveText('1 of 4');
+  // What is found is marked where it stands, and no longer once the search is closed.
+  await expect(sheet.account.line('EIRP_ferry').locator('mark')).toHaveText(['EIRPferry', 'Ferry']);
   await expect(field).toBeFocused();
   await expect(sheet.account.line('EIRP_ferry')).toHaveAttribute('aria-selected', 'true');
   await sheet.account.press('Enter');
@@ -131,6 +133,7 @@ test('search finds labels, entries and notes, in folded sections too', async ({ 
   await expect(sheet.account.line('EIRP_ferry')).toHaveAttribute('aria-selected', 'true');
   await sheet.account.press('Escape');
   await expect(bar).toBeHidden();
+  await expect(sheet.account.grid.locator('mark')).toHaveCount(0);
   await expect(sheet.account.line('EIRP_ferry').locator(':focus')).toHaveCount(1);
 
   await sheet.account

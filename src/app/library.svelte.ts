@@ -75,9 +75,10 @@ export class Library {
   }
 
   /** The recovery copies of a worksheet, the newest first. */
-  async copies(id: string): Promise<readonly CopyEntry[]> {
+  async copies(id: string): Promise<Result<readonly CopyEntry[], string>> {
     const answer = await this.#store?.recoverable(id);
-    return answer?.ok === true ? answer.value : [];
+    if (answer === undefined) return fail(NO_STORE);
+    return answer.ok ? answer : fail(answer.fault.sentence);
   }
 
   /** A recovery copy with its text. */

@@ -1,5 +1,6 @@
 /** Searching a worksheet: which lines hold a text, and in which field. */
 import { allLines, entriesOf, type Line, type Worksheet } from '../worksheet';
+import { withoutCapitals } from './found-places';
 
 /** Fields that are searched. */
 export type SearchedField = 'symbol' | 'label' | 'entry' | 'source' | 'note';
@@ -14,10 +15,10 @@ const FIELDS: readonly SearchedField[] = ['symbol', 'label', 'entry', 'source', 
 
 /** The lines that hold a text, in the order of the worksheet; capitals do not matter. None for an empty text. */
 export function matchesOf(worksheet: Worksheet, text: string): readonly Match[] {
-  const wanted = text.trim().toLowerCase();
+  const wanted = withoutCapitals(text.trim());
   if (wanted === '') return [];
   return allLines(worksheet).flatMap((line) => {
-    const field = FIELDS.find((one) => textOf(line, one).toLowerCase().includes(wanted));
+    const field = FIELDS.find((one) => withoutCapitals(textOf(line, one)).includes(wanted));
     return field === undefined ? [] : [{ lineId: line.id, field }];
   });
 }

@@ -50,6 +50,8 @@ export interface FocusRequest {
   readonly edit: boolean;
   /** Leave the browser's focus where it is. */
   readonly quiet?: boolean;
+  /** With `edit`: a text put behind what stands in the cell, and where in it the caret goes. */
+  readonly insert?: { readonly text: string; readonly caret: number };
 }
 
 /** Everything the page works with. One per page, made by `startSession`. */
@@ -73,6 +75,8 @@ export class Session {
   /** The line whose cell was changed last: its working and its repair are at hand although the cursor has gone on. */
   lastEditedLineId = $state<string | null>(null);
   focusRequest = $state.raw<FocusRequest | null>(null);
+  /** What is searched for; rows mark where they hold it. */
+  searched = $state('');
   /** Why the worksheet cannot be changed at all, or null. */
   #fileReadOnly = $state<string | null>(null);
 

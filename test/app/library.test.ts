@@ -1,6 +1,7 @@
 // The list of worksheets, and what is done with those that are not open.
 import { describe, expect, it } from 'vitest';
 
+import { fail } from '../../src/base';
 import { Library } from '../../src/app/library.svelte';
 import { readWorksheetFile, writeWorksheetFile } from '../../src/exchange';
 import { newBrowser, openTab, textOf, valueOf } from '../store/support';
@@ -53,6 +54,19 @@ describe('library', () => {
     const answer = await shelf.rename('nowhere', 'X');
     expect(!answer.ok && answer.fault).toMatch(/not in the browser’s storage/);
     const none = await new Library(null).duplicate('x');
+    expect(!none.ok && none.fault).toMatch(/no storage/);
+  });
+
+  it('tells of a store that cannot say which copies there are, and does not pass that for none', async () => {
+    const { store, library: shelf, worksheet } = await library();
+    expect(await shelf.copies(worksheet.id)).toEqual({ ok: true, value: [] });
+    const broken = Object.create(store, {
+      recoverable: {
+        value: () => Promise.resolve(fail({ code: 'failed', sentence: 'The storage does not answer.', detail: '' })),
+      },
+    }) as typeof store;
+    expect(await new Library(broken).copies(worksheet.id)).toEqual(fail('The storage does not answer.'));
+    const none = await new Library(null).copies(worksheet.id);
     expect(!none.ok && none.fault).toMatch(/no storage/);
   });
 });

@@ -1,6 +1,7 @@
 // Searching lines, and going round the matches.
 import { describe, expect, it } from 'vitest';
 
+import { foundPlaces } from '../../src/app/found-places';
 import { matchesOf, nextMatch } from '../../src/app/search';
 import { sheet } from './support';
 
@@ -43,5 +44,24 @@ describe('going round', () => {
     [3, 0, -1, 2],
   ] as const)('%i matches from %i by %i', (count, from, direction, to) => {
     expect(nextMatch(count, from, direction)).toBe(to);
+  });
+});
+
+describe('the places that are found', () => {
+  const marked = (text: string, searched: string): string =>
+    foundPlaces(text, searched).reduceRight(
+      (all, { start, end }) => `${all.slice(0, start)}[${all.slice(start, end)}]${all.slice(end)}`,
+      text,
+    );
+
+  it.each([
+    ['Ferry and ferryman', 'FERRY ', '[Ferry] and [ferry]man'],
+    ['aaa', 'aa', '[aa]a'],
+    ['P_tx - L', 'g', 'P_tx - L'],
+    ['P_tx', '  ', 'P_tx'],
+    // A letter that grows when it is made small moves nothing.
+    ['İİ mast', 'mast', 'İİ [mast]'],
+  ])('%s by %s', (text, searched, expected) => {
+    expect(marked(text, searched)).toBe(expected);
   });
 });

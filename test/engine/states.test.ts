@@ -178,6 +178,21 @@ describe('the evaluation', () => {
     expect([valueIn('clear'), valueIn('rain')]).toEqual([2, 6]);
   });
 
+  it('previews an entry for a line that is not there yet, in each case, and takes nothing', () => {
+    const live = new Live('a = 1 dBm @ rain: 5 dBm\nb = 2 dBm\nc = a + missing', 'clear', 'rain');
+    const { evaluation } = live;
+    const figureIn = (caseId: string, entry: string): unknown => {
+      const { figure } = evaluation.previewNew(caseId, entry).reading;
+      return figure.state === 'value' ? figure.value : figure;
+    };
+    expect([figureIn('clear', 'a + 1 dB'), figureIn('rain', 'a + 1 dB')]).toEqual([2, 6]);
+    expect(figureIn('clear', 'c + 1 dB')).toEqual({ state: 'waiting', roots: ['c'] });
+    const summed = evaluation.previewNew('rain', 'a + b');
+    expect(summed.reading.figure).toEqual({ state: 'withheld', code: 'levels-summed' });
+    expect(summed.findings.map(({ code, repairs }) => [code, repairs[0]?.kind])).toEqual([['levels-summed', 'entry']]);
+    expect([evaluation.version, evaluation.lines().length, live.value('b')]).toEqual([0, 3, 2]);
+  });
+
   it('knows nothing of lines that are not there', () => {
     const { evaluation } = new Live('a = 1 dB');
     expect(evaluation.reading('none', 'nominal')).toEqual({ figure: { state: 'empty' } });

@@ -318,7 +318,8 @@ describe('renaming', () => {
     ['P+P_1+PP', 'P', 'X', 'X+P_1+PP'],
     ['3*P - 2*P', 'P', 'Q_1', '3*Q_1 - 2*Q_1'],
     ['f(P, "P")', 'P', 'Q', 'f(Q, "P")'],
-    ['P(3)', 'P', 'Q', 'P(3)'],
+    ['P(3) + P', 'P', 'Q', 'Q(3) + Q'],
+    ['max(max, 3)', 'max', 'most', 'max(most, 3)'],
     ['10 W / m', 'm', 'len', '10 W / len'],
     ['10 W', 'W', 'X', '10 W'],
     ['rx.nf + rx', 'rx', 'front', 'front.nf + front'],
@@ -358,6 +359,11 @@ describe('the nearest name', () => {
     ['abcdef', ['uvwxyz'], undefined],
     ['x', [], undefined],
     ['free_space_los', ['free_space_loss'], 'free_space_loss'],
+    ['EIPR', ['EIRP', 'G_r'], 'EIRP'],
+    ['Zhz', ['mHz', 'zHz'], 'zHz'],
+    ['pwoersum', ['powersum'], 'powersum'],
+    ['P_rx', ['P_xr', 'L_xy'], 'P_xr'],
+    ['abcd', ['badc'], undefined],
   ])('to %s of %j is %s', (name, candidates, expected) => {
     expect(nearestName(name, candidates)).toBe(expected);
   });

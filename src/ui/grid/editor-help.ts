@@ -55,12 +55,16 @@ function previewOf(
   cell: CellName,
   text: string,
 ): Pick<EditorHelpContent, 'preview' | 'repair'> {
-  if (row.kind !== 'line' || text.trim() === '') return {};
+  const line = row.kind === 'line' ? row.line : undefined;
+  const entry = text.trim();
+  if (entry === '') return {};
   const caseId = caseTyped(session.worksheet, cell) ?? session.selectedCaseId;
-  const { reading, findings } = session.evaluation.preview(row.line.id, caseId, text.trim());
+  const { evaluation } = session;
+  const { reading, findings } =
+    line === undefined ? evaluation.previewNew(caseId, entry) : evaluation.preview(line.id, caseId, entry);
   const finding = findings.find((one) => one.code !== 'waiting');
   const repair = finding?.repairs.find((one) => one.kind === 'entry');
-  const { digits } = row.line;
+  const digits = line?.digits;
   return {
     preview: {
       reading,

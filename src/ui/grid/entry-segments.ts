@@ -10,6 +10,8 @@ export interface EntrySegment {
   readonly text: string;
   readonly literal: boolean;
   readonly marked: Severity | null;
+  /** Whether it is what is searched for. */
+  readonly found: boolean;
 }
 
 /** A place in the entry that a finding is about. */
@@ -19,12 +21,13 @@ export interface EntryMark {
 }
 
 /** The segments of an entry. An entry that cannot be read has no literals. */
-export function entrySegments(entry: string, mark?: EntryMark): readonly EntrySegment[] {
+export function entrySegments(entry: string, mark?: EntryMark, found: readonly Place[] = []): readonly EntrySegment[] {
   if (entry === '') return [];
   const scan = scanEntry(entry);
   const literals = scan.ok ? scan.value.tokens.filter((token) => token.type === 'literal') : [];
   const cuts = new Set([0, entry.length]);
-  for (const { start, end } of [...literals, ...(mark === undefined ? [] : [mark.place])]) cuts.add(start).add(end);
+  for (const { start, end } of [...literals, ...(mark === undefined ? [] : [mark.place]), ...found])
+    cuts.add(start).add(end);
   const places = [...cuts].filter((at) => at >= 0 && at <= entry.length).sort((a, b) => a - b);
   return places.slice(0, -1).map((start, i) => {
     const end = places[i + 1] ?? entry.length;
@@ -33,6 +36,7 @@ export function entrySegments(entry: string, mark?: EntryMark): readonly EntrySe
       text: entry.slice(start, end),
       literal: literals.some(isIn),
       marked: mark !== undefined && isIn(mark.place) ? mark.severity : null,
+      found: found.some(isIn),
     };
   });
 }

@@ -27,9 +27,13 @@ export interface Cell {
   readonly cell: CellName;
 }
 
-/** An open editor: where, and what it begins with. `typed`: a character opened it, so that it begins empty. */
+/**
+ * An open editor: where, and what it begins with. `typed`: a character opened it, so that it begins empty. `insert`: put
+ * behind what stands there, with the caret at a place in it.
+ */
 export interface Editing extends Cell {
   readonly typed: boolean;
+  readonly insert?: { readonly text: string; readonly caret: number } | undefined;
 }
 
 /** The grid's state. One per grid. */
@@ -42,8 +46,10 @@ export class GridModel {
   editing = $state.raw<Editing | null>(null);
   /** The row whose menu is open, or null. */
   menuRow = $state<string | null>(null);
-  /** The case whose menu is open, and the element beside which it is; or null. */
-  caseMenu = $state.raw<{ readonly caseId: string; readonly anchor: HTMLElement } | null>(null);
+  /** The case whose menu is open, and the element beside which it is; with `named`, not the case's own heading. */
+  caseMenu = $state.raw<{ readonly caseId: string; readonly anchor: HTMLElement; readonly named?: boolean } | null>(
+    null,
+  );
   /** The case whose name is being typed, or null. */
   renamingCase = $state<string | null>(null);
   /** The line whose unit is being chosen, and the element beside which that happens; or null. */
@@ -249,8 +255,8 @@ export class GridModel {
   // Editing
 
   /** Opens the editor on the cursor's cell. */
-  edit(typed = false): void {
-    this.editing = { ...this.cursor, typed };
+  edit(typed = false, insert?: Editing['insert']): void {
+    this.editing = { ...this.cursor, typed, insert };
   }
 
   // The browser's focus

@@ -4,13 +4,13 @@
  * Holds: a row's key names the same thing from one list to the next, so that what was measured and where the cursor stood last.
  */
 import type { LineFinding } from '../../engine';
-import { isLinesSection, type Line, type OtherSection, type LinesSection, type Worksheet } from '../../worksheet';
+import { isLinesSection, type Line, type LinesSection, type Section, type Worksheet } from '../../worksheet';
 import { isOpen } from '../../app/finding-counts';
 
 /** One row of the grid. */
 export type Row =
   | { readonly kind: 'section'; readonly key: string; readonly section: LinesSection; readonly collapsed: boolean }
-  | { readonly kind: 'other-section'; readonly key: string; readonly section: OtherSection }
+  | { readonly kind: 'other-section'; readonly key: string; readonly section: Exclude<Section, LinesSection> }
   | {
       readonly kind: 'line';
       readonly key: string;

@@ -21,7 +21,7 @@ describe('segments of an entry', () => {
   });
 
   it('leave an entry that cannot be read in one piece', () => {
-    expect(entrySegments('3 dB + (')).toEqual([{ text: '3 dB + (', literal: false, marked: null }]);
+    expect(entrySegments('3 dB + (')).toEqual([{ text: '3 dB + (', literal: false, marked: null, found: false }]);
     expect(entrySegments('')).toEqual([]);
   });
 

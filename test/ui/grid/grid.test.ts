@@ -130,6 +130,48 @@ describe('a small worksheet', () => {
     expect(focused().dataset['cell']).toBe('entry');
   });
 
+  it('previews an entry typed in the place for a new line, and what is wrong with it', async () => {
+    await press('End', { ctrlKey: true });
+    await press('ArrowUp');
+    for (let i = 0; i < 3 && focused().dataset['cell'] !== 'entry'; i++) await press('ArrowRight');
+    expect(focused().dataset['cell']).toBe('entry');
+    await press('N');
+    type('N + 3 dB');
+    expect(document.getElementById('cell-help')?.textContent).toMatch(/gives\s+−114\.00 dBm/);
+    type('N + I');
+    expect(document.getElementById('cell-help')?.textContent).toMatch(
+      /Error\. N and I are levels and are added.*Write powersum\(N, I\)/s,
+    );
+    await press('Enter', { altKey: true });
+    await press('Enter');
+    expect(allLines(session.worksheet)[3]?.entry).toBe('powersum(N, I)');
+  });
+
+  it('marks what is searched for, in each cell that holds it, until the search ends', async () => {
+    const marks = (): string[] => [...document.querySelectorAll('mark')].map((mark) => mark.textContent);
+    session.searched = 'in';
+    flushSync();
+    await tick();
+    expect(marks()).toEqual(['In']);
+    session.searched = 'n';
+    flushSync();
+    // Noise and its symbol, the label and the symbol of the total, its entry.
+    expect(marks()).toEqual(['N', 'N', 'n', 'n', 'Ntot', 'N']);
+    session.searched = '';
+    flushSync();
+    expect(marks()).toEqual([]);
+  });
+
+  it('opens the editor with a text put behind what stands there, the caret in it', async () => {
+    const focus = { kind: 'lines', lineIds: ['N_tot'], field: 'entry' } as const;
+    session.focusRequest = { focus, edit: true, insert: { text: 'powersum()', caret: 9 } };
+    flushSync();
+    await tick();
+    const input = focused() as HTMLInputElement;
+    expect([input.value, input.selectionStart]).toEqual(['N + I powersum()', 15]);
+    expect(allLines(session.worksheet)[2]?.entry).toBe('N + I');
+  });
+
   it('keeps what was typed with Enter and goes down', async () => {
     await press('ArrowRight');
     await press('ArrowRight');

@@ -1,13 +1,22 @@
 // Parts of the page around the account: title, banners, search, and what is shown when the page fails.
 import { cleanup, fireEvent, render, screen } from '@testing-library/svelte';
-import { afterEach, describe, expect, it, vi } from 'vitest';
+import { tick } from 'svelte';
+import { afterEach, beforeAll, describe, expect, it, vi } from 'vitest';
 
 import { Session } from '../../../src/app/session.svelte';
 import { Settings } from '../../../src/app/settings.svelte';
 import { fail } from '../../../src/base';
 import { writeWorksheetFile } from '../../../src/exchange';
 import { sheet } from '../../app/support';
+import { knowModalDialogs } from '../dialogs/modal';
 import ShellStage from './ShellStage.svelte';
+
+beforeAll(() => {
+  knowModalDialogs();
+  HTMLElement.prototype.showPopover = function show(this: HTMLElement): void {
+    this.setAttribute('data-shown', '');
+  };
+});
 
 afterEach(cleanup);
 
@@ -92,11 +101,68 @@ describe('search', () => {
     expect(made.focusRequest?.quiet).toBeUndefined();
   });
 
+  it('is known to the page while it is open, so that rows can mark what is found', async () => {
+    const made = await session();
+    const { unmount } = render(ShellStage, { session: made, part: 'search' });
+    await fireEvent.input(screen.getByRole('textbox', { name: 'Search' }), { target: { value: 'ferry' } });
+    expect(made.searched).toBe('ferry');
+    unmount();
+    expect(made.searched).toBe('');
+  });
+
   it('says when nothing is found', async () => {
     render(ShellStage, { session: await session(), part: 'search' });
     await fireEvent.input(screen.getByRole('textbox', { name: 'Search' }), { target: { value: 'nowhere' } });
     expect(screen.getByText('nothing found')).toBeTruthy();
     expect(screen.getByRole<HTMLButtonElement>('button', { name: 'Next' }).disabled).toBe(true);
+  });
+});
+
+describe('the button for cases', () => {
+  it('opens the menu of the case chosen, which names it and offers the others', async () => {
+    const made = await session();
+    made.selection.caseId = 'storm';
+    render(ShellStage, { session: made, part: 'cases' });
+    await fireEvent.click(screen.getByRole('button', { name: 'Cases ▾' }));
+    const items = screen.getAllByRole('menuitem').map((item) => item.textContent.trim());
+    expect(items).toEqual([
+      'Rename “Storm”',
+      'Add a case',
+      'Add a case with the entries of “Storm”',
+      'Move “Storm” to the left',
+      'Move “Storm” to the right',
+      'Remove “Storm”',
+      'Go on with “Calm”',
+    ]);
+    await fireEvent.click(screen.getByRole('menuitem', { name: 'Remove “Storm”' }));
+    expect(made.worksheet.cases.map(({ name }) => name)).toEqual(['Calm']);
+    expect(screen.queryByRole('menu')).toBeNull();
+  });
+});
+
+describe('the reference of functions', () => {
+  it('puts a call into the entry of the line with the cursor, and closes', async () => {
+    const made = await session();
+    made.selection.put('P_tx');
+    made.dialog = 'functions';
+    render(ShellStage, { session: made, part: 'dialogs' });
+    await fireEvent.click(screen.getByRole('button', { name: 'Insert powersum into the line' }));
+    await tick();
+    expect(made.dialog).toBeNull();
+    expect(made.focusRequest).toEqual({
+      focus: { kind: 'lines', lineIds: ['P_tx'], field: 'entry' },
+      edit: true,
+      insert: { text: 'powersum()', caret: 9 },
+    });
+  });
+
+  it('offers that only where a line has the cursor', async () => {
+    const made = await session();
+    made.selection.put(null);
+    made.dialog = 'functions';
+    render(ShellStage, { session: made, part: 'dialogs' });
+    expect(screen.getByRole('searchbox', { name: 'Search the reference' })).toBeTruthy();
+    expect(screen.queryByRole('button', { name: /^Insert/ })).toBeNull();
   });
 });
 
