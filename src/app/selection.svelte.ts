@@ -9,6 +9,8 @@ export class Selection {
   lineId = $state<string | null>(null);
   /** The other end of a range of lines, or null when one line alone is selected. */
   anchorId = $state<string | null>(null);
+  /** The section whose heading has the cursor, or null. */
+  sectionId = $state<string | null>(null);
   /** The case whose figures the working shows. */
   caseId = $state('');
 

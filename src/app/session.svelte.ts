@@ -11,14 +11,10 @@ import type { Repair } from '../findings';
 import { recordedValues } from '../review';
 import type { PlainFault, Store, WorksheetText } from '../store';
 import {
-  acceptFinding,
   allLines,
   applyRepair,
-  entryIn,
-  findLine,
   newWorksheet,
   redo,
-  unacceptFinding,
   undo,
   type Edit,
   type Focus,
@@ -28,6 +24,7 @@ import {
   type Travel,
   type Worksheet,
 } from '../worksheet';
+import { answerEdit } from './answers';
 import { Announcer } from './announcer.svelte';
 import type { FindingCounts } from './finding-counts';
 import { Keeping, type KeepState } from './keeping.svelte';
@@ -65,6 +62,10 @@ export class Session {
   readonly opening: Opening;
 
   panel = $state<Panel>('working');
+  /** True while the panel takes the whole width. */
+  panelIsWide = $state(false);
+  /** Grows with each wish to work in the panel: it takes the focus then. */
+  panelAsked = $state(0);
   dialog = $state<DialogName | null>(null);
   /** Something to tell the person that is not tied to a line, until it is dismissed. */
   notice = $state.raw<{ readonly text: string; readonly undo?: () => void } | null>(null);
@@ -196,18 +197,13 @@ export class Session {
   /** Answers a finding with a reason. */
   accept(finding: LineFinding, reason: string): void {
     const { lineId, code } = finding;
-    const found = findLine(this.worksheet, lineId);
-    if (found === undefined) return;
-    const entry = entryIn(found.line, finding.caseIds[0]);
-    this.perform(acceptFinding(this.worksheet, lineId, { code, entry, reason }));
+    this.perform(answerEdit(this.worksheet, this.evaluation, lineId, { code, caseId: finding.caseIds[0], reason }));
   }
 
   /** Takes the answer to a finding back. */
   unaccept(finding: LineFinding): void {
-    const found = findLine(this.worksheet, finding.lineId);
-    if (found === undefined) return;
-    const entry = entryIn(found.line, finding.caseIds[0]);
-    this.perform(unacceptFinding(this.worksheet, finding.lineId, { code: finding.code, entry }));
+    const { lineId, code } = finding;
+    this.perform(answerEdit(this.worksheet, this.evaluation, lineId, { code, caseId: finding.caseIds[0] }));
   }
 
   /** Opens the dialog in which a finding is accepted with a reason. */
@@ -217,6 +213,12 @@ export class Session {
   }
 
   // Where to look
+
+  /** Opens the panel on what is selected and brings the focus there. */
+  openPanel(): void {
+    this.panel = 'working';
+    this.panelAsked += 1;
+  }
 
   /** Selects a line, and a case if given, and brings the cursor there. */
   select(lineId: string, caseId?: string): void {

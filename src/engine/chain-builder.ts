@@ -19,6 +19,7 @@ export interface About {
   readonly criterion?: Criterion;
   /** The place at which it holds. */
   readonly plane?: Plane;
+  readonly formula?: string;
 }
 
 type Compute = (...values: number[]) => number;
@@ -173,7 +174,7 @@ export class ChainBuilder {
     label: string,
     unit: string,
     inputs: readonly (Ref | undefined)[],
-    { quantity, side, stage, criterion, plane }: About,
+    { quantity, side, stage, criterion, plane, formula }: About,
     plan: (plans: readonly Plan[]) => Plan,
   ): Ref | undefined {
     const given = inputs.filter((input) => input !== undefined);
@@ -188,6 +189,7 @@ export class ChainBuilder {
         ...derivedOf(unit, given, { ...(quantity && { quantity }), ...(side && { side }) }, plan),
         ...(criterion === undefined ? {} : { criterion }),
         ...(plane === undefined ? {} : { plane }),
+        ...(formula === undefined ? {} : { formula }),
       },
     });
     return line.id;

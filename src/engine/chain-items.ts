@@ -5,6 +5,7 @@
  * give is not there, and never guessed.
  */
 import {
+  additionExponent,
   blockingDb,
   figureOfTemperatureDb,
   noiseBehindDbm,
@@ -103,62 +104,102 @@ function addInputPlane(builder: ChainBuilder, { signal, bandwidth }: Inputs, sou
 const noiseAtInput = (kelvin = NaN, bandwidthHz = NaN): number => noiseBehindDbm(kelvin, bandwidthHz, 0);
 
 function addOutputs(builder: ChainBuilder, running: Running): void {
-  const { gain, temperature, intercept, intercept2, compression, source, bandwidth, signal, interferer } = running;
+  const { source, bandwidth, signal, interferer } = running;
   const input = builder.plane(0, undefined);
-  const plane = builder.plane(gain, running.last);
-  builder.copy('gain', 'gain', 'dB', gain, { quantity: 'gain' });
-  builder.derive('nf', 'noise figure', 'dB', [temperature], figureOfTemperatureDb, {
-    quantity: 'noise figure',
+  const plane = builder.plane(running.gain, running.last);
+  const gain = builder.copy('gain', 'gain', 'dB', running.gain, {
+    quantity: 'gain',
+    formula: 'G = G₁ + G₂ + …, in decibels',
   });
-  builder.copy('te', 'noise temperature', 'K', temperature, { quantity: 'temperature', plane: input });
+  builder.derive('nf', 'noise figure', 'dB', [running.temperature], figureOfTemperatureDb, {
+    quantity: 'noise figure',
+    formula: 'NF = 10 log₁₀(1 + Tₑ/290 K)',
+  });
+  const temperature = builder.copy('te', 'noise temperature', 'K', running.temperature, {
+    quantity: 'temperature',
+    plane: input,
+    formula: 'Tₑ = T₁ + T₂/G₁ + T₃/(G₁G₂) + …',
+  });
   const system = builder.derive('tsys', 'system noise temperature at the input', 'K', [source, temperature], plus, {
     quantity: 'temperature',
     plane: input,
+    formula: 'T = T_source + Tₑ',
   });
   const level = { quantity: 'level' } as const;
-  builder.copy('iip3', 'third-order input intercept', 'dBm', intercept, level);
-  builder.derive('oip3', 'third-order output intercept', 'dBm', [intercept, gain], plus, level);
-  builder.copy('iip2', 'second-order input intercept', 'dBm', intercept2, level);
-  builder.derive('oip2', 'second-order output intercept', 'dBm', [intercept2, gain], plus, level);
-  builder.copy('ip1db', 'input level for 1 dB compression', 'dBm', compression, level);
-  builder.derive('op1db', 'output level at 1 dB compression', 'dBm', [compression, gain], outputCompression, level);
-  const floor = builder.derive('mds', 'minimum detectable signal', 'dBm', [system, bandwidth], noiseAtInput, level);
-  builder.derive('sfdr', 'spurious-free dynamic range', 'dB', [intercept, floor], spuriousFreeRangeDb);
+  const intercept = builder.copy('iip3', 'third-order input intercept', 'dBm', running.intercept, {
+    ...level,
+    formula: cascadeFormula(builder, 'IIP3', 3),
+  });
+  builder.derive('oip3', 'third-order output intercept', 'dBm', [intercept, gain], plus, {
+    ...level,
+    formula: 'OIP3 = IIP3 + G',
+  });
+  const intercept2 = builder.copy('iip2', 'second-order input intercept', 'dBm', running.intercept2, {
+    ...level,
+    formula: cascadeFormula(builder, 'IIP2', 2),
+  });
+  builder.derive('oip2', 'second-order output intercept', 'dBm', [intercept2, gain], plus, {
+    ...level,
+    formula: 'OIP2 = IIP2 + G',
+  });
+  const compression = builder.copy('ip1db', 'input level for 1 dB compression', 'dBm', running.compression, {
+    ...level,
+    formula: cascadeFormula(builder, 'P', 3),
+  });
+  builder.derive('op1db', 'output level at 1 dB compression', 'dBm', [compression, gain], outputCompression, {
+    ...level,
+    formula: 'P_out = P_in + G − 1 dB',
+  });
+  const floor = builder.derive('mds', 'minimum detectable signal', 'dBm', [system, bandwidth], noiseAtInput, {
+    ...level,
+    formula: 'k·T·B at the input',
+  });
+  builder.derive('sfdr', 'spurious-free dynamic range', 'dB', [intercept, floor], spuriousFreeRangeDb, {
+    formula: '⅔ (IIP3 − k·T·B)',
+  });
   const output = builder.copy('signal', 'wanted level at the output', 'dBm', running.signalBehind, {
     ...level,
     side: 'wanted',
     plane,
+    formula: 'S_in + G',
   });
   const noise = builder.copy('noise', 'noise at the output', 'dBm', running.noiseBehind, {
     ...level,
     side: 'unwanted',
     plane,
+    formula: 'k·(T_source + Tₑ)·B·G',
   });
-  builder.difference('snr', 'S/N at the output', output, noise, { quantity: 'signal ratio' });
+  builder.difference('snr', 'S/N at the output', output, noise, { quantity: 'signal ratio', formula: 'S − N' });
   const tone = interferer ?? signal;
-  const selective = running.selectiveIntercept ?? intercept;
+  const selective = running.selectivity === 0 ? intercept : running.selectiveIntercept;
   const unwanted = { ...level, side: 'unwanted', plane } as const;
-  const products = builder.derive(
-    'im3',
-    'third-order products at the output',
-    'dBm',
-    [tone, selective, gain],
-    third,
-    unwanted,
-  );
-  builder.derive('im2', 'second-order products at the output', 'dBm', [tone, intercept2, gain], second, unwanted);
+  const products = builder.derive('im3', 'third-order products at the output', 'dBm', [tone, selective, gain], third, {
+    ...unwanted,
+    formula: '3·P − 2·IIP3 + G',
+  });
+  builder.derive('im2', 'second-order products at the output', 'dBm', [tone, intercept2, gain], second, {
+    ...unwanted,
+    formula: '2·P − IIP2 + G',
+  });
   if (interferer === undefined) return;
-  builder.derive('rise', 'rise of the noise by third-order products', 'dB', [products, noise], riseDb);
+  builder.derive('rise', 'rise of the noise by third-order products', 'dB', [products, noise], riseDb, {
+    formula: '10 log₁₀(1 + P_IM/N)',
+  });
   builder.derive(
     'blocking',
     'gain lost beside the interferer',
     'dB',
     [interferer, running.blockedIntercept],
     blockingDb,
-    {
-      quantity: 'loss',
-    },
+    { quantity: 'loss', formula: '−20 log₁₀(1 − 2·P/IIP3)' },
   );
+}
+
+/** How the chain's intercepts add, as a formula. */
+function cascadeFormula({ chain }: ChainBuilder, letter: string, order: 2 | 3): string {
+  const exponent = additionExponent({ isCoherent: chain.intercept !== 'power', order });
+  const raised = exponent === 1 ? '' : exponent === 2 ? '²' : '^½';
+  return `1/${letter}${raised} = Σ (G ahead/${letter} of the stage)${raised}, ${chain.intercept === 'power' ? 'as powers' : 'in phase'}`;
 }
 
 type Compute = (...values: number[]) => number;

@@ -323,9 +323,15 @@ export class Evaluation {
     return neighboursOf(this.graph, lineId, 'inputs');
   }
 
-  /** Lines that use a line directly, in any case. */
+  /** Lines that use a line directly, in any case; parts of chains without a name are passed over. */
   usedBy(lineId: string): readonly string[] {
-    return neighboursOf(this.graph, lineId, 'users');
+    return neighboursOf(this.graph, lineId, 'users').filter((id) => this.isNamed(id));
+  }
+
+  /** False for what stands between a chain's figures and has no name of its own. */
+  private isNamed(lineId: string): boolean {
+    const item = this.graph.byId.get(lineId);
+    return item?.derived === undefined || item.line.symbol !== '';
   }
 
   /** All lines that a line rests on, itself left out. */

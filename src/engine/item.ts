@@ -36,6 +36,8 @@ export interface Derived {
   readonly quantity?: QuantityKind;
   readonly side?: Side;
   readonly plane?: Plane;
+  /** How the figure comes about, in the trade's letters, for the working. */
+  readonly formula?: string;
   /** The plan, from the inputs' plans in their order. */
   readonly plan: (inputs: readonly Plan[]) => Plan;
   readonly criterion?: Criterion;

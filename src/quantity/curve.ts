@@ -45,6 +45,8 @@ export function makeCurve(table: CurveTable): Result<Curve, string> {
     return fail(`Two points stand at ${String(repeated[0])} ${table.x.unit}; a curve has one value at each place.`);
   if (table.isLogarithmic && first[0] <= 0)
     return fail('By its logarithm an axis has places above 0 only; the first point is not one.');
+  // An angle comes in radians and back: what rounding puts beyond an end is still the end.
+  const slack = 1e-12 * Math.max(Math.abs(first[0]), Math.abs(last[0]));
   const place = table.isLogarithmic ? Math.log : (x: number): number => x;
   const xs = Float64Array.from(points, ([x]) => place(x));
   const ys = Float64Array.from(points, ([, y]) => y);
@@ -56,7 +58,7 @@ export function makeCurve(table: CurveTable): Result<Curve, string> {
     quantity: table.y.quantity,
     from: first[0],
     to: last[0],
-    at: (x) => (x >= first[0] && x <= last[0] ? read(xs, ys, slopes, place(x)) : NaN),
+    at: (x) => (x >= first[0] - slack && x <= last[0] + slack ? read(xs, ys, slopes, place(x)) : NaN),
   });
 }
 
@@ -71,7 +73,7 @@ function read(xs: Float64Array, ys: Float64Array, slopes: Float64Array | undefin
   const [x0 = NaN, x1 = NaN] = [xs[low], xs[high]];
   const [y0 = NaN, y1 = NaN] = [ys[low], ys[high]];
   // The ends are given back as they are, whatever the arithmetic between them would make of it.
-  if (x <= x0) return y0;
+  if (!(x > x0)) return y0;
   if (x >= x1) return y1;
   const width = x1 - x0;
   const t = (x - x0) / width;

@@ -5,6 +5,7 @@
 import type { Evaluation, Node } from '../engine';
 import { findFunction, walkTree, type Checked } from '../formula';
 
+import { chainWorking } from './chain-working';
 import type { Working } from './working-types';
 import { WorkingWriter } from './working-writer';
 
@@ -15,14 +16,15 @@ export function workingOf(evaluation: Evaluation, lineId: string, caseId: string
   if (line === undefined || node === undefined) return undefined;
   const reading = evaluation.reading(lineId, caseId);
   const writer = new WorkingWriter(evaluation, caseId);
+  const head = { lineId, caseId, symbol: line.symbol, label: line.label, reading };
+  if (node.isDerived) {
+    const { steps, terms, shares } = chainWorking(evaluation, node, caseId);
+    return { ...head, steps: [...steps, ...writer.steps(node, undefined, reading)], terms, shares, remarks: [] };
+  }
   const checked = evaluation.inspect(lineId, caseId);
   const contributions = writer.contributions(node, checked);
   return {
-    lineId,
-    caseId,
-    symbol: line.symbol,
-    label: line.label,
-    reading,
+    ...head,
     steps: writer.steps(node, checked, reading),
     terms: contributions ?? writer.uses(node),
     shares: contributions !== undefined,

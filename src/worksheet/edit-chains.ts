@@ -140,19 +140,32 @@ function withCurrentAnswers(stage: Stage, field: StageField): Stage {
   const answers = stage.accepted?.[field];
   if (answers === undefined) return stage;
   const texts = new Set([stage[field], ...Object.values(stage.byCase ?? {}).map((values) => values[field])]);
-  return withAnswers(
-    stage,
-    field,
-    answers.filter(({ entry }) => texts.has(entry)),
-  );
+  const kept = answers.filter(({ entry }) => texts.has(entry));
+  return kept.length === answers.length ? stage : withAnswers(stage, field, kept);
 }
 
 function withAnswers(stage: Stage, field: StageField, answers: readonly AcceptedFinding[]): Stage {
-  if (answers.length === (stage.accepted?.[field]?.length ?? 0)) return stage;
   const accepted = new Map(Object.entries(stage.accepted ?? {}));
   if (answers.length === 0) accepted.delete(field);
   else accepted.set(field, answers);
   return withKey(stage, 'accepted', accepted.size === 0 ? undefined : Object.fromEntries(accepted), STAGE_KEYS);
+}
+
+/** Answers a finding on a stage's value with a reason, in place of an earlier answer to the same; or takes the answer back. */
+export function answerStageFinding(
+  worksheet: Worksheet,
+  sectionId: string,
+  stageId: string,
+  field: StageField,
+  answer: Pick<AcceptedFinding, 'code' | 'entry'> & { readonly reason?: string },
+): Edit {
+  const chain = chainOf(worksheet, sectionId);
+  const stage = stageAt(chain, stageId);
+  const { code, entry, reason } = answer;
+  const others = (stage.accepted?.[field] ?? []).filter((one) => one.code !== code || one.entry !== entry);
+  const answers = reason === undefined ? others : [...others, { code, entry, reason }];
+  const verb = reason === undefined ? 'Take back an accepted finding' : 'Accept a finding';
+  return stagesEdit(`${verb} on ${stageName(stage)}`, chain, withStage(chain, withAnswers(stage, field, answers)));
 }
 
 /** Sets a stage's label, source or note. */

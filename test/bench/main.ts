@@ -4,10 +4,10 @@
  * gzipped bytes. Prints one JSON object and nothing else.
  */
 import { Evaluation } from '../../src/engine';
-import { applyChange, type Worksheet } from '../../src/worksheet';
+import { applyAll, applyChange, setEntry, setStageValue, type Worksheet } from '../../src/worksheet';
 import { handChain, handFanOut, handLattice, handTens, type Baseline } from './closures';
 import { scriptSize } from './script-size';
-import { budget, chain, fanOut, lattice, tens } from './sheets';
+import { budget, chain, fanOut, lattice, lineUp, tens } from './sheets';
 
 const COUNT = 10_000;
 
@@ -129,6 +129,27 @@ const sixtyEdit = time((round) => {
 }, 200);
 const withheld = evaluation.sheetFindings().filter(({ severity }) => severity === 'error').length;
 
+const STAGES = 200;
+const longChain = lineUp(STAGES);
+const chainEvaluation = new Evaluation(longChain);
+let chainSheet = longChain;
+const stageEdit = time((round) => {
+  const { changes } = setStageValue(chainSheet, 'rx', 's0', 'gain', round % 2 === 0 ? '6 dB' : '6.2 dB');
+  chainSheet = applyAll(chainSheet, changes).worksheet;
+  chainEvaluation.edit(chainSheet, changes);
+}, 30);
+
+/** An edit after which a line rests on another one: the graph has to be built anew. */
+const large = chain(COUNT);
+const largeEvaluation = new Evaluation(large);
+let largeSheet = large;
+const graphEdit = time((round) => {
+  const { changes } = setEntry(largeSheet, 'l5000', round % 2 === 0 ? '10 dBm' : 'P_4999 - 2 dB');
+  largeSheet = applyAll(largeSheet, changes).worksheet;
+  largeEvaluation.edit(largeSheet, changes);
+  largeEvaluation.sheetFindings();
+}, 15);
+
 const pageFolder = process.argv[2];
 
 process.stdout.write(
@@ -143,6 +164,13 @@ process.stdout.write(
         fullRecomputeMs: time(() => evaluation.recomputeAll(), 200),
         editMs: sixtyEdit,
       },
+      lineUp: {
+        stages: STAGES,
+        loadMs: time(() => new Evaluation(longChain), 7),
+        fullRecomputeMs: time(() => chainEvaluation.recomputeAll(), 60),
+        editMs: stageEdit,
+      },
+      graphEditOf10000LinesMs: graphEdit,
       ...(pageFolder === undefined ? {} : { script: scriptSize(pageFolder) }),
     },
     null,

@@ -106,3 +106,31 @@ export function budget(): Worksheet {
     ),
   );
 }
+
+/** A chain section of so many stages, amplifiers and losses by turns, with all that a stage may say of noise and linearity. */
+export function lineUp(count: number): Worksheet {
+  const stages = Array.from({ length: count }, (_, i) => ({
+    id: `s${String(i)}`,
+    symbol: `s${String(i)}`,
+    label: `Stage ${String(i)}`,
+    gain: i % 2 === 0 ? '6.1 dB' : '-6 dB',
+    noiseFigure: i % 2 === 0 ? '2 dB' : '6 dB',
+    outputIntercept: '20 dBm',
+    inputCompression: '0 dBm',
+  }));
+  return {
+    ...sheet([]),
+    sections: [
+      {
+        id: 'rx',
+        kind: 'chain',
+        symbol: 'rx',
+        title: 'Line-up',
+        signal: '-90 dBm',
+        noise: '290 K',
+        bandwidth: '1 MHz',
+        stages,
+      },
+    ],
+  };
+}

@@ -15,7 +15,7 @@ import { align } from '../alignment';
 import { sayBandwidthsDiffer } from '../bandwidths';
 import { sayPlanesDiffer } from '../planes';
 import { broken, type Context } from '../context';
-import { decibelsOf, describeType, isFieldLike, linearOf } from '../forms';
+import { decibelsOf, describeType, isFieldLike, linearOf, powerDimension } from '../forms';
 import { shiftPlan, type Plan } from '../plan';
 import { overWrittenReference } from '../logarithms';
 import { originOf } from '../products';
@@ -245,7 +245,9 @@ function sortInPool(operand: Checked): string {
   const { meaning } = type;
   if (isRatio && meaning !== undefined && meaning.w === 1 && meaning.u === -1) return 'a signal ratio';
   if (isRatio && meaning !== undefined && meaning.w === -1 && meaning.u === 1) return 'an impairment ratio';
-  return describeType({ ...type, form: 'linear', degree: 0, sort: 'ratio' });
+  // By what the decibels stand for, whatever unit shows it: dBm beside pW, K beside °C, dBµV beside mV.
+  const dimension = type.form === 'linear' ? powerDimension(type) : type.dimension;
+  return describeType({ ...type, form: 'linear', dimension, degree: 0, sort: 'ratio', unitHint: undefined });
 }
 
 const pool: StructuralFunction = {

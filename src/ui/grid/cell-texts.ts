@@ -30,10 +30,12 @@ export function isEditable(row: Row, cell: CellName): boolean {
     case 'line':
       return cell !== 'margin';
     case 'add':
-    case 'new-section':
       return true;
+    case 'new-section':
+      return cell === 'title';
     case 'section':
       return cell === 'title';
+    case 'item':
     case 'other-section':
     case 'finding':
       return false;
@@ -94,6 +96,7 @@ export function editOf(worksheet: Worksheet, row: Row, cell: CellName, text: str
       return ok(renameSection(worksheet, row.section.id, text.trim()));
     case 'new-section':
       return ok(insertSection(worksheet, worksheet.sections.length, text.trim()));
+    case 'item':
     case 'other-section':
     case 'finding':
       return ok({ label: 'Nothing', changes: [] });

@@ -10,7 +10,8 @@ import type { Row } from './rows';
 export type Column = 'margin' | 'symbol' | 'label' | 'entry' | OptionalColumn | `case ${string}`;
 
 /** A cell of any row: a column, or one of the cells that only headings and findings have. */
-export type CellName = Column | 'title' | 'finding' | 'accept' | `repair ${number}`;
+export type CellName =
+  Column | 'title' | 'finding' | 'accept' | `repair ${number}` | `new ${'chain' | 'pool' | 'curve'}`;
 
 /** The value column of a case. */
 export const caseColumn = (caseId: string): `case ${string}` => `case ${caseId}`;
@@ -89,12 +90,14 @@ export function leastTotal(columns: readonly Column[], width: number): number {
 export function cellsOf(row: Row, columns: readonly Column[]): readonly CellName[] {
   switch (row.kind) {
     case 'line':
+    case 'item':
       return columns;
     case 'section':
       return ['margin', 'title'];
     case 'other-section':
-    case 'new-section':
       return ['title'];
+    case 'new-section':
+      return ['title', 'new chain', 'new pool', 'new curve'];
     case 'add':
       return ['symbol', 'label', 'entry'];
     case 'finding': {
@@ -108,7 +111,7 @@ export function cellsOf(row: Row, columns: readonly Column[]): readonly CellName
 export function cellNearest(row: Row, columns: readonly Column[], wanted: CellName): CellName {
   const cells = cellsOf(row, columns);
   if (cells.includes(wanted)) return wanted;
-  if (row.kind === 'line') return 'symbol';
+  if (row.kind === 'line' || row.kind === 'item') return 'symbol';
   if (row.kind === 'section') return 'title';
   if (row.kind === 'add') {
     const at = columns.findIndex((one) => one === wanted);

@@ -8,13 +8,19 @@ import type { LineFinding } from '../../engine';
 import {
   deleteLines,
   deleteSection,
+  freeSymbol,
   duplicateLines,
   insertLine,
   insertSection,
+  isLinesSection,
   moveLines,
   moveSection,
+  newChain,
+  newCurve,
+  newPool,
   placeAbove,
   placeBelow,
+  symbolsIn,
   type Edit,
 } from '../../worksheet';
 import { clearingEdit, isEditable } from './cell-texts';
@@ -101,10 +107,29 @@ function activate(model: GridModel): void {
   const row = model.cursorRow;
   const { cell } = model.cursor;
   if (row === undefined) return;
-  if (isEditable(row, cell)) model.edit();
+  if (opensPanel(row, cell)) model.session.openPanel();
+  else if (cell === 'new chain' || cell === 'new pool' || cell === 'new curve') addOfKind(model, cell);
+  else if (isEditable(row, cell)) model.edit();
   else if (cell === 'margin' && row.kind === 'line') model.menuRow = row.key;
   else if (cell === 'margin') fold(model);
   else if (row.kind === 'finding') activateFinding(model, row.finding, cell);
+}
+
+/** Enter on what is shown and changed in the panel. */
+const opensPanel = (row: Row, cell: string): boolean => row.kind === 'item' && cell !== 'margin';
+
+/** Adds a chain, a pool or a curve at the end. */
+export function addOfKind(model: GridModel, cell: 'new chain' | 'new pool' | 'new curve'): void {
+  const { session } = model;
+  const { worksheet } = session;
+  const taken = symbolsIn(worksheet);
+  const makers = {
+    'new chain': () => newChain(freeSymbol('rx', taken), 'Receiver'),
+    'new pool': () => newPool(freeSymbol('N_I', taken), 'Noise and interference'),
+    'new curve': () => newCurve(freeSymbol('G_curve', taken), 'Curve'),
+  };
+  const edit = insertSection(worksheet, worksheet.sections.length, makers[cell]());
+  if (session.perform(edit, { follow: true }) && cell !== 'new pool') session.openPanel();
 }
 
 function activateFinding(model: GridModel, finding: LineFinding, cell: string): void {
@@ -142,6 +167,10 @@ function insert(model: GridModel, above: boolean): void {
   }
   if (row.kind === 'section') {
     model.setCollapsed(row.section.id, false);
+    if (!isLinesSection(row.section)) {
+      session.openPanel();
+      return;
+    }
     const first = row.section.lines[0];
     if (first === undefined) model.put({ row: addKey(row.section.id), cell: 'symbol' });
     else session.perform(insertLine(session.worksheet, placeAbove(session.worksheet, first.id)), { follow: true });
@@ -150,7 +179,7 @@ function insert(model: GridModel, above: boolean): void {
 
 function sectionIdOf(model: GridModel, row: Row): string | undefined {
   if (row.kind === 'section' || row.kind === 'add' || row.kind === 'other-section') return row.section.id;
-  if (row.kind === 'line') return row.sectionId;
+  if (row.kind === 'line' || row.kind === 'item') return row.sectionId;
   if (row.kind === 'new-section') return undefined;
   for (let index = model.indexOf(row.key); index >= 0; index--) {
     const above = model.rows[index];
@@ -200,7 +229,8 @@ function move(model: GridModel, direction: 'up' | 'down'): void {
 function fold(model: GridModel): void {
   const row = model.cursorRow;
   if (row?.kind === 'section') model.setCollapsed(row.section.id, !row.collapsed);
-  else if (row?.kind === 'line' && row.findings.length > 0) model.setUnfolded(row.line.id, !row.unfolded);
+  else if ((row?.kind === 'line' || row?.kind === 'item') && row.findings.length > 0)
+    model.setUnfolded(row.line.id, !row.unfolded);
   else if (row?.kind === 'finding') {
     const { line } = row;
     model.lookAt({ kind: 'lines', lineIds: [line.id] });
@@ -212,7 +242,7 @@ function fold(model: GridModel): void {
 function findingsAtHand(model: GridModel): readonly LineFinding[] {
   const row = model.cursorRow;
   if (row?.kind === 'finding') return [row.finding];
-  const own = row?.kind === 'line' ? row.findings.filter(isOpen) : [];
+  const own = row?.kind === 'line' || row?.kind === 'item' ? row.findings.filter(isOpen) : [];
   const { session } = model;
   if (own.length > 0 || session.lastEditedLineId === null) return own;
   return session.findings(session.lastEditedLineId).filter(isOpen);

@@ -4,6 +4,7 @@
  */
 import { tick } from 'svelte';
 import type { Session } from '../../app/session.svelte';
+import { itemRows, rowOfItem } from '../../app/item-rows';
 import { findLine, type Focus } from '../../worksheet';
 import {
   caseColumn,
@@ -101,6 +102,7 @@ export class GridModel {
   readonly rows: readonly Row[] = $derived.by(() =>
     rowsOf({
       worksheet: this.session.worksheet,
+      evaluation: this.session.evaluation,
       findings: this.session.sheetFindings(),
       collapsed: this.#collapsed,
       folding: this.#folding,
@@ -121,7 +123,9 @@ export class GridModel {
   /** The lines that are selected, from top to bottom; those of folded sections are not among them. */
   get selectedLineIds(): readonly string[] {
     const { selection } = this.session;
-    if (selection.anchorId === null) return selection.lineId === null ? [] : [selection.lineId];
+    const { lineId } = selection;
+    if (lineId !== null && findLine(this.session.worksheet, lineId) === undefined) return [];
+    if (selection.anchorId === null) return lineId === null ? [] : [lineId];
     return selection.within(this.rows.flatMap((row) => (row.kind === 'line' ? [row.line.id] : [])));
   }
 
@@ -133,10 +137,11 @@ export class GridModel {
     this.#lastIndex = Math.max(this.indexOf(cell.row), 0);
     if (options.keepWanted !== true) this.#wanted = cell.cell;
     const row = this.rows[this.indexOf(cell.row)];
-    const lineId = row?.kind === 'line' ? row.line.id : row?.kind === 'finding' ? row.line.id : null;
+    const lineId = row?.kind === 'line' || row?.kind === 'item' || row?.kind === 'finding' ? row.line.id : null;
     const caseId = caseOfColumn(cell.cell);
     const { selection } = this.session;
-    if (options.extend === true && lineId !== null) selection.extendTo(lineId);
+    selection.sectionId = row?.kind === 'section' ? row.section.id : null;
+    if (options.extend === true && row?.kind === 'line') selection.extendTo(row.line.id);
     else selection.put(lineId);
     if (caseId !== undefined) selection.caseId = caseId;
   }
@@ -204,6 +209,7 @@ export class GridModel {
     if (focus.kind === 'lines') {
       const [lineId] = focus.lineIds;
       const found = lineId === undefined ? undefined : findLine(this.session.worksheet, lineId);
+      if (lineId !== undefined && found === undefined) this.#lookAtItem(lineId);
       if (lineId === undefined || found === undefined) return;
       this.setCollapsed(found.section.id, false);
       this.put({ row: lineKey(lineId), cell: this.#cellFor(focus.field, focus.caseId) });
@@ -216,6 +222,21 @@ export class GridModel {
       return;
     }
     this.toTop();
+  }
+
+  /** Puts the cursor on the row that tells of an item: a stage or an output of a chain, a total, a curve. */
+  #lookAtItem(lineId: string): void {
+    const { evaluation, worksheet } = this.session;
+    const sectionId = evaluation.originOf(lineId)?.sectionId;
+    const section = worksheet.sections.find(({ id }) => id === sectionId);
+    if (section === undefined) return;
+    this.setCollapsed(section.id, false);
+    const item = rowOfItem(itemRows(evaluation, section), evaluation, lineId);
+    this.put(
+      item === undefined
+        ? { row: sectionKey(section.id), cell: 'title' }
+        : { row: lineKey(item.line.id), cell: 'symbol' },
+    );
   }
 
   /** Puts the cursor on the first cell to type in. */

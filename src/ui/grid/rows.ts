@@ -3,14 +3,29 @@
  * lines.
  * Holds: a row's key names the same thing from one list to the next, so that what was measured and where the cursor stood last.
  */
-import type { LineFinding } from '../../engine';
-import { isLinesSection, type Line, type LinesSection, type Section, type Worksheet } from '../../worksheet';
+import type { Evaluation, LineFinding } from '../../engine';
+import { itemRows, rowOfItem, type ItemRow } from '../../app/item-rows';
+import {
+  isLinesSection,
+  isOtherSection,
+  isPoolSection,
+  type Line,
+  type LinesSection,
+  type OtherSection,
+  type Section,
+  type Worksheet,
+} from '../../worksheet';
 import { isOpen } from '../../app/finding-counts';
 
 /** One row of the grid. */
 export type Row =
-  | { readonly kind: 'section'; readonly key: string; readonly section: LinesSection; readonly collapsed: boolean }
-  | { readonly kind: 'other-section'; readonly key: string; readonly section: Exclude<Section, LinesSection> }
+  | {
+      readonly kind: 'section';
+      readonly key: string;
+      readonly section: Exclude<Section, OtherSection>;
+      readonly collapsed: boolean;
+    }
+  | { readonly kind: 'other-section'; readonly key: string; readonly section: OtherSection }
   | {
       readonly kind: 'line';
       readonly key: string;
@@ -22,6 +37,16 @@ export type Row =
       /** Whether the findings stand open below. */
       readonly unfolded: boolean;
     }
+  /** A stage or an output of a chain, a pool's total, a curve. */
+  | {
+      readonly kind: 'item';
+      readonly key: string;
+      readonly line: Line;
+      readonly item: ItemRow;
+      readonly sectionId: string;
+      readonly findings: readonly LineFinding[];
+      readonly unfolded: boolean;
+    }
   | { readonly kind: 'finding'; readonly key: string; readonly line: Line; readonly finding: LineFinding }
   | { readonly kind: 'add'; readonly key: string; readonly section: LinesSection }
   | { readonly kind: 'new-section'; readonly key: string };
@@ -31,6 +56,7 @@ export type RowKind = Row['kind'];
 /** What the list of rows is made from. */
 export interface RowsInput {
   readonly worksheet: Worksheet;
+  readonly evaluation: Evaluation;
   /** All findings, in the order of the worksheet. */
   readonly findings: readonly LineFinding[];
   /** Sections whose lines are put away. */
@@ -53,7 +79,7 @@ export function isUnfoldedAtFirst(findings: readonly LineFinding[]): boolean {
 }
 
 /** All rows. */
-export function rowsOf({ worksheet, findings, collapsed, folding }: RowsInput): Row[] {
+export function rowsOf({ worksheet, evaluation, findings, collapsed, folding }: RowsInput): Row[] {
   const byLine = new Map<string, LineFinding[]>();
   for (const finding of findings) {
     // A line that waits says so in place of its figure.
@@ -63,29 +89,55 @@ export function rowsOf({ worksheet, findings, collapsed, folding }: RowsInput): 
     else known.push(finding);
   }
   const rows: Row[] = [];
+  const pushFindings = (line: Line, own: readonly LineFinding[], unfolded: boolean): void => {
+    if (!unfolded) return;
+    own.forEach((finding, i) => {
+      rows.push({ kind: 'finding', key: findingKey(line.id, i), line, finding });
+    });
+  };
+  const isUnfolded = (lineId: string, own: readonly LineFinding[]): boolean =>
+    own.length > 0 && (folding.get(lineId) ?? isUnfoldedAtFirst(own));
+  const pushItems = (section: Section): void => {
+    const items = itemRows(evaluation, section);
+    const ofRow = new Map<ItemRow, LineFinding[]>();
+    for (const [lineId, own] of byLine) {
+      if (evaluation.originOf(lineId)?.sectionId !== section.id) continue;
+      const row = rowOfItem(items, evaluation, lineId);
+      if (row !== undefined) ofRow.set(row, [...(ofRow.get(row) ?? []), ...own]);
+    }
+    for (const item of items) {
+      const { line } = item;
+      const own = ofRow.get(item) ?? NONE;
+      const unfolded = isUnfolded(line.id, own);
+      rows.push({ kind: 'item', key: lineKey(line.id), line, item, sectionId: section.id, findings: own, unfolded });
+      pushFindings(line, own, unfolded);
+    }
+  };
   let number = 0;
   for (const section of worksheet.sections) {
-    if (!isLinesSection(section)) {
+    if (isOtherSection(section)) {
       rows.push({ kind: 'other-section', key: sectionKey(section.id), section });
       continue;
     }
     const isCollapsed = collapsed.has(section.id);
     rows.push({ kind: 'section', key: sectionKey(section.id), section, collapsed: isCollapsed });
     if (isCollapsed) {
-      number += section.lines.length;
+      if (isLinesSection(section)) number += section.lines.length;
+      continue;
+    }
+    if (!isLinesSection(section)) {
+      pushItems(section);
       continue;
     }
     for (const line of section.lines) {
       number += 1;
       const own = byLine.get(line.id) ?? NONE;
-      const unfolded = own.length > 0 && (folding.get(line.id) ?? isUnfoldedAtFirst(own));
+      const unfolded = isUnfolded(line.id, own);
       rows.push({ kind: 'line', key: lineKey(line.id), line, sectionId: section.id, number, findings: own, unfolded });
-      if (!unfolded) continue;
-      own.forEach((finding, i) => {
-        rows.push({ kind: 'finding', key: findingKey(line.id, i), line, finding });
-      });
+      pushFindings(line, own, unfolded);
     }
     rows.push({ kind: 'add', key: addKey(section.id), section });
+    if (isPoolSection(section)) pushItems(section);
   }
   rows.push({ kind: 'new-section', key: NEW_SECTION_KEY });
   return rows;
@@ -100,6 +152,7 @@ export function expectedHeight(row: Row, showLinear: boolean): number {
     case 'other-section':
       return 48;
     case 'line':
+    case 'item':
       return showLinear ? 46 : 32;
     case 'finding':
       return 50;

@@ -1,6 +1,7 @@
 // What typing in a cell does to the worksheet, and what is refused with a reason.
 import { describe, expect, it } from 'vitest';
 
+import { Evaluation } from '../../../src/engine';
 import { caseTyped, clearingEdit, editOf, isEditable, refusal, textIn } from '../../../src/ui/grid/cell-texts';
 import type { CellName } from '../../../src/ui/grid/columns';
 import { rowsOf, type Row } from '../../../src/ui/grid/rows';
@@ -13,9 +14,13 @@ const worksheet = sheet([
 ]);
 
 const rowOf = (kind: Row['kind'], of: Worksheet = worksheet): Row => {
-  const found = rowsOf({ worksheet: of, findings: [], collapsed: new Set(), folding: new Map() }).find(
-    (row) => row.kind === kind,
-  );
+  const found = rowsOf({
+    worksheet: of,
+    evaluation: new Evaluation(of),
+    findings: [],
+    collapsed: new Set(),
+    folding: new Map(),
+  }).find((row) => row.kind === kind);
   if (found === undefined) throw new Error(kind);
   return found;
 };

@@ -1,6 +1,7 @@
 // Which columns there are in which width, and which cells rows have.
 import { describe, expect, it } from 'vitest';
 
+import { Evaluation } from '../../../src/engine';
 import {
   caseColumn,
   caseOfColumn,
@@ -58,6 +59,7 @@ describe('columns', () => {
 describe('cells', () => {
   const rows = rowsOf({
     worksheet,
+    evaluation: new Evaluation(worksheet),
     findings: [
       {
         code: 'loss-added',
@@ -82,7 +84,7 @@ describe('cells', () => {
     ['section', ['margin', 'title']],
     ['finding', ['finding', 'repair 0', 'repair 1', 'accept']],
     ['add', ['symbol', 'label', 'entry']],
-    ['new-section', ['title']],
+    ['new-section', ['title', 'new chain', 'new pool', 'new curve']],
   ] as const)('of a %s row', (kind, cells) => {
     const row = ofKind(kind);
     expect(row && cellsOf(row, columns)).toEqual(cells);

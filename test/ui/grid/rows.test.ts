@@ -1,7 +1,7 @@
 // The rows of the account, from worksheet and findings.
 import { describe, expect, it } from 'vitest';
 
-import type { LineFinding } from '../../../src/engine';
+import { Evaluation, type LineFinding } from '../../../src/engine';
 import { rowsOf, type Row, type RowsInput } from '../../../src/ui/grid/rows';
 import { sheetOf } from '../../app/support';
 
@@ -28,7 +28,14 @@ const finding = (lineId: string, more: Partial<LineFinding> = {}): LineFinding =
 });
 
 const rows = (more: Partial<RowsInput> = {}): Row[] =>
-  rowsOf({ worksheet, findings: [], collapsed: new Set(), folding: new Map(), ...more });
+  rowsOf({
+    worksheet,
+    evaluation: new Evaluation(more.worksheet ?? worksheet),
+    findings: [],
+    collapsed: new Set(),
+    folding: new Map(),
+    ...more,
+  });
 
 const told = (list: readonly Row[]): string[] =>
   list.map((row) => (row.kind === 'line' ? `${String(row.number)} ${row.line.symbol}` : row.kind));

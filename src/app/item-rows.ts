@@ -1,0 +1,128 @@
+/**
+ * What the account shows of sections that are not lists of lines: a chain's stages and outputs, a pool's total, a curve.
+ * Holds: every item that has a finding is told by one of these rows, so that none is out of sight.
+ */
+import { itemId, itemsOf, poolTotalId, type Evaluation } from '../engine';
+import {
+  isChainSection,
+  isCurveSection,
+  isPoolSection,
+  stageEntryIn,
+  STAGE_FIELDS,
+  type ChainSection,
+  type CurveSection,
+  type Line,
+  type Section,
+  type Stage,
+  type StageField,
+} from '../worksheet';
+
+/** A row about what is no line of the worksheet. */
+export interface ItemRow {
+  /** The item whose figures it shows; its id is the row's. */
+  readonly line: Line;
+  readonly symbol: string;
+  readonly label: string;
+  /** What stands in the place of an entry. */
+  readonly summary: string;
+  readonly stageId?: string;
+  /** True for a stage that is bypassed. */
+  readonly isOff: boolean;
+}
+
+/** The rows of a section below its heading (of a pool: below its lines). */
+export function itemRows(evaluation: Evaluation, section: Section): readonly ItemRow[] {
+  if (isPoolSection(section)) return poolRows(evaluation, section.id);
+  if (isChainSection(section)) return [...stageRows(evaluation, section), ...outputRows(evaluation, section)];
+  return isCurveSection(section) ? curveRows(evaluation, section) : [];
+}
+
+function poolRows(evaluation: Evaluation, sectionId: string): ItemRow[] {
+  const line = evaluation.line(poolTotalId(sectionId));
+  return line === undefined
+    ? []
+    : [{ line, symbol: line.symbol, label: 'Total', summary: 'adds as power', isOff: false }];
+}
+
+/** Figures that tell most of a stage, best first. */
+const TELLING = [
+  'S/N behind the stage',
+  'wanted level behind the stage',
+  'noise figure behind the stage',
+  'gain behind the stage',
+];
+
+function stageRows(evaluation: Evaluation, chain: ChainSection): ItemRow[] {
+  return chain.stages.flatMap((stage) => {
+    const ids = TELLING.map((label) => itemId(chain.id, itemId(stage.id, label)));
+    const line = ids.flatMap((id) => evaluation.line(id) ?? [])[0];
+    if (line === undefined) return [];
+    return [
+      {
+        line,
+        symbol: stage.symbol,
+        label: stage.label,
+        summary: stageSummary(stage),
+        stageId: stage.id,
+        isOff: stage.off === true,
+      },
+    ];
+  });
+}
+
+const SHORT: Readonly<Record<StageField, string>> = {
+  gain: '',
+  noiseFigure: 'NF ',
+  outputIntercept: 'OIP3 ',
+  inputIntercept: 'IIP3 ',
+  outputIntercept2: 'OIP2 ',
+  inputIntercept2: 'IIP2 ',
+  outputCompression: 'OP1dB ',
+  inputCompression: 'IP1dB ',
+  temperature: 'T ',
+  noiseBandwidth: 'B ',
+  selectivity: 'selectivity ',
+};
+
+/** What a stage says, in one line: `15 dB, NF 0.8 dB`. */
+export function stageSummary(stage: Stage): string {
+  return STAGE_FIELDS.flatMap((field) => {
+    const entry = stageEntryIn(stage, field);
+    return entry === '' ? [] : [`${SHORT[field]}${entry}`];
+  }).join(', ');
+}
+
+function outputRows(evaluation: Evaluation, chain: ChainSection): ItemRow[] {
+  const cases = evaluation.worksheet.cases;
+  return itemsOf(chain)
+    .filter(
+      ({ origin, derived, line }) => origin?.stageId === undefined && derived?.isCheck !== true && line.symbol !== '',
+    )
+    .map(({ line }) => line)
+    .filter(({ id, entry }) => entry !== '' || cases.some((one) => evaluation.figure(id, one.id).state !== 'empty'))
+    .map((line) => ({ line, symbol: line.symbol, label: line.label, summary: line.entry, isOff: false }));
+}
+
+function curveRows(evaluation: Evaluation, curve: CurveSection): ItemRow[] {
+  const line = evaluation.line(curve.id);
+  const xs = curve.points.map(([x]) => x);
+  const count = curve.points.length;
+  const range =
+    count === 0
+      ? 'no points yet'
+      : `${String(count)} ${count === 1 ? 'point' : 'points'}, ${String(Math.min(...xs))} to ${String(Math.max(...xs))} ${curve.x.unit}`;
+  return line === undefined
+    ? []
+    : [{ line, symbol: curve.symbol, label: `${curve.y.label} over ${curve.x.label}`, summary: range, isOff: false }];
+}
+
+/** The row that tells a finding on an item: its own, its stage's, or the first of its section. */
+export function rowOfItem(rows: readonly ItemRow[], evaluation: Evaluation, lineId: string): ItemRow | undefined {
+  const origin = evaluation.originOf(lineId);
+  return (
+    rows.find(({ line }) => line.id === lineId) ??
+    rows.find(({ stageId }) => stageId !== undefined && stageId === origin?.stageId) ??
+    rows.find(({ stageId }) => stageId === undefined) ??
+    rows[0]
+  );
+}
