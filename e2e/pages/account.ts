@@ -36,7 +36,7 @@ export class Account {
   readonly chosenSuggestion: Locator;
 
   constructor(readonly page: Page) {
-    this.grid = page.getByRole('grid');
+    this.grid = page.getByRole('grid', { name: /^The account/ });
     this.rows = this.grid.getByRole('row');
     this.tabStop = this.grid.getByRole('gridcell').and(page.locator('[tabindex="0"]'));
     this.editor = this.grid.getByRole('gridcell').locator('input');

@@ -1,8 +1,13 @@
-/** Files in and out of the browser: saving a text as a download, choosing a file, reading a dropped one. */
+/** Files in and out of the browser: saving a text or a picture as a download, choosing a file, reading a dropped one. */
 
 /** Offers a text as a download under this name. */
 export function downloadText(name: string, text: string, type = 'application/json'): void {
-  const address = URL.createObjectURL(new Blob([text], { type }));
+  downloadBlob(name, new Blob([text], { type }));
+}
+
+/** Offers bytes as a download under this name. */
+export function downloadBlob(name: string, blob: Blob): void {
+  const address = URL.createObjectURL(blob);
   const link = document.createElement('a');
   link.href = address;
   link.download = name;

@@ -26,6 +26,8 @@ export interface ItemRow {
   /** What stands in the place of an entry. */
   readonly summary: string;
   readonly stageId?: string;
+  /** What its figure is of, where the row tells of several. */
+  readonly figureOf?: string;
   /** True for a stage that is bypassed. */
   readonly isOff: boolean;
 }
@@ -44,22 +46,26 @@ function poolRows(evaluation: Evaluation, sectionId: string): ItemRow[] {
     : [{ line, symbol: line.symbol, label: 'Total', summary: 'adds as power', isOff: false }];
 }
 
-/** Figures that tell most of a stage, best first. */
+/** Figures that tell most of a stage, best first, and what they are called in a narrow column. */
 const TELLING = [
-  'S/N behind the stage',
-  'wanted level behind the stage',
-  'noise figure behind the stage',
-  'gain behind the stage',
-];
+  ['S/N behind the stage', 'S/N'],
+  ['wanted level behind the stage', 'level'],
+  ['noise figure behind the stage', 'NF so far'],
+  ['gain behind the stage', 'gain so far'],
+] as const;
 
 function stageRows(evaluation: Evaluation, chain: ChainSection): ItemRow[] {
+  const { cases } = evaluation.worksheet;
   return chain.stages.flatMap((stage) => {
-    const ids = TELLING.map((label) => itemId(chain.id, itemId(stage.id, label)));
-    const line = ids.flatMap((id) => evaluation.line(id) ?? [])[0];
-    if (line === undefined) return [];
+    const told = TELLING.flatMap(([label, figureOf]) => {
+      const line = evaluation.line(itemId(chain.id, itemId(stage.id, label)));
+      const isThere = line !== undefined && cases.some((one) => evaluation.figure(line.id, one.id).state !== 'empty');
+      return isThere ? [{ line, figureOf }] : [];
+    })[0];
+    if (told === undefined) return [];
     return [
       {
-        line,
+        ...told,
         symbol: stage.symbol,
         label: stage.label,
         summary: stageSummary(stage),
@@ -96,7 +102,8 @@ function outputRows(evaluation: Evaluation, chain: ChainSection): ItemRow[] {
   const cases = evaluation.worksheet.cases;
   return itemsOf(chain)
     .filter(
-      ({ origin, derived, line }) => origin?.stageId === undefined && derived?.isCheck !== true && line.symbol !== '',
+      ({ origin, derived, line }) =>
+        origin?.stageId === undefined && derived?.isCheck !== true && derived?.unit !== '%' && line.symbol !== '',
     )
     .map(({ line }) => line)
     .filter(({ id, entry }) => entry !== '' || cases.some((one) => evaluation.figure(id, one.id).state !== 'empty'))

@@ -1,5 +1,7 @@
 /** Searching a worksheet: which lines hold a text, and in which field. */
-import { allLines, entriesOf, type Line, type Worksheet } from '../worksheet';
+import type { Evaluation } from '../engine';
+import { entriesOf, isLinesSection, type Line } from '../worksheet';
+import { itemRows } from './item-rows';
 import { withoutCapitals } from './found-places';
 
 /** Fields that are searched. */
@@ -13,14 +15,20 @@ export interface Match {
 
 const FIELDS: readonly SearchedField[] = ['symbol', 'label', 'entry', 'source', 'note'];
 
-/** The lines that hold a text, in the order of the worksheet; capitals do not matter. None for an empty text. */
-export function matchesOf(worksheet: Worksheet, text: string): readonly Match[] {
+/** The lines, stages and other rows that hold a text, in the order of the worksheet; capitals do not matter. None for an empty text. */
+export function matchesOf(evaluation: Evaluation, text: string): readonly Match[] {
   const wanted = withoutCapitals(text.trim());
   if (wanted === '') return [];
-  return allLines(worksheet).flatMap((line) => {
+  const inLine = (line: Line): Match[] => {
     const field = FIELDS.find((one) => withoutCapitals(textOf(line, one)).includes(wanted));
     return field === undefined ? [] : [{ lineId: line.id, field }];
-  });
+  };
+  return evaluation.worksheet.sections.flatMap((section) => [
+    ...(isLinesSection(section) ? section.lines.flatMap(inLine) : []),
+    ...itemRows(evaluation, section).flatMap(({ line, symbol, label, summary }) =>
+      inLine({ ...line, symbol, label, entry: summary }),
+    ),
+  ]);
 }
 
 function textOf(line: Line, field: SearchedField): string {

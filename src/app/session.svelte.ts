@@ -64,8 +64,8 @@ export class Session {
   panel = $state<Panel>('working');
   /** True while the panel takes the whole width. */
   panelIsWide = $state(false);
-  /** Grows with each wish to work in the panel: it takes the focus then. */
-  panelAsked = $state(0);
+  /** True until the panel has taken the focus that somebody wants there. */
+  panelWantsFocus = $state(false);
   dialog = $state<DialogName | null>(null);
   /** Something to tell the person that is not tied to a line, until it is dismissed. */
   notice = $state.raw<{ readonly text: string; readonly undo?: () => void } | null>(null);
@@ -217,7 +217,7 @@ export class Session {
   /** Opens the panel on what is selected and brings the focus there. */
   openPanel(): void {
     this.panel = 'working';
-    this.panelAsked += 1;
+    this.panelWantsFocus = true;
   }
 
   /** Selects a line, and a case if given, and brings the cursor there. */

@@ -5,7 +5,6 @@
  */
 import { Evaluation, type LineFinding, type Pass, type Reading } from '../engine';
 import {
-  allLines,
   newWorksheet,
   perform,
   redoLabel,
@@ -66,9 +65,10 @@ export class Sheet {
     return this.#counts;
   }
 
-  /** The ids of all lines from top to bottom. */
+  /** The ids of all lines, and of what chains, pools and curves give, from top to bottom. */
   get lineOrder(): readonly string[] {
-    return allLines(this.worksheet).map((line) => line.id);
+    dependsOn(this.#version);
+    return this.#evaluation.order();
   }
 
   get undoLabel(): string | undefined {

@@ -77,7 +77,10 @@ export function exitCodeOf({ evaluation, cases, lines, findings }: Omit<Selectio
 function asJson({ evaluation, cases, lines, findings }: Selection): unknown {
   const byName = Object.create(null) as Record<string, unknown>;
   const names = new Map(lines.map((line) => [line.id, nameOfLine(evaluation, line)]));
-  for (const { lineId } of findings) if (!names.has(lineId)) names.set(lineId, nameOfOther(evaluation, lineId));
+  for (const { lineId } of findings) {
+    const line = evaluation.line(lineId);
+    if (line !== undefined && !names.has(lineId)) names.set(lineId, nameOfLine(evaluation, line));
+  }
   for (const line of lines) byName[names.get(line.id) ?? line.id] = lineAsJson(evaluation, line, cases);
   return {
     title: evaluation.worksheet.title,
@@ -95,12 +98,6 @@ function asJson({ evaluation, cases, lines, findings }: Selection): unknown {
       })),
     ),
   };
-}
-
-/** What a finding is on that is no line of the account: the stage's value, or else the stage or the chain. */
-function nameOfOther(evaluation: Evaluation, lineId: string): string {
-  const line = evaluation.line(lineId);
-  return line === undefined ? lineId : line.symbol || line.label;
 }
 
 /** The first repair in words: the new entry, the unit or the kind. */

@@ -75,6 +75,8 @@ export function lineWithSymbol({ evaluation, file }: Opened, symbol: string): Li
  */
 export function nameOfLine(evaluation: Evaluation, line: Line): string {
   if (line.symbol !== '' && evaluation.lineOf(line.symbol)?.id === line.id) return line.symbol;
+  // A part of a chain that has no symbol is called by its label.
+  if (evaluation.originOf(line.id) !== undefined) return line.label;
   let name = line.id;
   while (evaluation.lineOf(name) !== undefined || (name !== line.id && evaluation.line(name) !== undefined))
     name = `#${name}`;

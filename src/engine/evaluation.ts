@@ -355,6 +355,11 @@ export class Evaluation {
     return this.graph.byId.get(lineId)?.line;
   }
 
+  /** The ids of all that is evaluated, in the order of the account. */
+  order(): readonly string[] {
+    return this.graph.items.map(({ line }) => line.id);
+  }
+
   /** Where a line stands that is none of the worksheet's own: in which chain, pool or curve. */
   originOf(lineId: string): ItemPlace | undefined {
     return this.graph.byId.get(lineId)?.origin;

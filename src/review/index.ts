@@ -6,3 +6,15 @@ export * from './working';
 export type * from './working-types';
 export * from './recorded';
 export * from './cautions';
+export {
+  levelDiagramOfChain,
+  POINT_LEVELS,
+  type LevelDiagram,
+  type LevelPoint,
+  type PointLevel,
+  type PointLevelName,
+  type PointLink,
+} from './level-diagram';
+export { levelDiagramOfLine } from './level-sum';
+export * from './curve-uses';
+export * from './pool-account';

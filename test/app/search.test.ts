@@ -2,6 +2,7 @@
 import { describe, expect, it } from 'vitest';
 
 import { foundPlaces } from '../../src/app/found-places';
+import { Evaluation } from '../../src/engine';
 import { matchesOf, nextMatch } from '../../src/app/search';
 import { sheet } from './support';
 
@@ -31,7 +32,7 @@ describe('matches', () => {
     ['  ', []],
     ['nowhere', []],
   ] as const)('%s', (text, matches) => {
-    expect(matchesOf(worksheet, text)).toEqual(matches);
+    expect(matchesOf(new Evaluation(worksheet), text)).toEqual(matches);
   });
 });
 

@@ -8,7 +8,7 @@ import type { Finding } from '../../findings';
 import { FUNCTIONS, type FunctionEntry } from '../../formula';
 import { completionsAt, type Completion } from '../../formula/complete';
 import type { Reading } from '../../engine';
-import { allLines, proposeSymbol, symbolsIn } from '../../worksheet';
+import { isCurveSection, proposeSymbol, symbolsIn } from '../../worksheet';
 import { callAt } from './call-at';
 import { caseTyped, holdsEntry } from './cell-texts';
 import type { CellName } from './columns';
@@ -78,9 +78,14 @@ function previewOf(
 /** A line's own symbol is of no use in its entry. */
 function symbolsFor(session: Session, row: Row): { symbol: string; label: string }[] {
   const own = row.kind === 'line' ? row.line.id : undefined;
-  return allLines(session.worksheet)
+  const curves = session.worksheet.sections
+    .filter(isCurveSection)
+    .map(({ symbol, title }) => ({ symbol, label: title }));
+  return session.evaluation
+    .lines()
     .filter((line) => line.symbol !== '' && line.id !== own)
-    .map(({ symbol, label }) => ({ symbol, label }));
+    .map(({ symbol, label }) => ({ symbol, label }))
+    .concat(curves);
 }
 
 /** For a line with a label and no symbol yet, one that fits. */

@@ -46,7 +46,8 @@ export function runAction(model: GridModel, action: Action): boolean {
     case 'sheet-start':
     case 'sheet-end':
       model.moveRows(action === 'sheet-start' ? -Infinity : Infinity);
-      model.moveCells(action === 'sheet-start' ? -Infinity : Infinity);
+      // The last row's cells beyond its title add sections of other kinds: nobody is to come there by going to the end.
+      if (model.cursorRow?.kind !== 'new-section') model.moveCells(action === 'sheet-start' ? -Infinity : Infinity);
       return true;
     case 'page-up':
     case 'page-down':
@@ -129,7 +130,11 @@ export function addOfKind(model: GridModel, cell: 'new chain' | 'new pool' | 'ne
     'new curve': () => newCurve(freeSymbol('G_curve', taken), 'Curve'),
   };
   const edit = insertSection(worksheet, worksheet.sections.length, makers[cell]());
-  if (session.perform(edit, { follow: true }) && cell !== 'new pool') session.openPanel();
+  if (!session.perform(edit) || edit.focus === undefined) return;
+  // Lines of a pool are typed in the account; stages and points in the panel.
+  const goesOn = cell === 'new pool';
+  session.focusRequest = { focus: edit.focus, edit: false, ...(goesOn ? {} : { quiet: true }) };
+  if (!goesOn) session.openPanel();
 }
 
 function activateFinding(model: GridModel, finding: LineFinding, cell: string): void {

@@ -4,7 +4,7 @@
  * waits for another is apart, since it is put right with that other one.
  */
 import type { LineFinding } from '../../engine';
-import { findLine, type Worksheet } from '../../worksheet';
+import { findLine, type Line, type Worksheet } from '../../worksheet';
 
 /** The groups, in the order in which they are shown. */
 export const FINDING_GROUPS = ['error', 'warning', 'note', 'accepted', 'waiting'] as const;
@@ -27,15 +27,16 @@ function groupOf(finding: LineFinding): FindingGroup {
   return finding.code === 'waiting' ? 'waiting' : finding.severity;
 }
 
-/** The findings by group, each group in the order given. */
+/** The findings by group, each group in the order given. `lineOf` knows also what is no line of the worksheet. */
 export function groupFindings(
   worksheet: Worksheet,
   findings: readonly LineFinding[],
+  lineOf: (lineId: string) => Line | undefined = (lineId) => findLine(worksheet, lineId)?.line,
 ): Readonly<Record<FindingGroup, readonly FindingItem[]>> {
   const groups: Record<FindingGroup, FindingItem[]> = { error: [], warning: [], note: [], accepted: [], waiting: [] };
   const seen = new Map<string, number>();
   for (const finding of findings) {
-    const line = findLine(worksheet, finding.lineId)?.line;
+    const line = lineOf(finding.lineId);
     const base = `${finding.lineId} ${finding.code}`;
     const before = seen.get(base) ?? 0;
     seen.set(base, before + 1);

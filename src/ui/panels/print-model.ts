@@ -4,7 +4,16 @@
  */
 import type { LineFinding, Reading } from '../../engine';
 import type { Working } from '../../review';
-import { isLinesSection, overrideIn, type Case, type Line, type Worksheet } from '../../worksheet';
+import type { ItemRow } from '../../app/item-rows';
+import {
+  isLinesSection,
+  isOtherSection,
+  overrideIn,
+  type Case,
+  type Line,
+  type Section,
+  type Worksheet,
+} from '../../worksheet';
 import { tellsRadiation } from '../../review';
 import { groupFindings, type FindingItem } from './finding-groups';
 
@@ -12,6 +21,9 @@ import { groupFindings, type FindingItem } from './finding-groups';
 export interface PrintSource {
   readonly reading: (lineId: string, caseId: string) => Reading;
   readonly findings: () => readonly LineFinding[];
+  /** What a section has that is no line of the worksheet: stages and outputs of a chain, a total, a curve. */
+  readonly items: (section: Section) => readonly ItemRow[];
+  readonly lineOf: (lineId: string) => Line | undefined;
   /** Undefined for a line that is not there. */
   readonly working: (lineId: string, caseId: string) => Working | undefined;
 }
@@ -63,13 +75,15 @@ export function printDocument(worksheet: Worksheet, source: PrintSource): PrintD
   const sections = worksheet.sections.map((section) => ({
     id: section.id,
     title: section.title,
-    ...(isLinesSection(section) && {
-      lines: section.lines.map((line) => printLine(worksheet, line, source, noteNumber)),
+    ...(!isOtherSection(section) && {
+      lines: [...(isLinesSection(section) ? section.lines : []), ...source.items(section).map(lineOfItem)].map((line) =>
+        printLine(worksheet, line, source, noteNumber),
+      ),
     }),
   }));
   const lines = sections.flatMap((section) => section.lines ?? []);
   const required = lines.filter(({ line }) => line.requirement !== undefined);
-  const groups = groupFindings(worksheet, source.findings());
+  const groups = groupFindings(worksheet, source.findings(), source.lineOf);
   return {
     sections,
     required,
@@ -78,6 +92,11 @@ export function printDocument(worksheet: Worksheet, source: PrintSource): PrintD
     workings: required.flatMap(({ line }) => workingsOf(worksheet.cases, line, source)),
     radiates: lines.some((line) => line.radiates),
   };
+}
+
+/** An item as a line to print: what it is called, and its summary in the place of an entry. */
+function lineOfItem({ line, symbol, label, summary, isOff }: ItemRow): Line {
+  return { ...line, symbol, label: isOff ? `${label} (bypassed)` : label, entry: summary };
 }
 
 function printLine(

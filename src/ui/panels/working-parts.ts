@@ -25,7 +25,7 @@ export const ORIGIN_WORDS: Readonly<Record<Origin, string>> = {
 };
 
 /** A margin's size in a unit named by its word; one that rounds to nothing is said to be less than the last digit. */
-function writeSize(size: number, word: string): string {
+export function writeSize(size: number, word: string): string {
   const unit = findUnit(word);
   if (unit === undefined) return `${String(size)} ${word}`;
   const written = writeQuantity(size, unit);

@@ -12,6 +12,8 @@ const evaluation = evaluate();
 const source: PrintSource = {
   reading: (lineId, caseId) => evaluation.reading(lineId, caseId),
   findings: () => evaluation.sheetFindings(),
+  items: () => [],
+  lineOf: (lineId: string) => evaluation.line(lineId),
   working: (lineId, caseId) => workingOf(evaluation, lineId, caseId),
 };
 
