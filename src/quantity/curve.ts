@@ -42,7 +42,9 @@ export function makeCurve(table: CurveTable): Result<Curve, string> {
   if (first === undefined || last === undefined || points.length < 2) return fail('A curve needs two points at least.');
   const repeated = points.find(([x], i) => x === points[i + 1]?.[0]);
   if (repeated !== undefined)
-    return fail(`Two points stand at ${String(repeated[0])} ${table.x.unit}; a curve has one value at each place.`);
+    return fail(
+      `Two points stand at ${String(repeated[0])}${xUnit.word === '1' ? '' : ` ${table.x.unit}`}; a curve has one value at each place.`,
+    );
   if (table.isLogarithmic && first[0] <= 0)
     return fail('By its logarithm an axis has places above 0 only; the first point is not one.');
   // An angle comes in radians and back: what rounding puts beyond an end is still the end.

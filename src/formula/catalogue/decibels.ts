@@ -237,17 +237,26 @@ const ratios: StructuralFunction = {
   },
 };
 
+const SIGNAL_RATIO = 'a signal ratio';
+const IMPAIRMENT_RATIO = 'an impairment ratio';
+
 /** What sort of thing an operand of a pool is: things of one sort have a total. */
 function sortInPool(operand: Checked): string {
   const { type } = operand;
   if (type.form !== 'decibel' && type.form !== 'linear') return describeType(type);
   const isRatio = isDimensionless(type.dimension);
   const { meaning } = type;
-  if (isRatio && meaning !== undefined && meaning.w === 1 && meaning.u === -1) return 'a signal ratio';
-  if (isRatio && meaning !== undefined && meaning.w === -1 && meaning.u === 1) return 'an impairment ratio';
+  if (isRatio && meaning !== undefined && meaning.w === 1 && meaning.u === -1) return SIGNAL_RATIO;
+  if (isRatio && meaning !== undefined && meaning.w === -1 && meaning.u === 1) return IMPAIRMENT_RATIO;
   // By what the decibels stand for, whatever unit shows it: dBm beside pW, K beside °C, dBµV beside mV.
   const dimension = type.form === 'linear' ? powerDimension(type) : type.dimension;
   return describeType({ ...type, form: 'linear', dimension, degree: 0, sort: 'ratio', unitHint: undefined });
+}
+
+/** The sort in words: with the unit that is shown, by which the reader knows it. */
+function sortWords(operand: Checked): string {
+  const sort = sortInPool(operand);
+  return sort === SIGNAL_RATIO || sort === IMPAIRMENT_RATIO ? sort : describeType(operand.type);
 }
 
 const pool: StructuralFunction = {
@@ -270,13 +279,13 @@ const pool: StructuralFunction = {
       return context.stop('pool-mixed', tree, {
         facts: {
           first: context.textOf(first.tree),
-          firstSort: sort,
+          firstSort: sortWords(first),
           second: context.textOf(odd.tree),
-          secondSort: sortInPool(odd),
+          secondSort: sortWords(odd),
         },
         repairs: [],
       });
-    const isRatio = sort === 'a signal ratio' || sort === 'an impairment ratio';
+    const isRatio = sort === SIGNAL_RATIO || sort === IMPAIRMENT_RATIO;
     const isLinear = operands.every(({ type }) => type.form === 'linear');
     const way = isRatio ? ratios : isLinear ? total : powerSumming;
     return way.check({ ...tree, name: way.name }, operands, context);
