@@ -98,12 +98,19 @@ export function stageSummary(stage: Stage): string {
   }).join(', ');
 }
 
+/** What the chain's own inputs say already. */
+const isAtInput = (symbol: string): boolean => /\.in\.[a-z]+$/.test(symbol);
+
 function outputRows(evaluation: Evaluation, chain: ChainSection): ItemRow[] {
   const cases = evaluation.worksheet.cases;
   return itemsOf(chain)
     .filter(
       ({ origin, derived, line }) =>
-        origin?.stageId === undefined && derived?.isCheck !== true && derived?.unit !== '%' && line.symbol !== '',
+        origin?.stageId === undefined &&
+        derived?.isCheck !== true &&
+        derived?.unit !== '%' &&
+        line.symbol !== '' &&
+        !isAtInput(line.symbol),
     )
     .map(({ line }) => line)
     .filter(({ id, entry }) => entry !== '' || cases.some((one) => evaluation.figure(id, one.id).state !== 'empty'))

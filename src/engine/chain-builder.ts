@@ -50,7 +50,7 @@ export class ChainBuilder {
       quantity,
       ...(side && field === 'signal' ? { side } : {}),
     };
-    this.items.push({ line, origin: { sectionId: this.chain.id } });
+    this.items.push({ line, origin: { sectionId: this.chain.id, isUnitChosen: false } });
     return line.id;
   }
 
@@ -75,7 +75,7 @@ export class ChainBuilder {
       ...(stage.source === undefined ? {} : { source: stage.source }),
       ...(stage.accepted?.[field] === undefined ? {} : { accepted: stage.accepted[field] }),
     };
-    this.items.push({ line, origin: { sectionId: this.chain.id, stageId: stage.id, field } });
+    this.items.push({ line, origin: { sectionId: this.chain.id, stageId: stage.id, field, isUnitChosen: false } });
     return line.id;
   }
 

@@ -50,6 +50,8 @@ export interface ItemPlace {
   readonly sectionId: string;
   readonly stageId?: string;
   readonly field?: StageField;
+  /** False: the unit is the program's choice, and display may take a prefix. */
+  readonly isUnitChosen?: false;
 }
 
 export interface Item {

@@ -100,7 +100,10 @@ export class Node {
   private resultIn(scope: Scope): LineResult {
     const { derived, curve } = this.item;
     if (derived !== undefined) return derivedResult(derived, this.slot, this.inputs);
-    return curve === undefined ? checkLine(this.spec(), scope, this.read) : curveResult(curve);
+    if (curve !== undefined) return curveResult(curve);
+    const result = checkLine(this.spec(), scope, this.read);
+    // Nobody has chosen the units of a chain's values: a bandwidth in Hz may be shown in MHz.
+    return this.item.origin?.isUnitChosen === false ? { ...result, isFitted: true } : result;
   }
 
   /** What the checker is told of the line. An override follows the unit typed in the line's own entry. */

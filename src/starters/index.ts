@@ -5,7 +5,9 @@
  */
 import harbourBuoyUplink from './harbour-buoy-uplink.budget.json?raw';
 import ridgeToRidgeHop from './ridge-to-ridge-hop.budget.json?raw';
+import satelliteGroundStation from './satellite-ground-station.budget.json?raw';
 import smallSatelliteDownlink from './small-satellite-downlink.budget.json?raw';
+import twoConversionReceiver from './two-conversion-receiver.budget.json?raw';
 
 /** An example to begin from. */
 export interface Starter {
@@ -39,5 +41,19 @@ export const STARTERS: readonly Starter[] = [
     summary:
       'G/T, C/N₀ and Eb/N₀ from the satellite Larkmote to a three-metre dish at Oskerrin, at the zenith and low over the horizon. Satellite, station and figures are invented.',
     text: smallSatelliteDownlink,
+  },
+  {
+    id: 'two-conversion-receiver',
+    title: 'Receiver with two conversions',
+    summary:
+      'Gain, noise, intercepts and headroom along the receiver of the relay on Fennock Knoll, in a quiet band and beside strong neighbours. Place, parts and figures are invented.',
+    text: twoConversionReceiver,
+  },
+  {
+    id: 'satellite-ground-station',
+    title: 'Satellite ground station',
+    summary:
+      'G/T, C/N₀ and Eb/N₀ of the station at Skelderhaugh under an imaging satellite, on a high pass in clear air and on a low one in rain. Satellite, station and figures are invented.',
+    text: satelliteGroundStation,
   },
 ];

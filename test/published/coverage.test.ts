@@ -5,7 +5,8 @@
  * put through a worksheet stand word for word in `data/` (id, inputs, figures, tolerance, source, how), 393 of them, and every
  * one is run by `checks.test.ts`. The other 398 are named in `not-covered.json` under the reason: for the most part functions of
  * later milestones; some are limits or definitions in which there is nothing to compute. A record that becomes reachable moves
- * from there into `data/`, and gets a recipe. `data/prose.json` holds 15 more, which were handed down in the prose beside them.
+ * from there into `data/`, and gets a recipe. Cascades and combinations go through chains and pools as well
+ * (`chains.test.ts`). `data/prose.json` holds 15 more, which were handed down in the prose beside them.
  */
 import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';

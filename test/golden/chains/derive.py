@@ -12,6 +12,7 @@ Holds: nothing here comes from the program under test. All stages are invented.
 """
 
 import json
+import re
 import sys
 import uuid
 from math import log10, sqrt
@@ -55,17 +56,17 @@ CHAINS = {
         ],
     },
     "powers-superhet": {
-        "title": "The same stages, products added as powers",
+        "title": "The same stages with second-order intercepts, products added as powers",
         "signal": -92.0,
         "noise": 290.0,
         "bandwidth": 200e3,
         "intercept": "power",
         "stages": [
             ("pre", "Preselector", {"gain": -1.4}),
-            ("lna", "Amplifier", {"gain": 16.0, "nf": 1.1, "oip3": 24.0, "op1db": 12.5}),
+            ("lna", "Amplifier", {"gain": 16.0, "nf": 1.1, "oip3": 24.0, "oip2": 41.0, "op1db": 12.5}),
             ("img", "Image filter", {"gain": -2.1, "iip3": 42.0}),
-            ("mix", "Mixer", {"gain": -6.8, "nf": 7.1, "iip3": 17.0, "ip1db": 7.0}),
-            ("amp", "Amplifier at the intermediate frequency", {"gain": 24.0, "nf": 3.2, "oip3": 31.0, "op1db": 19.0}),
+            ("mix", "Mixer", {"gain": -6.8, "nf": 7.1, "iip3": 17.0, "iip2": 43.0, "ip1db": 7.0}),
+            ("amp", "Amplifier at the intermediate frequency", {"gain": 24.0, "nf": 3.2, "oip3": 31.0, "oip2": 58.0, "op1db": 19.0}),
         ],
     },
     "bypassed-stages": {
@@ -148,6 +149,9 @@ CHAINS = {
     },
 }
 
+# What a chain takes its surroundings from.
+INPUTS = {"signal": "dBm", "noise": "K", "bandwidth": "Hz", "interferer": "dBm"}
+
 
 def own_figures(stage):
     """What a stage is by itself, at both ends."""
@@ -219,6 +223,7 @@ def derive(chain):
     signal = watts_of(chain["signal"])
     interferer = watts_of(chain["interferer"]) if "interferer" in chain else None
 
+    out.update({f"input.{name}": chain[name] for name in INPUTS if name in chain})
     out["in.signal"] = dbm(signal)
     out["in.noise"] = dbm(BOLTZMANN * source * bandwidth)
     out["in.snr"] = decibels(signal / (BOLTZMANN * source * bandwidth))
@@ -328,9 +333,6 @@ FIELDS = {
     "selectivity": ("selectivity", "dB"),
 }
 
-INPUTS = {"signal": "dBm", "noise": "K", "bandwidth": "Hz", "interferer": "dBm"}
-
-
 def worksheet_of(name, chain):
     stages = []
     for number, (symbol, label, stage) in enumerate(chain["stages"]):
@@ -360,7 +362,9 @@ def worksheet_of(name, chain):
 def main():
     files = {f"{name}.budget.json": worksheet_of(name, chain) for name, chain in CHAINS.items()}
     expected = {name: dict(sorted(derive(chain).items())) for name, chain in CHAINS.items()}
-    files["expected.json"] = json.dumps(expected, indent=2, ensure_ascii=False) + "\n"
+    # Exponents without leading zeros, as the formatter of the repository has them.
+    text = re.sub(r"e-0(\d)", r"e-\1", json.dumps(expected, indent=2, ensure_ascii=False))
+    files["expected.json"] = text + "\n"
     stale = []
     for file, text in files.items():
         path = HERE / file

@@ -8,8 +8,9 @@ their definitions, and each line's arithmetic is put down in notes.md as it was 
 """
 
 import json
+import re
 import sys
-from math import asin, cos, inf, isinf, log10, pi, radians, sin, sqrt
+from math import asin, cos, inf, isinf, log, log1p, log10, pi, radians, sin, sqrt
 from pathlib import Path
 
 HERE = Path(__file__).parent
@@ -356,6 +357,257 @@ def small_satellite_downlink(case):
     return a
 
 
+def plus(figures):
+    """Figures to be added, each with its sign."""
+    text = " ".join(f"{'−' if figure < 0 else '+'} {e(abs(figure))}" for figure in figures)
+    return text.removeprefix("+ ").replace("− ", "−", 1) if text.startswith("−") else text.removeprefix("+ ")
+
+
+class Stage:
+    """A stage as its data sheet has it, levels brought to its input. What is not said is None."""
+
+    def __init__(self, symbol, gain, nf=None, kelvin=None, iip3=None, oip3=None, ip1=None, op1=None, hertz=None, rejects=0.0):
+        self.symbol, self.gain, self.hertz, self.rejects = symbol, gain, hertz, rejects
+        physical = REFERENCE_TEMPERATURE if kelvin is None else kelvin
+        self.kelvin = (
+            (ratio_of(-gain) - 1) * physical if nf is None else REFERENCE_TEMPERATURE * (ratio_of(nf) - 1)
+        )
+        self.iip3 = iip3 if oip3 is None else oip3 - gain
+        # At 1 dB compression the output is 1 dB less than the gain has it.
+        self.ip1 = ip1 if op1 is None else op1 - gain + 1
+
+
+def send_through(a, chain, stages, signal, source, bandwidth, neighbour=None, headroom_of=()):
+    """The outputs of a chain: noise by temperatures (Friis), third-order products of the stages in phase (the worst case)."""
+    ahead, rejected, gain, rejection = [], [], 0.0, 0.0
+    for stage in stages:
+        ahead.append(gain)
+        rejected.append(rejection)
+        gain += stage.gain
+        rejection += stage.rejects
+    hertz = min([bandwidth] + [stage.hertz for stage in stages if stage.hertz is not None])
+
+    for symbol in headroom_of:
+        index = next(i for i, stage in enumerate(stages) if stage.symbol == symbol)
+        stage, entering = stages[index], [signal + ahead[index]]
+        if neighbour is not None:
+            entering.append(neighbour + ahead[index] - rejected[index])
+        both, text = power_sum(entering)
+        a.line(
+            f"{chain}.{symbol}.headroom",
+            stage.ip1 - both,
+            "dB",
+            f"compression at {w(stage.ip1)} dBm at its input; enters, in mW: {text} = {w(both)}; {w(stage.ip1)} − {b(both)}",
+        )
+    a.line(f"{chain}.gain", gain, "dB", plus([stage.gain for stage in stages]))
+    parts = [stage.kelvin / ratio_of(before) for stage, before in zip(stages, ahead)]
+    te = a.line(
+        f"{chain}.te",
+        sum(parts),
+        "K",
+        " + ".join(f"{w(stage.kelvin)}/{w(ratio_of(before))}" for stage, before in zip(stages, ahead)),
+    )
+    a.line(f"{chain}.nf", decibels(1 + te / REFERENCE_TEMPERATURE), "dB", f"10·log10(1 + {w(te)}/290)")
+    tsys = a.line(f"{chain}.tsys", source + te, "K", f"{w(source)} + {w(te)}")
+    a.line(f"{chain}.source_share", 100 * source / tsys, "%", f"100 · {w(source)}/{w(tsys)}")
+
+    def reciprocals(point_of, weight=0.0):
+        terms = [
+            ratio_of(before - weight * lost - point_of(stage))
+            for stage, before, lost in zip(stages, ahead, rejected)
+            if point_of(stage) is not None
+        ]
+        return -decibels(sum(terms)), f"−10·log10({' + '.join(w(term) for term in terms)})"
+
+    iip3, text = reciprocals(lambda stage: stage.iip3)
+    a.line(f"{chain}.iip3", iip3, "dBm", f"in 1/mW: {text}")
+    a.line(f"{chain}.oip3", iip3 + gain, "dBm", f"{w(iip3)} + {w(gain)}")
+    ip1, text = reciprocals(lambda stage: stage.ip1)
+    a.line(f"{chain}.ip1db", ip1, "dBm", f"in 1/mW: {text}")
+    a.line(f"{chain}.op1db", ip1 + gain - 1, "dBm", f"{w(ip1)} + {w(gain)} − 1")
+    mds, text = thermal(tsys, hertz)
+    a.line(f"{chain}.mds", mds, "dBm", text)
+    a.line(f"{chain}.sfdr", 2 / 3 * (iip3 - mds), "dB", f"2/3 · ({w(iip3)} − {b(mds)})")
+    out = a.line(f"{chain}.signal", signal + gain, "dBm", f"{w(signal)} + {w(gain)}")
+    noise = a.line(f"{chain}.noise", mds + gain, "dBm", f"{w(mds)} + {w(gain)}")
+    a.line(f"{chain}.snr", out - noise, "dB", f"{w(out)} − {b(noise)}")
+    tone = signal if neighbour is None else neighbour
+    # Three tones make a product, so that what is taken off each of them counts threefold, half of it for each of IIP3's two.
+    towards, text = reciprocals(lambda stage: stage.iip3, 1.5)
+    im3 = a.line(
+        f"{chain}.im3",
+        3 * tone - 2 * towards + gain,
+        "dBm",
+        f"the intercept towards tones that the filters take down, in 1/mW: {text} = {w(towards)}; "
+        f"3 · {b(tone)} − 2 · {b(towards)} + {w(gain)}",
+    )
+    if neighbour is not None:
+        ratio = ratio_of(im3 - noise)
+        a.line(f"{chain}.rise", 10 * log1p(ratio) / log(10), "dB", f"10·log10(1 + {w(ratio)})")
+        point, text = reciprocals(lambda stage: stage.iip3, 1)
+        lost = 2 * ratio_of(neighbour - point)
+        a.line(
+            f"{chain}.blocking",
+            -20 * log1p(-lost) / log(10),
+            "dB",
+            f"the intercept towards one tone, in 1/mW: {text} = {w(point)}; "
+            f"2·P/IIP3 = 2 · 10^(({w(neighbour)} − {b(point)})/10) = {w(lost)}; −20·log10(1 − {w(lost)})",
+        )
+    return {"gain": gain, "signal": out, "noise": noise, "mds": mds, "im3": im3, "tsys": tsys, "rejection": rejection}
+
+
+def two_conversion_receiver(case):
+    loud = case == "neighbour"
+    a = Account()
+
+    a.section("At the antenna connector")
+    s = a.given("S", -110.0, "dBm")
+    t_ant = a.given("T_ant", 350.0, "K")
+    bandwidth = a.given("B", 12.5, "kHz")
+    p_nb = a.given("P_nb", -35.5 if loud else -75.0, "dBm")
+    l_pn = a.given("L_pn", -146.0, "dBc/Hz")
+
+    a.section("Receiver")
+    ceramic = 8.4e3
+    stages = [
+        Stage("pre", -1.6),
+        Stage("lna", 18.0, nf=1.9, oip3=38.0, op1=22.0),
+        Stage("img", -2.0),
+        Stage("mix1", -6.5, nf=6.8, iip3=27.0, ip1=15.0),
+        Stage("xtal", -2.5, iip3=34.0, hertz=9.6e3, rejects=45.0),
+        Stage("amp", 21.0, nf=1.6, oip3=27.0, op1=14.0),
+        Stage("mix2", 6.0, nf=11.0, iip3=8.0, ip1=-3.0),
+        Stage("cer", -4.0, hertz=ceramic, rejects=58.0),
+        Stage("conv", 0.0, nf=20.0, ip1=4.0),
+    ]
+    critical = ("lna", "mix1", "amp", "mix2", "conv")
+    rx = send_through(a, "rx", stages, s, t_ant, bandwidth * 1e3, p_nb, critical)
+    headrooms = {symbol: next(line[3] for line in a.lines if line[1] == f"rx.{symbol}.headroom") for symbol in critical}
+    sfdr = next(line[3] for line in a.lines if line[1] == "rx.sfdr")
+    blocking = next(line[3] for line in a.lines if line[1] == "rx.blocking")
+
+    a.section("Noise and interference at the converter")
+    n_rx = a.line("N_rx", rx["noise"], "dBm", "the chain's")
+    d_3 = a.line("D_3", rx["im3"], "dBm", "the chain's")
+    width = decibels(ceramic)
+    n_rm = a.line(
+        "N_rm",
+        p_nb + l_pn + width + rx["gain"],
+        "dBm",
+        f"10·log10(8400) = {w(width)} dBHz; {w(p_nb)} − 146 + {w(width)} + {w(rx['gain'])}",
+    )
+    i_res = a.line(
+        "I_res",
+        p_nb + rx["gain"] - rx["rejection"],
+        "dBm",
+        f"{w(p_nb)} + {w(rx['gain'])} − 45 − 58",
+    )
+    spur = -132.0 if loud else -134.0
+    i_spur = a.line("I_spur", spur + rx["gain"], "dBm", f"{e(spur)} + {w(rx['gain'])}")
+    n_i, text = power_sum([n_rx, d_3, n_rm, i_res, i_spur])
+    a.line("N_I", n_i, "dBm", f"in mW: {text}")
+
+    a.section("Signal, noise and headroom")
+    sinr = a.line("SINR", rx["signal"] - n_i, "dB", f"{w(rx['signal'])} − {b(n_i)}")
+    sinr_req = a.given("SINR_req", 12.0, "dB")
+    a.line("M", sinr - sinr_req, "dB", f"{w(sinr)} − {w(sinr_req)}")
+    a.require("M", "at least", 3.0)
+    a.line("S_min", rx["mds"] + sinr_req, "dBm", f"{w(rx['mds'])} + {w(sinr_req)}")
+    a.line("H", min(headrooms.values()), "dB", f"the least of {', '.join(w(one) for one in headrooms.values())}")
+    a.require("H", "at least", 20.0)
+    a.line("R_sf", sfdr, "dB", "the chain's")
+    a.require("R_sf", "at least", 70.0)
+    a.line("L_des", blocking, "dB", "the chain's")
+    a.require("L_des", "at most", 1.0)
+    return a
+
+
+def satellite_ground_station(case):
+    rain = case == "rain"
+    a = Account()
+
+    a.section("Satellite and path")
+    f = a.given("f", 8.16, "GHz")
+    eirp = a.given("EIRP", 15.4 if rain else 12.5, "dBW")
+    el = a.given("el", 14.0 if rain else 58.0, "deg")
+    h = a.given("h", 615.0, "km")
+    r_e = a.given("R_E", 6371.0, "km")
+    up = r_e * sin(radians(el))
+    d = a.line(
+        "d",
+        sqrt(up * up + 2 * r_e * h + h * h) - up,
+        "km",
+        f"R_E·sin({el:.0f}°) = {w(up)} km; √({w(up)}² + 2 · 6371 · 615 + 615²) − {w(up)}",
+    )
+    l_fs, text = free_space(d * 1e3, f * 1e9)
+    a.line("L_fs", l_fs, "dB", text)
+    l_gas = a.given("L_gas", 0.3 if rain else 0.1, "dB")
+    l_rain = a.given("L_rain", 2.4 if rain else 0.0, "dB")
+    l_pol = a.given("L_pol", 0.6 if rain else 0.3, "dB")
+
+    a.section("At the antenna flange")
+    g_ant = a.given("G_ant", 47.6, "dBi")
+    t_med = a.given("T_med", 275.0, "K")
+    # Straight lines between the points of the curve that the elevation lies between.
+    (x0, y0), (x1, y1) = ((10.0, 61.0), (20.0, 44.0)) if rain else ((30.0, 37.0), (60.0, 31.0))
+    clear = y0 + (y1 - y0) * (el - x0) / (x1 - x0)
+    through = ratio_of(-l_rain)
+    t_ant = a.line(
+        "T_ant",
+        clear * through + t_med * (1 - through),
+        "K",
+        f"clear air: {e(y0)} + ({e(y1)} − {e(y0)}) · ({e(el)} − {e(x0)})/({e(x1)} − {e(x0)}) = {w(clear)} K; "
+        f"{w(clear)} · {w(through)} + 275 · (1 − {w(through)})",
+    )
+    c = a.line(
+        "C",
+        eirp + 30 - l_fs - l_gas - l_rain - l_pol + g_ant,
+        "dBm",
+        f"{w(eirp)} dBW is {w(eirp + 30)} dBm; "
+        f"{w(eirp + 30)} − {w(l_fs)} − {w(l_gas)} − {w(l_rain)} − {w(l_pol)} + {w(g_ant)}",
+    )
+    bandwidth = a.given("B", 64.0, "MHz")
+    t_out = a.given("T_out", 8.0 if rain else 14.0, "°C")
+    l_cable = a.given("L_cable", 9.6, "dB")
+
+    a.section("Receiver")
+    outside = t_out + ZERO_CELSIUS
+    stages = [
+        Stage("feed", -0.35, kelvin=outside),
+        Stage("lna", 46.0, nf=decibels(1 + 52 / REFERENCE_TEMPERATURE), oip3=22.0, op1=11.0),
+        Stage("cable", -l_cable, kelvin=outside),
+        Stage("conv", 28.0, nf=11.0, oip3=20.0, op1=9.0),
+        Stage("dem", 0.0, nf=17.0, ip1=0.0),
+    ]
+    gs = send_through(a, "gs", stages, c, t_ant, bandwidth * 1e6, headroom_of=("lna", "conv", "dem"))
+
+    a.section("G/T, C/N₀ and margin")
+    gt = a.line(
+        "GT",
+        g_ant - decibels(gs["tsys"]),
+        "dB/K",
+        f"{w(g_ant)} − 10·log10({w(gs['tsys'])}) = {w(g_ant)} − {w(decibels(gs['tsys']))}",
+    )
+    a.require("GT", "at least", 23.5)
+    k = decibels(BOLTZMANN)
+    cn0 = a.line(
+        "CN0",
+        eirp - l_fs - l_gas - l_rain - l_pol + gt - k,
+        "dBHz",
+        f"10·log10(k) = {w(k)}; {w(eirp)} − {w(l_fs)} − {w(l_gas)} − {w(l_rain)} − {w(l_pol)} + {w(gt)} − {b(k)}",
+    )
+    cn = a.line("CN", gs["signal"] - gs["noise"], "dB", "the chain's")
+    # The same by the other way: what the chain makes of it, and the bandwidth.
+    assert abs(cn + decibels(bandwidth * 1e6) - cn0) < 1e-9, "C/N and the bandwidth do not make C/N₀"
+    r_b = a.line("R_b", decibels(84e6), "dB(bit/s)", "10·log10(84000000 bit/s / 1 bit/s)")
+    ebn0 = a.line("EbN0", cn0 - r_b, "dB", f"{w(cn0)} − {w(r_b)}")
+    ebn0_req = a.given("EbN0_req", 4.8, "dB")
+    l_impl = a.given("L_impl", 1.2, "dB")
+    a.line("M", ebn0 - l_impl - ebn0_req, "dB", f"{w(ebn0)} − {w(l_impl)} − {w(ebn0_req)}")
+    a.require("M", "at least", 3.0)
+    return a
+
+
 STARTERS = {
     "harbour-buoy-uplink": ("Harbour buoy uplink", harbour_buoy_uplink, {"calm": "Calm", "storm": "Storm"}),
     "ridge-to-ridge-hop": ("Microwave hop between two ridges", ridge_to_ridge_hop, {"clear": "Clear", "rain": "Rain"}),
@@ -363,6 +615,16 @@ STARTERS = {
         "Small satellite downlink",
         small_satellite_downlink,
         {"zenith": "Zenith", "low": "Low elevation"},
+    ),
+    "two-conversion-receiver": (
+        "Receiver with two conversions",
+        two_conversion_receiver,
+        {"quiet": "Quiet band", "neighbour": "Strong neighbour"},
+    ),
+    "satellite-ground-station": (
+        "Satellite ground station",
+        satellite_ground_station,
+        {"clear": "Clear, high pass", "rain": "Rain, low pass"},
     ),
 }
 
@@ -426,7 +688,9 @@ def expected_of(accounts):
         symbol: {"bound": bound, "limit": limit, "margins": {case: accounts[case].requirements[symbol][2] for case in cases}}
         for symbol, (bound, limit, _) in accounts[cases[0]].requirements.items()
     }
-    return json.dumps({"lines": lines, "requirements": requirements}, indent=2, ensure_ascii=False) + "\n"
+    text = json.dumps({"lines": lines, "requirements": requirements}, indent=2, ensure_ascii=False)
+    # Exponents without leading zeros, as the formatter of the repository has them.
+    return re.sub(r"e-0(\d)", r"e-\1", text) + "\n"
 
 
 def main():
