@@ -16,7 +16,13 @@ import {
 } from '../radio';
 import { CHAIN_INPUTS, saysAnything, STAGE_FIELDS, type ChainSection } from '../worksheet';
 import { ChainBuilder, type Ref } from './chain-builder';
-import { addFirstStageCheck, addSourceCheck, addStageChecks } from './chain-checks';
+import {
+  addBlockingCheck,
+  addFirstStageCheck,
+  addPlausibilityChecks,
+  addSourceCheck,
+  addStageChecks,
+} from './chain-checks';
 import { addShares, addStage, START, type Running } from './chain-stages';
 import type { Derived, Item } from './item';
 
@@ -75,6 +81,8 @@ function buildChain(chain: ChainSection): readonly Item[] {
   addOutputs(builder, running);
   addShares(builder, stages, running);
   for (const refs of stages) addStageChecks(builder, refs);
+  addPlausibilityChecks(builder, stages);
+  addBlockingCheck(builder, inputs.interferer, running.blockedIntercept);
   addFirstStageCheck(builder, stages);
   addSourceCheck(builder, stages, source);
   return builder.items;
@@ -125,7 +133,8 @@ function addOutputs(builder: ChainBuilder, running: Running): void {
     plane: input,
     formula: 'T = T_source + Tₑ',
   });
-  const level = { quantity: 'level' } as const;
+  const level = { quantity: 'level', plane: input } as const;
+  const outputLevel = { quantity: 'level', plane } as const;
   const intercept = builder.copy('iip3', 'third-order input intercept', 'dBm', running.intercept, {
     ...level,
     formula: cascadeFormula(builder, 'IIP3', 3),
@@ -147,7 +156,7 @@ function addOutputs(builder: ChainBuilder, running: Running): void {
     formula: cascadeFormula(builder, 'P', 3),
   });
   builder.derive('op1db', 'output level at 1 dB compression', 'dBm', [compression, gain], outputCompression, {
-    ...level,
+    ...outputLevel,
     formula: 'P_out = P_in + G − 1 dB',
   });
   const floor = builder.derive('mds', 'minimum detectable signal', 'dBm', [system, bandwidth], noiseAtInput, {
@@ -172,12 +181,13 @@ function addOutputs(builder: ChainBuilder, running: Running): void {
   builder.difference('snr', 'S/N at the output', output, noise, { quantity: 'signal ratio', formula: 'S − N' });
   const tone = interferer ?? signal;
   const selective = running.selectivity === 0 ? intercept : running.selectiveIntercept;
+  const selective2 = running.selectivity === 0 ? intercept2 : running.selectiveIntercept2;
   const unwanted = { ...level, side: 'unwanted', plane } as const;
   const products = builder.derive('im3', 'third-order products at the output', 'dBm', [tone, selective, gain], third, {
     ...unwanted,
     formula: '3·P − 2·IIP3 + G',
   });
-  builder.derive('im2', 'second-order products at the output', 'dBm', [tone, intercept2, gain], second, {
+  builder.derive('im2', 'second-order products at the output', 'dBm', [tone, selective2, gain], second, {
     ...unwanted,
     formula: '2·P − IIP2 + G',
   });

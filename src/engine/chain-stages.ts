@@ -25,6 +25,7 @@ export interface Running {
   readonly compression: Ref | undefined;
   /** The third-order intercept towards interferers that selective stages take down, and towards a single strong one. */
   readonly selectiveIntercept: Ref | undefined;
+  readonly selectiveIntercept2: Ref | undefined;
   readonly blockedIntercept: Ref | undefined;
   /** Selectivity so far, dB. */
   readonly selectivity: Ref;
@@ -47,6 +48,7 @@ export const START: Omit<Running, 'source' | 'signal' | 'interferer' | 'bandwidt
   intercept2: undefined,
   compression: undefined,
   selectiveIntercept: undefined,
+  selectiveIntercept2: undefined,
   blockedIntercept: undefined,
   selectivity: 0,
   signalBehind: undefined,
@@ -98,8 +100,9 @@ export function addStage(builder: ChainBuilder, stage: Stage, ahead: Running): S
     quantity: 'noise figure',
     stage,
   });
-  copy('iip3', 'third-order input intercept', 'dBm', behind.intercept, LEVEL);
-  copy('ip1db', 'input compression', 'dBm', behind.compression, LEVEL);
+  const atInput = { ...LEVEL, plane: builder.plane(0, undefined) };
+  copy('iip3', 'third-order input intercept', 'dBm', behind.intercept, atInput);
+  copy('ip1db', 'input compression', 'dBm', behind.compression, atInput);
   const signal = builder.sum('out.signal', 'wanted level behind the stage', 'dBm', [ahead.signal, behind.gain], {
     ...WANTED,
     stage,
@@ -241,6 +244,14 @@ function pass(builder: ChainBuilder, own: Own, ahead: Running): Running {
       own.intercept,
       gainLess('gain towards interferers', 1.5),
       third,
+    ),
+    // Second-order products go with the square, and the intercept enters once.
+    selectiveIntercept2: cascade(
+      'selective second-order intercept',
+      ahead.selectiveIntercept2,
+      own.intercept2,
+      gainLess('gain towards second-order interferers', 2),
+      exponentOf(chain, 2),
     ),
     blockedIntercept: cascade(
       'blocked intercept',

@@ -60,7 +60,13 @@ export function describeRemark(
   scope: Scope,
   value?: number,
 ): Finding {
-  const tried = remark.repairs.map((repair) => ({ repair, reading: tryRepair(repair, node, tryOut) }));
+  // The units of a chain's values are not for anybody to change, and generated entries not to be rewritten.
+  const { origin } = node.item;
+  const offered =
+    origin === undefined
+      ? remark.repairs
+      : remark.repairs.filter(({ kind }) => kind === 'entry' && origin.field !== undefined);
+  const tried = offered.map((repair) => ({ repair, reading: tryRepair(repair, node, tryOut) }));
   const usable = tried.filter(({ reading }) => reading === undefined || reading.figure.state !== 'withheld');
   const [best] = usable;
   const meant = best?.reading === undefined ? undefined : written(best.reading.figure);

@@ -124,9 +124,13 @@ function usersInCase(
 }
 
 /** The ids of what an item uses in a case. */
-function usedBy({ line, derived }: Item, caseId: string, holders: ReadonlyMap<string, Item>): readonly string[] {
+function usedBy(
+  { line, derived, isGenerated }: Item,
+  caseId: string,
+  holders: ReadonlyMap<string, Item>,
+): readonly string[] {
   if (derived !== undefined) return derived.inputs;
-  const read = readEntry(entryOf(line, caseId));
+  const read = readEntry(entryOf(line, caseId), isGenerated === true ? Infinity : undefined);
   return read.form === 'expression' ? read.symbols.flatMap((symbol) => holders.get(symbol)?.line.id ?? []) : [];
 }
 

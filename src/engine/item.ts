@@ -60,6 +60,8 @@ export interface Item {
   readonly origin?: ItemPlace;
   readonly derived?: Derived;
   readonly curve?: CurveSection;
+  /** True when the entry was made by the program. */
+  readonly isGenerated?: boolean;
   /** A further symbol by which only generated entries call it. */
   readonly alias?: string;
 }

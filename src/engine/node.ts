@@ -49,7 +49,7 @@ export class Node {
     this.caseId = caseId;
     this.item = item;
     this.entry = entry;
-    this.read = readEntry(entry);
+    this.read = readItem(item, entry);
     this.result = UNCHECKED;
   }
 
@@ -83,7 +83,7 @@ export class Node {
       line.side !== before.side;
     if (entry !== this.entry) {
       this.entry = entry;
-      this.read = readEntry(entry);
+      this.read = readItem(item, entry);
     }
     this.item = item;
     if (changed) this.isStale = true;
@@ -113,7 +113,8 @@ export class Node {
       unit === undefined && this.caseId !== null && this.entry !== this.line.entry
         ? readPlainQuantity(this.line.entry)?.unit?.word
         : undefined;
-    return { symbol, label, entry: this.entry, unit: unit ?? typed, quantity, side };
+    const isStrict = this.item.origin?.field !== undefined;
+    return { symbol, label, entry: this.entry, unit: unit ?? typed, quantity, side, ...(isStrict ? { isStrict } : {}) };
   }
 
   /** A node with another entry in this one's place, outside the graph. */
@@ -150,6 +151,10 @@ export class Node {
     };
   }
 }
+
+/** Nobody types a pool's generated entry, which may be as long as the pool. */
+const readItem = (item: Item, entry: string): ReadEntry =>
+  readEntry(entry, item.isGenerated === true ? Infinity : undefined);
 
 const UNCHECKED: LineResult = {
   isFitted: false,

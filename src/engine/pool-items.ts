@@ -1,5 +1,5 @@
 /** The total of a pool: an item with a generated entry, so that it is checked, explained and shared out as any line is. */
-import type { Line, PoolSection } from '../worksheet';
+import { RESERVED_SYMBOLS, type Line, type PoolSection } from '../worksheet';
 import { itemId, type Item } from './item';
 
 /** The id of a pool's total. */
@@ -13,7 +13,7 @@ const counts = (line: Line): boolean =>
 export function poolTotal(pool: PoolSection): Item {
   const met = new Set<string>();
   const names = pool.lines.map((line, i) => {
-    const isFree = line.symbol !== '' && !met.has(line.symbol);
+    const isFree = line.symbol !== '' && !met.has(line.symbol) && !RESERVED_SYMBOLS.has(line.symbol);
     met.add(line.symbol);
     return isFree ? line.symbol : `${pool.symbol}.line${String(i + 1)}`;
   });
@@ -29,5 +29,6 @@ export function poolTotal(pool: PoolSection): Item {
       ...(requirement === undefined ? {} : { requirement }),
     },
     origin: { sectionId: pool.id },
+    isGenerated: true,
   };
 }

@@ -240,6 +240,27 @@ export const CATALOGUE = {
     (x) =>
       `${f(x, 'stage')} gets ${f(x, 'level')} dBm and compresses by 1 dB at ${f(x, 'limit')} dBm at its input: ${f(x, 'excess')} dB too much. Take gain off ahead of it, or a stage that bears more.`,
   ),
+  'ends-disagree': entry(
+    'warning',
+    'Stated at both ends, and they disagree',
+    'A level at the output is the one at the input with the gain; the one at the input counts.',
+    (x) =>
+      `${f(x, 'stage')}: the ${f(x, 'what')} is stated as ${f(x, 'output')} dBm, while the one stated at the input makes ${f(x, 'expected')} dBm with its gain. The one at the input counts; leave one of the two out.`,
+  ),
+  'stage-symbol-repeated': entry(
+    'warning',
+    'Two stages have this symbol',
+    'A stage without a symbol of its own cannot be called.',
+    (x) =>
+      `Several stages of ${f(x, 'chain')} have the symbol “${f(x, 'name')}”: what they give has no symbol until each has one of its own.`,
+  ),
+  'interferer-too-strong': entry(
+    'warning',
+    'The interferer is too strong for this account',
+    'Products and lost gain are worked out from intercepts, which hold well below compression only.',
+    (x) =>
+      `The interferer of ${f(x, 'chain')} is at ${f(x, 'level')} dBm, less than 3 dB below the intercept of ${f(x, 'limit')} dBm that it meets: third-order figures no longer hold, and the gain lost beside it is not given.`,
+  ),
   'planes-differ': entry(
     'warning',
     'Figures from two places of a chain',
@@ -331,6 +352,13 @@ export const CATALOGUE = {
     'A small difference of large powers carries the errors of both.',
     (x) =>
       `The difference${given(x['now'], (now) => `, ${now},`)} is more than 10 dB below its inputs: small errors in them change it much.`,
+  ),
+  'noise-not-known': entry(
+    'note',
+    'An amplifier without a noise figure',
+    'What an amplifier adds is not known from its gain.',
+    (x) =>
+      `${f(x, 'stage')} amplifies and has no noise figure: noise figure, noise and S/N of ${f(x, 'chain')} are not given until it has one.`,
   ),
   'first-stage-weak': entry(
     'note',

@@ -28,6 +28,8 @@ export interface LineSpec {
   readonly unit?: string | undefined;
   readonly quantity?: QuantityKind | undefined;
   readonly side?: Side | undefined;
+  /** True where gains, losses and noise figures are told apart although their decibels add alike: in stages of a chain. */
+  readonly isStrict?: boolean | undefined;
 }
 
 export type KindOrigin = 'declared' | 'name' | 'expression' | 'unit';
@@ -93,7 +95,7 @@ const fitsUnit = (kind: QuantityKind, unit: Unit): boolean =>
       kind === 'level';
 
 /** A call's own kind; a gain or a loss for sums of such: losses less gains are a loss. */
-function kindOfTerms(checked: Checked | undefined): QuantityKind | undefined {
+export function kindOfTerms(checked: Checked | undefined): QuantityKind | undefined {
   if (checked === undefined) return undefined;
   if (checked.terms === undefined) return checked.kind;
   const { terms } = checked;

@@ -121,8 +121,8 @@ const SHAPE_CACHE_LIMIT = 5000;
 const shapes = new Map<string, ShapeParse>();
 
 /** Reads an entry's expression. A fault tells the place in the entry and what to do about it. */
-export function parseEntry(entry: string): Result<Tree, EntryFault> {
-  const scan = scanEntry(entry);
+export function parseEntry(entry: string, limit?: number): Result<Tree, EntryFault> {
+  const scan = scanEntry(entry, limit);
   if (!scan.ok) return scan;
   const { shape, tokens } = scan.value;
   let parse = shapes.get(shape);

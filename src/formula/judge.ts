@@ -72,7 +72,7 @@ function judge(checked: Checked, terms: readonly SumTerm[], context: Context, li
   if (!averaged) sayNotes(checked, terms, net, context, line);
   const powers = terms.filter(({ coefficient }) => Math.abs(coefficient) === 1).filter(isLevel);
   sayBandwidthsDiffer(powers, context);
-  sayPlanesDiffer(powers, terms, context);
+  sayPlanesDiffer(terms.filter(isLevel), terms, context);
   return true;
 }
 

@@ -17,6 +17,7 @@ import {
   attributeKind,
   attributeSide,
   exportedType,
+  kindOfTerms,
   nameKind,
   powerMeaning,
   type AttributedKind,
@@ -25,7 +26,7 @@ import {
 } from './attribution';
 import { findFunction } from './catalogue';
 import { check } from './check';
-import { Context } from './context';
+import { asFactor, Context } from './context';
 import { convertResult, readOverReference } from './conversion';
 import { fittingDecibelUnit, termsOf } from './forms';
 import { parseEntry } from './grammar';
@@ -78,11 +79,11 @@ export type ReadEntry =
   | { readonly form: 'unreadable'; readonly fault: EntryFault };
 
 /** Reads an entry: a plain quantity if it is one, else an expression. */
-export function readEntry(entry: string): ReadEntry {
+export function readEntry(entry: string, limit?: number): ReadEntry {
   if (entry.trim() === '') return { form: 'empty' };
   const plain = readPlainQuantity(entry);
   if (plain !== undefined) return { form: 'quantity', ...plain };
-  const parsed = parseEntry(entry);
+  const parsed = parseEntry(entry, limit);
   return parsed.ok
     ? { form: 'expression', tree: parsed.value, symbols: symbolsOf(parsed.value, isCurveName) }
     : { form: 'unreadable', fault: parsed.fault };
@@ -225,6 +226,7 @@ function settle(
   const isInError = converted === undefined || context.waitsFor.length > 0 || context.remarks.some(isErrorRemark);
   const symbols = draft.symbols ?? [];
   const isFitted = declared === undefined && draft.ownUnit === undefined && converted?.isFitted === true;
+  sayStrictKind(spec, checked, context);
   const plan = isInError ? NO_FIGURE : converted.plan;
   const { remarks, waitsFor } = context;
   const typedDigits = draft.typedDigits;
@@ -269,6 +271,22 @@ function settle(
     waitsFor,
     symbols,
   };
+}
+
+const STRICT_KINDS: ReadonlySet<string> = new Set(['gain', 'loss', 'noise figure']);
+
+/** A loss where a gain is wanted has the wrong sign; a gain is no noise figure. */
+function sayStrictKind(spec: LineSpec, checked: Checked | undefined, context: Context): void {
+  if (spec.isStrict !== true || spec.quantity === undefined || checked === undefined) return;
+  const told = kindOfTerms(checked);
+  if (told === undefined || told === spec.quantity || !STRICT_KINDS.has(told) || !STRICT_KINDS.has(spec.quantity))
+    return;
+  const text = context.textOf(checked.tree);
+  const isTurned = spec.quantity === 'gain' && told === 'loss';
+  context.say('kind-mismatch', checked.tree, {
+    facts: { asked: `A ${spec.quantity} is wanted here`, what: text, found: `a ${told}` },
+    repairs: isTurned ? [context.rewrite(checked.tree, `-${asFactor(checked.tree, text)}`)] : [],
+  });
 }
 
 /** S − N − I in a line in dB: beside the levels added, what is left has not the unit declared. */

@@ -8,9 +8,23 @@ export function judgedNet(terms: readonly SumTerm[]): Meaning {
   let net = NEUTRAL;
   for (const term of terms) {
     if (hasPower && isFullScale(term)) continue;
+    if (isOfUnwantedCarrier(term, terms)) continue;
     net = combineMeanings(net, meaningOfTerm(term), term.coefficient);
   }
   return net;
+}
+
+/**
+ * True of an impairment ratio added to an unwanted level: the carrier that it is relative to is the interferer, as in reciprocal
+ * mixing or an interferer's own spectrum, and the sum is an unwanted level again.
+ */
+export function isOfUnwantedCarrier({ coefficient, type }: SumTerm, terms: readonly SumTerm[]): boolean {
+  const { meaning } = type;
+  if (coefficient !== 1 || meaning === undefined || meaning.w !== -1 || meaning.u !== 1) return false;
+  return terms.some(
+    ({ coefficient: times, type: { meaning: other } }) =>
+      times === 1 && other !== undefined && other.w === 0 && other.u === 1 && other.l === 0,
+  );
 }
 
 const isFullScale = (term: SumTerm): boolean => isLevel(term) && isDimensionless(term.type.dimension);

@@ -21,7 +21,7 @@ export function sayPlanesDiffer(operands: readonly PlacedOperand[], sum: readonl
   const [first] = placed;
   if (first === undefined) return;
   const other = placed.find(({ plane }) => plane.chain === first.plane.chain && plane.key !== first.plane.key);
-  if (other === undefined || sum.some((term) => isGainOf(term, first.plane.chain))) return;
+  if (other === undefined || sum.some((term) => isGainOf(term, first.plane.chain)) || isGainBetween(sum)) return;
   const between = gainBetween(other.plane, first.plane);
   const isLinear = other.type.form === 'linear';
   const moved = isLinear ? `${other.text} * lin(${between.replace(/^\+ /, '')})` : `${other.text} ${between}`;
@@ -34,6 +34,13 @@ export function sayPlanesDiffer(operands: readonly PlacedOperand[], sum: readonl
     },
     repairs: [context.rewrite(other.tree, sum.length > 0 ? `(${moved})` : moved)],
   });
+}
+
+/** One level less another of the same side: the gain between two places is what is asked for. */
+function isGainBetween(sum: readonly SumTerm[]): boolean {
+  const [a, b, ...rest] = sum.filter(({ type }) => type.plane !== undefined);
+  if (a === undefined || b === undefined || rest.length > 0) return false;
+  return a.side !== undefined && a.side === b.side && a.coefficient === -b.coefficient;
 }
 
 const planeOf = (type: Type): Plane | undefined =>

@@ -66,12 +66,12 @@ const fault = (start: number, end: number, sentence: string): { ok: false; fault
   fail({ place: { start, end }, sentence });
 
 /** Splits an entry into tokens and its shape. Faults tell the place and what to do. */
-export function scanEntry(text: string): Result<Scan, EntryFault> {
-  if (text.length > ENTRY_LIMIT)
+export function scanEntry(text: string, limit = ENTRY_LIMIT): Result<Scan, EntryFault> {
+  if (text.length > limit)
     return fault(
       0,
       text.length,
-      `The entry has ${String(text.length)} characters; at most ${String(ENTRY_LIMIT)} are read. Split it over several lines.`,
+      `The entry has ${String(text.length)} characters; at most ${String(limit)} are read. Split it over several lines.`,
     );
   const tokens: Token[] = [];
   let shape = '';

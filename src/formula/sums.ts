@@ -21,6 +21,7 @@ import {
 import type { Check } from './check';
 import { asFactor, broken, type Context } from './context';
 import { describeType, termsOf } from './forms';
+import { isOfUnwantedCarrier } from './net';
 import { sayPlanesDiffer } from './planes';
 import { scalePlan, type Plan } from './plan';
 import type { BinaryTree, NegationTree, Tree } from './tree';
@@ -132,10 +133,12 @@ export function decibelSum(tree: Tree, terms: readonly SumTerm[], parts: readonl
   let offsetDb = 0;
   let scale = 0;
   let meaning: DecibelType['meaning'] = NEUTRAL;
-  for (const { coefficient, type } of terms) {
+  for (const term of terms) {
+    const { coefficient, type } = term;
     dimension = combineDimensions(dimension, type.dimension, coefficient);
     offsetDb += coefficient * type.offsetDb;
     scale = Math.max(scale, Math.abs(coefficient) * type.scale);
+    if (isOfUnwantedCarrier(term, terms)) continue;
     meaning =
       meaning === undefined || type.meaning === undefined
         ? undefined

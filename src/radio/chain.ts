@@ -25,9 +25,9 @@ export function noiseShare(stageK: number, gainAheadDb: number, totalK: number):
   return totalK > 0 ? stageK / factorOf(gainAheadDb) / totalK : NaN;
 }
 
-/** Noise level k·T·B·G behind a gain, dBm; T is referred to the input, K; B in Hz. */
+/** Noise level k·T·B·G behind a gain, dBm; T is referred to the input, K; B in Hz. −∞, no power, at 0 K. */
 export function noiseBehindDbm(temperatureK: number, bandwidthHz: number, gainDb: number): number {
-  return temperatureK > 0 && bandwidthHz > 0 ? decibelsOf(BOLTZMANN * temperatureK * bandwidthHz) + 30 + gainDb : NaN;
+  return temperatureK >= 0 && bandwidthHz > 0 ? decibelsOf(BOLTZMANN * temperatureK * bandwidthHz) + 30 + gainDb : NaN;
 }
 
 /** Noise figure of a noise temperature, dB, referred to 290 K; negative temperatures have none. */

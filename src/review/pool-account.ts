@@ -148,7 +148,7 @@ function tell({ adding, terms }: Terms, { figure, requirement }: Reading): Reado
   if (figure.state !== 'value') return undefined;
   const amounts = terms.map(({ amount }) => amount);
   const whole = combineAmounts(amounts, adding);
-  if (!agree(figureIn(figure.unit, whole, adding), figure.value)) return undefined;
+  if (!agree(figureIn(figure.unit, whole, adding), figure.value, figure.unit)) return undefined;
   const rests = withoutEach(amounts, adding);
   const limit = requirement === undefined ? undefined : amountIn(figure.unit, requirement.limit, adding);
   return new Map(
@@ -172,8 +172,9 @@ function withValue(figure: Figure & { readonly state: 'value' }, value: number):
   return { state: 'value', value, unit, isFitted };
 }
 
-/** True when two figures are the same but for the last digits of the arithmetic. */
-const agree = (a: number, b: number): boolean => a === b || Math.abs(a - b) <= 1e-9 * Math.max(1, Math.abs(b));
+/** True when two figures in a unit are the same but for the last digits of the arithmetic. */
+const agree = (a: number, b: number, { form }: Unit): boolean =>
+  a === b || Math.abs(a - b) <= 1e-9 * Math.max(form === 'decibel' ? 1 : 0, Math.abs(b));
 
 function permittedOf(
   { figure, amount, scale }: Term,

@@ -89,7 +89,7 @@ export class WorkingWriter {
 
   /** The entry, with symbols or with their figures. */
   private entryPieces(node: Node, withValues: boolean): Piece[] {
-    const scan = scanEntry(node.entry);
+    const scan = scanEntry(node.entry, Infinity);
     if (!scan.ok) return [text(node.entry)];
     const { tokens } = scan.value;
     return tokens.flatMap((token, index): readonly Piece[] => {

@@ -41,6 +41,9 @@ const TABLE = {
     'figure-below-loss',
     'compression-above-intercept',
     'stage-compressed',
+    'ends-disagree',
+    'stage-symbol-repeated',
+    'interferer-too-strong',
   ],
   note: [
     'loss-added',
@@ -51,6 +54,7 @@ const TABLE = {
     'cancellation',
     'reference-temperature',
     'first-stage-weak',
+    'noise-not-known',
     'source-temperature',
   ],
 } as const;

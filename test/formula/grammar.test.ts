@@ -150,8 +150,11 @@ describe('the grammar alone', () => {
 /** A tree as text with all its brackets. */
 function written(tree: Tree): string {
   switch (tree.type) {
-    case 'literal':
-      return `${String(tree.figure)}${tree.unit === null ? '' : ` ${tree.unit.word}`}`;
+    case 'literal': {
+      const text = `${String(tree.figure)}${tree.unit === null ? '' : ` ${tree.unit.word}`}`;
+      // Before ^ a sign belongs to the power and not to the figure.
+      return tree.figure < 0 ? `(${text})` : text;
+    }
     case 'text':
       return `"${tree.text}"`;
     case 'symbol':
@@ -208,9 +211,9 @@ describe('entries', () => {
     ['.5*a', '(0.5 * a)'],
     ['5.*a', '(5 * a)'],
     ['10 W / m', '(10 W / m)'],
-    ['-174 dBm/Hz + B', '(-174 dBm/Hz + B)'],
+    ['-174 dBm/Hz + B', '((-174 dBm/Hz) + B)'],
     ['a - 174 dBm/Hz', '(a - 174 dBm/Hz)'],
-    ['a - -174 dBm/Hz', '(a - -174 dBm/Hz)'],
+    ['a - -174 dBm/Hz', '(a - (-174 dBm/Hz))'],
     ['-3 dB^2', '(-(3 dB ^ 2))'],
     ['-3^2', '(-(3 ^ 2))'],
     ['rain(5, "vertical")', 'rain(5, "vertical")'],

@@ -237,26 +237,31 @@ const ratios: StructuralFunction = {
   },
 };
 
-const SIGNAL_RATIO = 'a signal ratio';
-const IMPAIRMENT_RATIO = 'an impairment ratio';
-
 /** What sort of thing an operand of a pool is: things of one sort have a total. */
 function sortInPool(operand: Checked): string {
-  const { type } = operand;
+  const { type, kind } = operand;
   if (type.form !== 'decibel' && type.form !== 'linear') return describeType(type);
-  const isRatio = isDimensionless(type.dimension);
-  const { meaning } = type;
-  if (isRatio && meaning !== undefined && meaning.w === 1 && meaning.u === -1) return SIGNAL_RATIO;
-  if (isRatio && meaning !== undefined && meaning.w === -1 && meaning.u === 1) return IMPAIRMENT_RATIO;
   // By what the decibels stand for, whatever unit shows it: dBm beside pW, K beside °C, dBµV beside mV.
   const dimension = type.form === 'linear' ? powerDimension(type) : type.dimension;
-  return describeType({ ...type, form: 'linear', dimension, degree: 0, sort: 'ratio', unitHint: undefined });
+  const isRatio = isDimensionless(dimension);
+  const of = describeType({ ...type, form: 'linear', dimension, degree: 0, sort: 'ratio', unitHint: undefined });
+  const { meaning } = type;
+  const suffix = isRatio ? '' : ` in ${of}`;
+  if (meaning !== undefined && meaning.w === 1 && meaning.u === -1) return `${SIGNAL_RATIO}${suffix}`;
+  if (meaning !== undefined && meaning.w === -1 && meaning.u === 1) return `${IMPAIRMENT_RATIO}${suffix}`;
+  if (isRatio && (kind === 'noise figure' || kind === 'loss')) return `a ${kind}`;
+  return isRatio ? PLAIN_RATIO : of;
 }
 
-/** The sort in words: with the unit that is shown, by which the reader knows it. */
-function sortWords(operand: Checked): string {
-  const sort = sortInPool(operand);
-  return sort === SIGNAL_RATIO || sort === IMPAIRMENT_RATIO ? sort : describeType(operand.type);
+const SIGNAL_RATIO = 'a signal ratio';
+const IMPAIRMENT_RATIO = 'an impairment ratio';
+const PLAIN_RATIO = 'a ratio of which nothing is said';
+
+/** The sorts of a pool's operands. A plain ratio beside ratios of a known sort is taken to be of that sort. */
+function sortsInPool(operands: readonly Checked[]): readonly string[] {
+  const sorts = operands.map(sortInPool);
+  const known = sorts.find((sort) => sort === SIGNAL_RATIO || sort === IMPAIRMENT_RATIO);
+  return known === undefined ? sorts : sorts.map((sort) => (sort === PLAIN_RATIO ? known : sort));
 }
 
 const pool: StructuralFunction = {
@@ -273,19 +278,23 @@ const pool: StructuralFunction = {
   check: (tree, operands, context) => {
     const [first] = operands;
     if (first === undefined || operands.some(({ type }) => type.form === 'broken')) return broken(tree);
-    const sort = sortInPool(first);
-    const odd = operands.find((operand) => sortInPool(operand) !== sort);
+    const sorts = sortsInPool(operands);
+    const [sort = ''] = sorts;
+    // Figures and losses are no contributions: alone they are as wrong as beside others.
+    const isNoPower = sort === 'a noise figure' || sort === 'a loss';
+    const at = isNoPower && operands.length > 1 ? 1 : sorts.findIndex((other) => other !== sort);
+    const odd = operands[at];
     if (odd !== undefined)
       return context.stop('pool-mixed', tree, {
         facts: {
           first: context.textOf(first.tree),
-          firstSort: sortWords(first),
+          firstSort: sort,
           second: context.textOf(odd.tree),
-          secondSort: sortWords(odd),
+          secondSort: sorts[at] ?? '',
         },
         repairs: [],
       });
-    const isRatio = sort === SIGNAL_RATIO || sort === IMPAIRMENT_RATIO;
+    const isRatio = sort.startsWith(SIGNAL_RATIO) || sort.startsWith(IMPAIRMENT_RATIO);
     const isLinear = operands.every(({ type }) => type.form === 'linear');
     const way = isRatio ? ratios : isLinear ? total : powerSumming;
     return way.check({ ...tree, name: way.name }, operands, context);
