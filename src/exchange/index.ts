@@ -12,3 +12,6 @@ export * from './copied-lines';
 export type { ColumnRole } from './pasted-columns';
 export type { DecimalSign } from './pasted-figures';
 export * from './pasted-table';
+export * from './pasted-points';
+export type { PastedAxis } from './point-headings';
+export type { Separator } from './point-rows';

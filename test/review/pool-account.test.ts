@@ -75,6 +75,10 @@ const FAMILIES: readonly {
     requirement: (atLeast) => ({ atLeast }),
   },
   {
+    ...{ name: 'signal to noise densities', unit: 'dBHz', kind: 'signal ratio', figures: [20, 90] as const, step: -3 },
+    requirement: (atLeast) => ({ atLeast }),
+  },
+  {
     ...{ name: 'impairment ratios', unit: 'dB', kind: 'impairment ratio', figures: [-60, 10] as const, step: 3 },
     requirement: (atMost) => ({ atMost }),
   },

@@ -171,6 +171,14 @@ describe('the table of points', () => {
     expect(points()).toEqual(CURVE.points);
   });
 
+  it('takes a point away by the button too', async () => {
+    await goTo(2, 1);
+    await fireEvent.click(screen.getByRole('button', { name: 'Delete point 3' }));
+    await settle();
+    expect(points()).toEqual(CURVE.points.slice(0, 2));
+    expect(screen.getByRole<HTMLButtonElement>('button', { name: 'Delete the point' }).disabled).toBe(true);
+  });
+
   it('keeps what was typed when the field is left', async () => {
     await goTo(1, 1);
     await type('11');
