@@ -4,7 +4,7 @@
  * typed in.
  */
 import type { Evaluation } from '../engine';
-import { itemId } from '../engine';
+import { stageItemId } from '../engine';
 import { saysAnything, type ChainSection, type StageField } from '../worksheet';
 
 /** A column of values typed. */
@@ -44,22 +44,18 @@ export const VALUE_COLUMNS: readonly ValueColumn[] = [
   value('selectivity', 'selectivity', 'selectivity towards the interferer'),
 ];
 
-/** Running columns with the name of the engine's item behind a stage. */
+/** Running columns: the heading, and what it is in words; the key names the engine's item. */
 const RUNNING = {
-  'out.gain': ['gain', 'gain so far', 'gain behind the stage'],
-  'out.nf': ['noise figure', 'noise figure so far', 'noise figure behind the stage'],
-  'out.te': ['noise temp.', 'noise temperature so far', 'noise temperature behind the stage'],
-  'out.signal': ['wanted', 'wanted level behind the stage', 'wanted level behind the stage'],
-  'out.noise': ['noise', 'noise level behind the stage', 'noise behind the stage'],
-  'out.snr': ['S/N', 'S/N behind the stage', 'S/N behind the stage'],
-  'out.iip3': ['IIP3', 'input intercept so far', 'third-order input intercept behind the stage'],
-  headroom: ['headroom', 'headroom to compression', 'headroom to compression'],
-  noiseShare: ['share of noise', 'share of the noise', 'share of the noise'],
-  distortionShare: [
-    'share of distortion',
-    'share of the third-order distortion',
-    'share of the third-order distortion',
-  ],
+  'out.gain': ['gain', 'gain so far'],
+  'out.nf': ['noise figure', 'noise figure so far'],
+  'out.te': ['noise temp.', 'noise temperature so far'],
+  'out.signal': ['wanted', 'wanted level behind the stage'],
+  'out.noise': ['noise', 'noise level behind the stage'],
+  'out.snr': ['S/N', 'S/N behind the stage'],
+  'out.iip3': ['IIP3', 'input intercept so far'],
+  headroom: ['headroom', 'headroom to compression'],
+  noise_share: ['share of noise', 'share of the noise'],
+  distortion_share: ['share of distortion', 'share of the third-order distortion'],
 } as const;
 
 export type RunningKey = keyof typeof RUNNING;
@@ -75,7 +71,7 @@ export const CHAIN_COLUMNS: readonly ChainColumn[] = [...VALUE_COLUMNS, ...RUNNI
 
 /** The id of the figure in a running column. */
 export const runningId = (sectionId: string, stageId: string, key: RunningKey): string =>
-  itemId(sectionId, itemId(stageId, RUNNING[key][2]));
+  stageItemId(sectionId, stageId, key);
 
 /** What a person has chosen to show or put away, by column. */
 export type ColumnChoices = ReadonlyMap<ChainColumnKey, boolean>;

@@ -2,7 +2,7 @@
  * What a chain's panel shows: its inputs, each stage's cells and running figures, its outputs in groups with who uses them.
  * Holds: every figure is one that the evaluation tells; nothing is computed here.
  */
-import { itemId, STAGE_PARTS, type Evaluation, type Figure } from '../engine';
+import { itemId, STAGE_PARTS, stageItemId, type Evaluation, type Figure } from '../engine';
 import {
   CHAIN_INPUTS,
   entryIn,
@@ -109,9 +109,9 @@ export function cellsOfStage(
     }
     const override = length > 1 ? stageOverrideIn(stage, column.key, caseId) : undefined;
     const entry = stageEntryIn(stage, column.key, caseId);
-    const typedId = itemId(chain.id, itemId(stage.id, column.key));
+    const typedId = stageItemId(chain.id, stage.id, column.key);
     // Where nothing is typed, the engine has it under its name when it can work it out.
-    const outId = itemId(chain.id, itemId(stage.id, STAGE_PARTS[column.key].label));
+    const outId = stageItemId(chain.id, stage.id, STAGE_PARTS[column.key].part);
     const isTyped = evaluation.line(typedId) !== undefined;
     const lineId = isTyped || evaluation.line(outId) === undefined ? typedId : outId;
     return {
@@ -120,7 +120,7 @@ export function cellsOfStage(
       figure: figureIn(evaluation, lineId, caseId),
       entry,
       ...(override === undefined ? {} : { override }),
-      isWorkedOut: !isTyped && lineId === outId,
+      isWorkedOut: !isTyped && evaluation.line(lineId) !== undefined,
     };
   });
 }

@@ -2,7 +2,7 @@
  * What the account shows of sections that are not lists of lines: a chain's stages and outputs, a pool's total, a curve.
  * Holds: every item that has a finding is told by one of these rows, so that none is out of sight.
  */
-import { itemId, itemsOf, poolTotalId, type Evaluation } from '../engine';
+import { itemsOf, stageItemId, poolTotalId, type Evaluation } from '../engine';
 import {
   isChainSection,
   isCurveSection,
@@ -48,17 +48,17 @@ function poolRows(evaluation: Evaluation, sectionId: string): ItemRow[] {
 
 /** Figures that tell most of a stage, best first, and what they are called in a narrow column. */
 const TELLING = [
-  ['S/N behind the stage', 'S/N'],
-  ['wanted level behind the stage', 'level'],
-  ['noise figure behind the stage', 'NF so far'],
-  ['gain behind the stage', 'gain so far'],
+  ['out.snr', 'S/N'],
+  ['out.signal', 'level'],
+  ['out.nf', 'NF so far'],
+  ['out.gain', 'gain so far'],
 ] as const;
 
 function stageRows(evaluation: Evaluation, chain: ChainSection): ItemRow[] {
   const { cases } = evaluation.worksheet;
   return chain.stages.flatMap((stage) => {
-    const told = TELLING.flatMap(([label, figureOf]) => {
-      const line = evaluation.line(itemId(chain.id, itemId(stage.id, label)));
+    const told = TELLING.flatMap(([part, figureOf]) => {
+      const line = evaluation.line(stageItemId(chain.id, stage.id, part));
       const isThere = line !== undefined && cases.some((one) => evaluation.figure(line.id, one.id).state !== 'empty');
       return isThere ? [{ line, figureOf }] : [];
     })[0];

@@ -13,6 +13,7 @@ import type { PlainFault, Store, WorksheetText } from '../store';
 import {
   allLines,
   applyRepair,
+  findLine,
   newWorksheet,
   redo,
   undo,
@@ -25,6 +26,7 @@ import {
   type Worksheet,
 } from '../worksheet';
 import { answerEdit } from './answers';
+import { repairInChain } from './chain-findings';
 import { Announcer } from './announcer.svelte';
 import type { FindingCounts } from './finding-counts';
 import { Keeping, type KeepState } from './keeping.svelte';
@@ -190,8 +192,11 @@ export class Session {
 
   /** Does what a repair of a finding says. */
   repair(finding: LineFinding, repair: Repair): void {
-    const edit = applyRepair(this.worksheet, finding.lineId, repair, finding.caseIds[0]);
-    if (this.perform(edit)) this.announce(`Repaired: ${repair.title}.`);
+    const isLine = findLine(this.worksheet, finding.lineId) !== undefined;
+    const edit = isLine
+      ? applyRepair(this.worksheet, finding.lineId, repair, finding.caseIds[0])
+      : repairInChain(this.evaluation, finding, repair);
+    if (edit !== undefined && this.perform(edit)) this.announce(`Repaired: ${repair.title}.`);
   }
 
   /** Answers a finding with a reason. */

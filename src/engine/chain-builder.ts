@@ -181,7 +181,13 @@ export class ChainBuilder {
     if (given.length < inputs.length) return undefined;
     const called = stage === undefined ? part : part === '' ? '' : this.part(stage, part);
     const words = stage === undefined ? label : `${nameOf(stage)}: ${label}`;
-    const line = this.line(called, words, '', unit, stage === undefined ? part || label : itemId(stage.id, label));
+    const line = this.line(
+      called,
+      words,
+      '',
+      unit,
+      stage === undefined ? part || label : itemId(stage.id, part || label),
+    );
     this.items.push({
       line,
       origin: { sectionId: this.chain.id, ...(stage === undefined ? {} : { stageId: stage.id }) },

@@ -7,7 +7,7 @@ export * from './pass';
 export { Evaluation, type Preview } from './evaluation';
 export type { Node } from './node';
 export type { Item, ItemPlace } from './item';
-export { itemId, itemsOf } from './item';
+export { itemId, itemsOf, stageItemId } from './item';
 export { poolTotalId } from './pool-items';
 export { STAGE_PARTS, type StagePart } from './chain-parts';
 export { convertFigure, readBound } from './state';

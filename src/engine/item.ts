@@ -103,3 +103,10 @@ function itemOfLine(line: Line): Item {
 
 /** An id that no line of a file has: control characters do not come in files. */
 export const itemId = (...parts: readonly string[]): string => parts.join('\u0001');
+
+/**
+ * The id of what a chain has of a stage: of an entry by its field, `noiseFigure`; of what is worked out by the part of its symbol
+ * behind the stage's, `nf` or `out.snr`.
+ */
+export const stageItemId = (chainId: string, stageId: string, what: string): string =>
+  itemId(chainId, itemId(stageId, what));

@@ -2,7 +2,7 @@
  * The working of what a chain gives: the formula, the cascade with each stage's figures put in, and each stage's part.
  * Holds: every figure is one of the engine's; a stage's part in noise is its share of the chain's own noise.
  */
-import { itemId, type Evaluation, type Node } from '../engine';
+import { stageItemId, type Evaluation, type Node } from '../engine';
 import { writeFigure, writeSignificant } from '../quantity';
 import { isChainSection, type ChainSection, type Stage } from '../worksheet';
 import type { Piece, WorkingStep, WorkingTerm } from './working-types';
@@ -67,13 +67,13 @@ class StageReader {
 
   /** Tₑ = 75.1 K + 120 K / 0.776 + … */
   temperatureSum(): Piece[] {
-    return this.#cascade((stage) => this.#figure(stage, 'noise temperature', 'K'), 'Tₑ = ');
+    return this.#cascade((stage) => this.#figure(stage, 'te', 'K'), 'Tₑ = ');
   }
 
   /** F = 1.259 + (1.995 − 1) / 0.794 + … */
   figureSum(): Piece[] {
     const pieces = this.#cascade((stage, i) => {
-      const kelvin = this.#value(stage, 'noise temperature');
+      const kelvin = this.#value(stage, 'te');
       if (kelvin === undefined) return [text('?')];
       const factor = writeSignificant(1 + kelvin / 290);
       return [text(i === 0 ? factor : `(${factor} − 1)`)];
@@ -88,23 +88,23 @@ class StageReader {
       if (i > 0) pieces.push(text(' + '));
       pieces.push(...term(stage, i));
       if (i > 0) pieces.push(text(` / ${writeSignificant(10 ** (gainDb / 10))}`));
-      gainDb = this.#value(stage, 'gain behind the stage') ?? NaN;
+      gainDb = this.#value(stage, 'out.gain') ?? NaN;
     });
     return pieces;
   }
 
   /** Each stage's noise temperature with its share of the chain's own noise. */
   noiseTerms(): WorkingTerm[] {
-    const shares = this.#stages.map((stage) => this.#value(stage, 'share of the noise') ?? NaN);
+    const shares = this.#stages.map((stage) => this.#value(stage, 'noise_share') ?? NaN);
     const all = shares.reduce((sum, share) => sum + share, 0);
-    return this.#stages.map((stage, i) => this.#term(stage, 'noise temperature', (shares[i] ?? NaN) / all));
+    return this.#stages.map((stage, i) => this.#term(stage, 'te', (shares[i] ?? NaN) / all));
   }
 
   /** Each stage's intercept with its share of the distortion. */
   distortionTerms(): WorkingTerm[] {
     return this.#stages.flatMap((stage) => {
-      const share = this.#value(stage, 'share of the third-order distortion');
-      return share === undefined ? [] : [this.#term(stage, 'third-order input intercept', share / 100)];
+      const share = this.#value(stage, 'distortion_share');
+      return share === undefined ? [] : [this.#term(stage, 'iip3', share / 100)];
     });
   }
 
@@ -112,34 +112,36 @@ class StageReader {
     return this.#stages.map((stage) => this.#term(stage, 'gain', undefined));
   }
 
-  #idOf(stage: Stage, label: string): string | undefined {
-    const fields: Readonly<Record<string, string>> = { gain: 'gain', 'third-order input intercept': 'inputIntercept' };
-    const candidates = [label, fields[label] ?? label].map((name) => itemId(this.chain.id, itemId(stage.id, name)));
-    return candidates.find((id) => this.evaluation.line(id) !== undefined);
+  /** What is worked out of a stage, or typed, under the first of these names that is there. */
+  #idOf(stage: Stage, what: string): string | undefined {
+    const names = what === 'iip3' ? ['inputIntercept', 'iip3'] : [what];
+    return names
+      .map((name) => stageItemId(this.chain.id, stage.id, name))
+      .find((id) => this.evaluation.line(id) !== undefined);
   }
 
-  #value(stage: Stage, label: string): number | undefined {
-    const id = this.#idOf(stage, label);
+  #value(stage: Stage, what: string): number | undefined {
+    const id = this.#idOf(stage, what);
     const figure = id === undefined ? undefined : this.evaluation.figure(id, this.caseId);
     return figure?.state === 'value' ? figure.value : undefined;
   }
 
-  #figure(stage: Stage, label: string, unit: string): Piece[] {
-    const value = this.#value(stage, label);
-    const lineId = this.#idOf(stage, label);
+  #figure(stage: Stage, what: string, unit: string): Piece[] {
+    const value = this.#value(stage, what);
+    const lineId = this.#idOf(stage, what);
     return value === undefined
       ? [text('?')]
       : [{ type: 'figure', text: writeSignificant(value), unit, ...(lineId === undefined ? {} : { lineId }) }];
   }
 
-  #term(stage: Stage, label: string, share: number | undefined): WorkingTerm {
-    const lineId = this.#idOf(stage, label);
+  #term(stage: Stage, what: string, share: number | undefined): WorkingTerm {
+    const lineId = this.#idOf(stage, what);
     const line = lineId === undefined ? undefined : this.evaluation.line(lineId);
     const shown = lineId === undefined ? { text: '', unit: '' } : written(this.evaluation, lineId, this.caseId);
     return {
       ...(lineId === undefined ? {} : { lineId }),
       symbol: line?.symbol || stage.symbol,
-      label: line?.label ?? `${stage.label}: ${label}`,
+      label: line?.label ?? stage.label,
       ...shown,
       ...(share === undefined || Number.isNaN(share) ? {} : { share }),
     };

@@ -83,7 +83,7 @@ export function levelDiagramOfChain(
     { ...inputPoint(chain, at), ...ratioAt('in.snr') },
     ...chain.stages.map((stage) => ({
       ...stagePoint(chain, stage, at),
-      ...ratioAt(behindStage(stage, 'S/N')),
+      ...ratioAt(behindStage(stage, 'snr')),
     })),
   ];
   const hasLevel = points.some(
@@ -108,14 +108,14 @@ const inputPoint = (chain: ChainSection, at: LevelAt): LevelPoint => ({
 });
 
 function stagePoint(chain: ChainSection, stage: Stage, at: LevelAt): LevelPoint {
-  const behind = (label: string): PointLevel | undefined => at([behindStage(stage, label)]);
+  const behind = (what: string): PointLevel | undefined => at([behindStage(stage, what)]);
   /** As typed, else worked out from what is given at the stage's input. */
   const limit = (field: 'outputCompression' | 'outputIntercept'): PointLevel | undefined =>
-    stage.off === true ? undefined : at([itemId(stage.id, field), itemId(stage.id, STAGE_PARTS[field].label)]);
+    stage.off === true ? undefined : at([itemId(stage.id, field), itemId(stage.id, STAGE_PARTS[field].part)]);
   return {
     ...pointOfStage(chain, stage),
     ...given({
-      wanted: behind('wanted level'),
+      wanted: behind('signal'),
       noise: behind('noise'),
       interferer: behind('interferer'),
       compression: limit('outputCompression'),
@@ -125,7 +125,7 @@ function stagePoint(chain: ChainSection, stage: Stage, at: LevelAt): LevelPoint 
 }
 
 /** The item that tells what has come about behind a stage, by its name within the chain. */
-export const behindStage = (stage: Stage, what: string): string => itemId(stage.id, `${what} behind the stage`);
+export const behindStage = (stage: Stage, what: string): string => itemId(stage.id, `out.${what}`);
 
 /** What a stage's point is called and leads to. */
 export const pointOfStage = (

@@ -150,7 +150,7 @@ function throughChain(evaluation: Evaluation, level: SumTerm, lineId: string, ca
   const chain = evaluation.worksheet.sections.find(({ id }) => id === sectionId);
   const unit = findUnit('dBm');
   if (chain === undefined || !isChainSection(chain) || unit?.form !== 'decibel') return undefined;
-  const idsBehind = chain.stages.map((stage) => itemId(chain.id, behindStage(stage, 'wanted level')));
+  const idsBehind = chain.stages.map((stage) => itemId(chain.id, behindStage(stage, 'signal')));
   const isOutput = lineId === itemId(chain.id, 'signal');
   const count =
     lineId === itemId(chain.id, 'in.signal') ? 0 : isOutput ? idsBehind.length : idsBehind.indexOf(lineId) + 1;

@@ -35,7 +35,7 @@ describe('columns', () => {
     expect(keys(chainSheet())).toEqual([
       ...['gain', 'noiseFigure', 'inputIntercept', 'outputIntercept'],
       ...['out.gain', 'out.nf', 'out.te', 'out.signal', 'out.noise', 'out.snr', 'out.iip3'],
-      ...['noiseShare', 'distortionShare'],
+      ...['noise_share', 'distortion_share'],
     ]);
   });
 
@@ -84,7 +84,7 @@ describe('cells', () => {
     expect(text(cells(2).get('out.gain'))).toBe('10.00 dB');
     expect(text(cells(2, 'storm').get('out.gain'))).toBe('8.00 dB');
     expect(text(cells(1).get('out.signal'))).toBe('−74.00 dBm');
-    const shares = [0, 1, 2].map((at) => cells(at).get('noiseShare')?.figure);
+    const shares = [0, 1, 2].map((at) => cells(at).get('noise_share')?.figure);
     expect(shares.every((figure) => figure?.state === 'value' && figure.value > 0 && figure.value < 100)).toBe(true);
   });
 });

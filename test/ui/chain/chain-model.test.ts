@@ -44,7 +44,7 @@ describe('the cursor', () => {
     model.moveCells(-Infinity);
     expect(model.cursor).toEqual({ row: 's1', cell: 'place' });
     model.moveCells(Infinity);
-    expect(model.cursor.cell).toBe('distortionShare');
+    expect(model.cursor.cell).toBe('distortion_share');
   });
 
   it('keeps to its column across the row for a new stage', () => {
