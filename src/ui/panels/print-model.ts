@@ -3,9 +3,10 @@
  * Holds: endnotes are numbered in the order of their first mention, and equal texts are one endnote.
  */
 import type { LineFinding, Reading } from '../../engine';
-import type { Working } from '../../review';
+import type { LevelDiagram, Working } from '../../review';
 import type { ItemRow } from '../../app/item-rows';
 import {
+  isChainSection,
   isLinesSection,
   isOtherSection,
   overrideIn,
@@ -24,6 +25,8 @@ export interface PrintSource {
   /** What a section has that is no line of the worksheet: stages and outputs of a chain, a total, a curve. */
   readonly items: (section: Section) => readonly ItemRow[];
   readonly lineOf: (lineId: string) => Line | undefined;
+  /** The levels along a chain in a case; undefined where there are none. */
+  readonly levels: (sectionId: string, caseId: string) => LevelDiagram | undefined;
   /** Undefined for a line that is not there. */
   readonly working: (lineId: string, caseId: string) => Working | undefined;
 }
@@ -54,6 +57,13 @@ export interface PrintWorking {
   readonly working: Working;
 }
 
+/** The level diagram of a chain, in the cases that share it. */
+export interface PrintLevels {
+  readonly key: string;
+  readonly caseNames: readonly string[];
+  readonly diagram: LevelDiagram;
+}
+
 /** Everything that is printed. */
 export interface PrintDocument {
   readonly sections: readonly PrintSection[];
@@ -61,6 +71,7 @@ export interface PrintDocument {
   readonly findings: readonly FindingItem[];
   readonly endnotes: readonly string[];
   readonly workings: readonly PrintWorking[];
+  readonly levels: readonly PrintLevels[];
   readonly radiates: boolean;
 }
 
@@ -90,6 +101,7 @@ export function printDocument(worksheet: Worksheet, source: PrintSource): PrintD
     findings: [...groups.error, ...groups.warning, ...groups.note, ...groups.accepted],
     endnotes: [...numbers.keys()],
     workings: required.flatMap(({ line }) => workingsOf(worksheet.cases, line, source)),
+    levels: worksheet.sections.filter(isChainSection).flatMap(({ id }) => levelsOf(worksheet.cases, id, source)),
     radiates: lines.some((line) => line.radiates),
   };
 }
@@ -131,6 +143,20 @@ function workingsOf(cases: readonly Case[], line: Line, source: PrintSource): Pr
     else same.caseNames.push(one.name);
   }
   return [...found.values()].map((one, index) => ({ key: `${line.id} ${String(index)}`, ...one }));
+}
+
+/** The levels of a chain in each case, those that are alike taken together. */
+function levelsOf(cases: readonly Case[], sectionId: string, source: PrintSource): PrintLevels[] {
+  const found = new Map<string, { caseNames: string[]; diagram: LevelDiagram }>();
+  for (const one of cases) {
+    const diagram = source.levels(sectionId, one.id);
+    if (diagram === undefined) continue;
+    const key = JSON.stringify(diagram.points);
+    const same = found.get(key);
+    if (same === undefined) found.set(key, { caseNames: [one.name], diagram });
+    else same.caseNames.push(one.name);
+  }
+  return [...found.values()].map((one, index) => ({ key: `${sectionId} ${String(index)}`, ...one }));
 }
 
 /** Most columns of cases that fit beside each other on a page. */

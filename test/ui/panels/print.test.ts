@@ -1,7 +1,9 @@
 import { cleanup, render, screen, within } from '@testing-library/svelte';
 import { afterEach, describe, expect, it } from 'vitest';
 
-import { workingOf } from '../../../src/review';
+import { itemRows } from '../../../src/app/item-rows';
+import { Evaluation } from '../../../src/engine';
+import { levelDiagramOfChain, workingOf } from '../../../src/review';
 import { casesAbreast, entryStretches, printDocument, type PrintSource } from '../../../src/ui/panels/print-model';
 import PrintView from '../../../src/ui/panels/PrintView.svelte';
 import { evaluate, SHEET } from './sheet';
@@ -13,9 +15,46 @@ const source: PrintSource = {
   reading: (lineId, caseId) => evaluation.reading(lineId, caseId),
   findings: () => evaluation.sheetFindings(),
   items: () => [],
+  levels: () => undefined,
   lineOf: (lineId: string) => evaluation.line(lineId),
   working: (lineId, caseId) => workingOf(evaluation, lineId, caseId),
 };
+
+describe('a chain on paper', () => {
+  const chain = {
+    id: 'rx',
+    kind: 'chain',
+    symbol: 'rx',
+    title: 'Receiver',
+    signal: '-90 dBm',
+    stages: [{ id: 's', symbol: 'lna', label: 'Amplifier', gain: '15 dB', noiseFigure: '1 dB' }],
+  } as const;
+  const cases = [
+    { id: 'a', name: 'First' },
+    { id: 'b', name: 'Second' },
+  ];
+  const worksheet = { id: 'w', title: 'W', cases, sections: [chain] };
+  const chains = new Evaluation(worksheet);
+  const printed = printDocument(worksheet, {
+    reading: (lineId, caseId) => chains.reading(lineId, caseId),
+    findings: () => chains.sheetFindings(),
+    items: (section) => itemRows(chains, section),
+    lineOf: (lineId) => chains.line(lineId),
+    levels: (sectionId, caseId) => levelDiagramOfChain(chains, sectionId, caseId),
+    working: (lineId, caseId) => workingOf(chains, lineId, caseId),
+  });
+
+  it('has its stages and outputs as lines, with what the stages say', () => {
+    const lines = printed.sections[0]?.lines?.map(({ line }) => `${line.symbol}: ${line.entry}`);
+    expect(lines?.[0]).toBe('lna: 15 dB, NF 1 dB');
+    expect(lines).toContain('rx.gain: ');
+  });
+
+  it('has its levels once for cases in which they are alike', () => {
+    expect(printed.levels.map(({ caseNames }) => caseNames)).toEqual([['First', 'Second']]);
+    expect(printed.levels[0]?.diagram.points.map(({ wanted }) => wanted?.value)).toEqual([-90, -75]);
+  });
+});
 
 describe('what is printed', () => {
   const print = printDocument(SHEET, source);
