@@ -196,6 +196,21 @@ describe('the line-up', () => {
   });
 });
 
+it('keeps the source of the stage that has the cursor', async () => {
+  await show();
+  const [first] = chain().stages;
+  if (first === undefined) throw new Error('there is a stage');
+  cell(first.id, 'symbol').focus();
+  await settle();
+  const field = screen.getByRole('textbox', { name: `Source of ${first.symbol}` });
+  field.focus();
+  type('Data sheet, page 3');
+  await press('Enter');
+  expect(chain().stages[0]?.source).toBe('Data sheet, page 3');
+  session.undo();
+  expect(chain().stages[0]?.source).toBe(first.source);
+});
+
 describe('the head', () => {
   it('has the inputs with their figures, and keeps what is typed', async () => {
     await show();
