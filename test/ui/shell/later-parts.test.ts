@@ -10,7 +10,10 @@ describe('the later parts', () => {
     const fetched = later.fetch(onFault);
     expect(later.parts).toBeUndefined();
     await fetched;
-    expect(Object.keys(later.parts ?? {}).sort()).toEqual(['DialogSet', 'PanelHost', 'PrintHost', 'SearchBar']);
+    expect(Object.keys(later.parts ?? {}).sort()).toEqual([
+      ...['CaseMenu', 'DialogSet', 'EditorHelp', 'Menu', 'PanelHost', 'PrintHost', 'RowMenu', 'SearchBar', 'UnitMenu'],
+      'helpFor',
+    ]);
     expect(onFault).not.toHaveBeenCalled();
   });
 
