@@ -13,6 +13,8 @@ export interface Answer {
 export interface World {
   /** The bytes of a file. Throws as Node does when it cannot be read. */
   readonly readFile: (path: string) => Uint8Array;
+  /** Hears how far a long command has come, at standard error's side; asked for only after a second. */
+  readonly tellProgress?: (sentence: string) => void;
 }
 
 /** Bad usage or a bad file: nothing goes to standard output. */

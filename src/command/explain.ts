@@ -1,7 +1,7 @@
 /** `explain`: the working of a line, in words for a terminal. */
 import type { LineFinding } from '../engine';
 import { RADIATION_CAUTION, tellsRadiation, workingOf, type Piece, type Working, type WorkingTerm } from '../review';
-import type { Case, Line } from '../worksheet';
+import { isCurveSection, type Case, type Line, type Section } from '../worksheet';
 import type { Answer, World } from './answer';
 import { exitCodeOf } from './evaluate';
 import { chooseCases, lineWithSymbol, nameOfLine, openFile } from './open';
@@ -20,11 +20,13 @@ export function explainLine(file: string, symbol: string, wanted: readonly strin
     const other = evaluation.line(id);
     return other === undefined ? id : nameOfLine(evaluation, other);
   };
+  const withoutFigure =
+    curveText(evaluation.worksheet.sections.find(({ id: sectionId }) => sectionId === line.id)) ?? 'no entry';
   const told = new Map<string, string[]>();
   for (const { id, name } of cases) {
     const working = workingOf(evaluation, line.id, id);
     if (working === undefined) continue;
-    const text = writeWorking(working, line).join('\n');
+    const text = writeWorking(working, line, withoutFigure).join('\n');
     told.set(text, [...(told.get(text) ?? []), name]);
   }
   const title = `${nameOf(line.id)}${line.label === '' ? '' : ` — ${line.label}`}`;
@@ -45,6 +47,19 @@ export function explainLine(file: string, symbol: string, wanted: readonly strin
     messages: opened.messages,
     exitCode: exitCodeOf({ evaluation, cases, lines: [line], findings }),
   };
+}
+
+/** What a curve is, in place of the figure that it does not have by itself. */
+function curveText(section: Section | undefined): string | undefined {
+  if (section === undefined || !isCurveSection(section)) return undefined;
+  const { x, y, points, symbol } = section;
+  const from = points.map(([at]) => at);
+  const over = (label: string, unit: string): string => (unit === '' ? label : `${label} in ${unit}`);
+  const range =
+    points.length === 0
+      ? 'no points yet'
+      : `${String(points.length)} points, ${String(Math.min(...from))} to ${String(Math.max(...from))} ${x.unit}`;
+  return `a curve, read as ${symbol}(x): ${over(y.label, y.unit)} over ${over(x.label, x.unit)}, ${range}`.trim();
 }
 
 /** `Calm`, `Calm and Storm`, `Calm, Storm and Ice`. */
@@ -69,12 +84,16 @@ const pieceText = (piece: Piece): string => {
 };
 
 /** The figure, and below it the lines of the working. */
-function writeWorking({ steps, terms, shares, remarks, reading }: Working, line: Line): string[] {
+function writeWorking(
+  { steps, terms, shares, remarks, reading }: Working,
+  line: Line,
+  withoutFigure: string,
+): string[] {
   const shown = steps.filter(({ title }) => title !== 'result');
   const width = Math.max(0, ...shown.map(({ title }) => title.length));
   const { kind, side } = reading;
   const lines = [
-    reading.figure.state === 'empty' ? 'no entry' : figureText(reading.figure, line, true),
+    reading.figure.state === 'empty' ? withoutFigure : figureText(reading.figure, line, true),
     ...shown.map(({ title, pieces }) => `${title.padEnd(width)}  ${pieces.map(pieceText).join('')}`),
     ...(terms.length === 0 ? [] : [shares ? 'contributions' : 'rests on', ...writeTerms(terms)]),
     ...(line.requirement === undefined

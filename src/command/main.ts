@@ -9,7 +9,10 @@ for (const stream of [process.stdout, process.stderr])
     process.exit();
   });
 
-const answer = run(process.argv.slice(2), { readFile: (path) => readFileSync(path) });
+const answer = run(process.argv.slice(2), {
+  readFile: (path) => readFileSync(path),
+  tellProgress: (sentence) => process.stderr.write(`${sentence}\n`),
+});
 process.stderr.write(answer.messages);
 process.stdout.write(answer.results);
 process.exitCode = answer.exitCode;

@@ -60,6 +60,13 @@ export function lineWithSymbol({ evaluation, file }: Opened, symbol: string): Li
   const line =
     evaluation.lineOf(symbol) ?? evaluation.lines().find((other) => nameOfLine(evaluation, other) === symbol);
   if (line !== undefined) return line;
+  const part = evaluation.lines().find((other) => other.symbol.startsWith(`${symbol}.`))?.symbol;
+  if (part !== undefined)
+    throw new Refusal(
+      oneLine(
+        `${file}: “${symbol}” is a chain or a stage and has no figure by itself; ask for a part of it, such as ${part}.`,
+      ),
+    );
   const nearest = nearestName(
     symbol,
     evaluation.lines().map((other) => other.symbol),

@@ -44,7 +44,7 @@ function rowsOf(selection: Selection, lines: readonly Line[]): Row[] {
     line,
     cells: [
       line.symbol,
-      line.label,
+      line.off === true ? `${line.label} (switched off)` : line.label,
       ...cases.map(({ id }) => figureText(evaluation.reading(line.id, id).figure, line, linear)),
       requirementCell(selection, line),
     ].map(oneLine),
@@ -168,7 +168,7 @@ export function writeMarkdown(selection: Selection): string {
 // Blanks and characters that are not seen may stand ahead of the sign.
 const LOOKS_LIKE_FORMULA = /^[\s\p{C}]*[=+\-@\t\r\n＝＋－＠]/u;
 
-const csvText = (text: string): string => csvCell(LOOKS_LIKE_FORMULA.test(text) ? `'${text}` : text);
+export const csvText = (text: string): string => csvCell(LOOKS_LIKE_FORMULA.test(text) ? `'${text}` : text);
 const csvCell = (text: string): string => (/[",\r\n]/.test(text) ? `"${text.replaceAll('"', '""')}"` : text);
 
 /** One row a line and case, values in full. */

@@ -3,11 +3,13 @@
  * to hand-written closures in the same process; and the page's script, built into the folder named by the first argument, in
  * gzipped bytes. Prints one JSON object and nothing else.
  */
+import { compileTrials, inputsOf, runTrials } from '../../src/analysis';
 import { Evaluation } from '../../src/engine';
 import { applyAll, applyChange, setEntry, setStageValue, type Worksheet } from '../../src/worksheet';
 import { handChain, handFanOut, handLattice, handTens, type Baseline } from './closures';
+import { drawAll, handTrials } from './hand-trials';
 import { scriptSize } from './script-size';
-import { budget, chain, fanOut, lattice, lineUp, tens } from './sheets';
+import { budget, chain, fanOut, lattice, lineUp, tens, toleranced } from './sheets';
 
 const COUNT = 10_000;
 
@@ -150,6 +152,32 @@ const graphEdit = time((round) => {
   largeEvaluation.sheetFindings();
 }, 15);
 
+/** A million trials on one thread, by turns with the hand-written ones, so that both meet the same machine. */
+const TRIALS = 1_000_000;
+const tolerant = new Evaluation(toleranced());
+const marginId = tolerant.lineOf('M')?.id ?? '';
+const tolerances = inputsOf(tolerant, marginId, 'nominal');
+const program = compileTrials(tolerances.evaluation, marginId, 'nominal', tolerances.inputs);
+let [margins, handMargins]: [Float64Array, Float64Array] = [new Float64Array(0), new Float64Array(0)];
+const trialTimes: number[] = [];
+const handTrialTimes: number[] = [];
+const drawTimes: number[] = [];
+for (let round = 0; round < 7; round++) {
+  const start = performance.now();
+  margins = runTrials(program, tolerances.inputs, 1, 0, TRIALS);
+  const between = performance.now();
+  handMargins = handTrials(1, TRIALS);
+  const after = performance.now();
+  drawAll(1, TRIALS, () => undefined);
+  // The first round warms up.
+  if (round === 0) continue;
+  trialTimes.push(between - start);
+  handTrialTimes.push(after - between);
+  drawTimes.push(performance.now() - after);
+}
+const mostOff = margins.reduce((most, margin, at) => Math.max(most, Math.abs(margin - (handMargins[at] ?? NaN))), 0);
+if (!(mostOff < 1e-9)) throw new Error(`the trials are not the hand-written ones: ${String(mostOff)} dB off`);
+
 const pageFolder = process.argv[2];
 
 process.stdout.write(
@@ -171,6 +199,16 @@ process.stdout.write(
         editMs: stageEdit,
       },
       graphEditOf10000LinesMs: graphEdit,
+      trials: {
+        lines: tolerant.lines().length,
+        inputs: tolerances.inputs.length,
+        trials: TRIALS,
+        ms: median(trialTimes),
+        handMs: median(handTrialTimes),
+        // Of both: random numbers and shapes. The rest is the arithmetic of the budget.
+        drawMs: median(drawTimes),
+        ratio: median(trialTimes) / median(handTrialTimes),
+      },
       ...(pageFolder === undefined ? {} : { script: scriptSize(pageFolder) }),
     },
     null,

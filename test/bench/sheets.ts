@@ -1,5 +1,6 @@
 /** The worksheets that are measured: a chain, a fan-out, a lattice of diamonds, and a budget of ordinary size. */
 import type { Line, Worksheet } from '../../src/worksheet';
+import { TRIAL_INPUTS, TRIAL_SHAPES } from './hand-trials';
 
 const sheet = (lines: readonly Line[]): Worksheet => ({
   id: '00000000-0000-4000-8000-000000000000',
@@ -133,4 +134,25 @@ export function lineUp(count: number): Worksheet {
       },
     ],
   };
+}
+
+/** The budget of `handTrials` as a worksheet: thirty lines, of which 24 have tolerances and two are sums of powers. */
+export function toleranced(): Worksheet {
+  const inputs = TRIAL_INPUTS.map(([symbol, figure, below, above, unit], index): Line => ({
+    ...line(index, symbol, `${String(figure)} ${unit}`),
+    tolerance: {
+      below: `${String(below)} dB`,
+      above: `${String(above)} dB`,
+      shape: TRIAL_SHAPES[index % 3] ?? 'uniform',
+    },
+  }));
+  const computed: readonly (readonly [symbol: string, entry: string])[] = [
+    ['C', 'P_tx - L_feed + G_tx - L_fs - L_gas - L_point - L_pol + G_rx - L_rx'],
+    ['N', 'N_in + NF'],
+    ['I', 'powersum(P_a + G_a - L_a - D_a + G_rx, P_b + G_b - L_b - D_b + G_rx, P_c - L_c - D_c + G_rx)'],
+    ['N_tot', 'powersum(N, I)'],
+    ['SINR', 'C - N_tot'],
+    ['M', 'SINR - L_mod - SINR_req'],
+  ];
+  return sheet([...inputs, ...computed.map(([symbol, entry], at) => line(inputs.length + at, symbol, entry))]);
 }

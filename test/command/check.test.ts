@@ -30,7 +30,7 @@ describe('the lines', () => {
       ) as string,
       expect.stringMatching(/^sheet: clear: S: error levels-summed: .* \[repair: powersum\(C, C\)\]$/) as string,
       expect.stringMatching(/^sheet: rain: S: error levels-summed: .* \[repair: powersum\(C, C\)\]$/) as string,
-      expect.stringMatching(/^sheet: clear,rain: T: error waiting: Waits for S, whose value is withheld\.$/) as string,
+      expect.stringMatching(/^sheet: clear,rain: T: error waiting: Waits for S, which has no value yet\.$/) as string,
     ]);
   });
 

@@ -29,6 +29,16 @@ describe('choosing', () => {
     expect(Object.keys(results.lines['x']?.cases ?? {})).toEqual(ids);
   });
 
+  it.each(['rx', 'rx.lna'])('%s, which has no figure by itself, is sent to a part', (symbol) => {
+    const stages = [{ id: 's', symbol: 'lna', label: '', gain: '10 dB' }];
+    const chain = { id: 'c', kind: 'chain', symbol: 'rx', title: '', stages } as const;
+    const answer = runOn(fileOfLines([], { sections: [chain] }), 'explain', 'sheet', symbol);
+    expect(answer).toMatchObject({ results: '', exitCode: 2 });
+    expect(answer.messages).toBe(
+      `sheet: “${symbol}” is a chain or a stage and has no figure by itself; ask for a part of it, such as rx.lna.gain.\n`,
+    );
+  });
+
   it('lines, by symbol or by the name in results, keeps their order', () => {
     expect(Object.keys(resultsOf(SHEET, '--line', 'EIRP', '--line', 'P_tx', '--line', 'EIRP').lines)).toEqual([
       'P_tx',

@@ -115,7 +115,7 @@ describe('Markdown', () => {
       '| L | Feeder | 2.00 dB | 2.00 dB |  |',
     ]);
     expect(rows).toContain('## Findings');
-    expect(rows).toContain('- error waiting: Q: Waits for N, whose value is withheld.');
+    expect(rows).toContain('- error waiting: Q: Waits for N, which has no value yet.');
     expect(rows.slice(rows.indexOf('## Cautions'))).toEqual([
       '## Cautions',
       '',
@@ -287,4 +287,16 @@ describe('CSV', () => {
       { numRuns: 200 },
     );
   });
+});
+
+it('says of a pool which lines are switched off', () => {
+  const lines = [
+    { id: 'a', symbol: 'A', label: 'thermal', entry: '-100 dBm' },
+    { id: 'b', symbol: 'B', label: 'image', entry: '-90 dBm', off: true },
+  ];
+  const pool = { id: 'p', kind: 'pool', symbol: 'N_I', title: 'Noise', lines } as const;
+  const rows = print('text', fileOfLines([], { sections: [pool] })).split('\n');
+  expect(rows.filter((row) => row.includes('(switched off)'))).toEqual([
+    expect.stringMatching(/^B +image \(switched off\) +-90\.00 dBm$/),
+  ]);
 });

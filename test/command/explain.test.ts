@@ -225,6 +225,32 @@ it('keeps every text of the file on its line', () => {
   ]);
 });
 
+it('tells of a curve what it is, since it has no figure by itself, and of a line that it rests on one', () => {
+  const curve = {
+    id: 'c',
+    kind: 'curve',
+    symbol: 'G',
+    title: 'Scan',
+    x: { label: 'Angle', unit: 'deg' },
+    y: { label: 'Gain', unit: 'dBi', quantity: 'gain' },
+    points: [
+      [0, 32],
+      [45, 29],
+    ],
+  } as const;
+  const lines = {
+    id: 'l',
+    kind: 'lines',
+    title: '',
+    lines: [{ id: 'x', symbol: 'x', label: '', entry: 'G(9 deg)' }],
+  } as const;
+  const file = fileOfLines([], { sections: [lines, curve] });
+  expect(explained(file, 'x')).toContain('    G  a curve   Scan');
+  expect(explained(file, 'G')[0]).toBe(
+    'G — Scan, Nominal: a curve, read as G(x): Gain in dBi over Angle in deg, 2 points, 0 to 45 deg',
+  );
+});
+
 describe.each(STARTERS)('of $title', ({ id, text }) => {
   const read = readWorksheetFile(text);
   if (!read.ok) throw new Error(read.fault.sentence);

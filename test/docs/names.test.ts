@@ -49,6 +49,16 @@ const OTHERS = new Set([
   '0 failed',
   // Typed into the requirement column, and shown there.
   '≥ 3 dB',
+  // Typed as tolerances.
+  '±0.5 dB',
+  '+0.3/-0.8 dB triangular',
+  'fav 0.5 dB adv 1 dB',
+  '±2 %',
+  // Bounds of an option, and what names a stream of random numbers.
+  '--between A B',
+  'line <id>',
+  'group <name>',
+  'exact: false',
   // What the grammar refuses by itself, and what the scanner writes for it.
   '.5',
   '20 MHz',
@@ -67,7 +77,7 @@ function complaint(span: string): string | undefined {
   if (/^(npm|npx|RUNS=\d+ npx) /.test(span)) return undefined;
   if (/^https?:/.test(span)) return undefined;
   if (/^--[a-z-]+$/.test(span)) return code.includes(span.slice(2)) ? undefined : 'no such option';
-  if (/^(evaluate|check|explain|functions) [A-Z[]/.test(span)) return undefined;
+  if (/^(evaluate|check|explain|trials|sensitivity|sweep|solve|functions) [A-Z[]/.test(span)) return undefined;
   if (span.startsWith('/usr/bin/')) return undefined;
   if (FOLDERS.some((folder) => span.startsWith(`${folder}/`))) return pathExists(span) ? undefined : 'no such file';
   if (FILE_NAME.test(span)) return nameExists(span) ? undefined : 'no such file name';

@@ -47,7 +47,7 @@ const sumOfStage = (record: PublishedRecord, stage: string): string =>
     .join(' ')
     .replace(/^\+ /, '');
 
-const VARIANCE = 'a variance: tolerances come in a later milestone';
+const VARIANCE = 'a variance, of rows whose shapes are for the most part not printed';
 
 /** The lines that both X-band tables and the UHF tables of one source have after the received power. */
 const tracking = (first: number): string => `carrier_power_dBm = received_power_dBm + b${first}

@@ -5,6 +5,7 @@ import { LEVEL_RECIPES } from './recipes-levels';
 import { NOISE_RECIPES } from './recipes-noise';
 import { PROPAGATION_RECIPES } from './recipes-propagation';
 import type { Recipe } from './records';
+import { TOLERANCE_RECIPES } from './recipes-tolerances';
 
 export const RECIPES: readonly Recipe[] = [
   ...NOISE_RECIPES,
@@ -12,6 +13,7 @@ export const RECIPES: readonly Recipe[] = [
   ...CASCADE_RECIPES,
   ...PROPAGATION_RECIPES,
   ...BUDGET_RECIPES,
+  ...TOLERANCE_RECIPES,
 ];
 
 /** The recipe of a record. Throws when it has none or several. */

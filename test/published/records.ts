@@ -4,6 +4,8 @@
  * `memory`: recalled). Inputs, figures, sources and tolerances stand as they were handed down.
  */
 import { readdirSync, readFileSync } from 'node:fs';
+import type { Evaluation } from '../../src/engine';
+import type { Tolerance } from '../../src/worksheet';
 
 export interface BudgetLine {
   readonly name: string;
@@ -87,6 +89,10 @@ export interface Recipe {
   /** Which records. */
   readonly ids: RegExp;
   readonly lines: (inputs: Inputs, record: PublishedRecord) => string;
+  /** Tolerances of lines, by symbol. */
+  readonly tolerances?: (inputs: Inputs) => Readonly<Record<string, Tolerance>>;
+  /** Figures that are no line's own, by key: statistics of tolerances. */
+  readonly figures?: (evaluation: Evaluation) => Readonly<Record<string, number>>;
   /** Keys of `expected` that the worksheet does not give, with the reason. */
   readonly without?: Readonly<Record<string, string>>;
 }
