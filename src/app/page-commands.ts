@@ -1,8 +1,9 @@
 /** What the page's buttons and keys do beyond the grid: files, findings, starters, pasted tables. */
 import type { LineFinding } from '../engine';
-import { pasteLines, type Line } from '../worksheet';
+import { isLinesSection, pasteLines, type Line } from '../worksheet';
 import { downloadText, chooseFile } from './files';
 import { isOpen } from './finding-counts';
+import { itemRows, rowOfItem } from './item-rows';
 import type { Session } from './session.svelte';
 
 /** Saves the worksheet as a file. */
@@ -43,25 +44,38 @@ export function takePastedTable(session: Session, lines: readonly Line[]): void 
   if (session.perform(edit, { follow: true }) && messages.length > 0) session.notice = { text: messages.join(' ') };
 }
 
-/** Brings the cursor to the next open finding below the selected line, or the one before; round the end. */
+/** Brings the cursor to the next row with an open finding below the selected line, or the one before; round the end. */
 export function goToFinding(session: Session, direction: 1 | -1): void {
-  const lineIds = [
-    ...new Set(
-      session
-        .sheetFindings()
-        .filter(isOpen)
-        .map((finding) => finding.lineId),
-    ),
-  ];
-  if (lineIds.length === 0) {
+  const { evaluation } = session;
+  const sections = session.worksheet.sections.map((section) => ({
+    id: section.id,
+    lines: isLinesSection(section) ? section.lines : [],
+    items: itemRows(evaluation, section),
+  }));
+  // By the rows as they are shown: what is found on parts of a chain stands with a stage, or with the chain's first output.
+  const order = new Map(
+    sections
+      .flatMap(({ lines, items }) => [...lines.map(({ id }) => id), ...items.map(({ line }) => line.id)])
+      .map((id, at) => [id, at]),
+  );
+  const rowIdOf = (lineId: string): string => {
+    const items = sections.find(({ id }) => id === evaluation.originOf(lineId)?.sectionId)?.items;
+    return (items === undefined ? undefined : rowOfItem(items, evaluation, lineId)?.line.id) ?? lineId;
+  };
+  const place = (id: string | null): number => (id === null ? -1 : (order.get(id) ?? -1));
+  const found = new Map<number, string>();
+  for (const { lineId } of session.sheetFindings().filter(isOpen)) {
+    const at = place(rowIdOf(lineId));
+    if (!found.has(at)) found.set(at, lineId);
+  }
+  if (found.size === 0) {
     session.announce('There are no open findings.');
     return;
   }
-  const order = new Map(session.sheet.lineOrder.map((id, at) => [id, at]));
-  const place = (id: string | null): number => (id === null ? -1 : (order.get(id) ?? -1));
+  const places = [...found.keys()].sort((a, b) => direction * (a - b));
   const here = place(session.selectedLineId);
-  const found = direction === 1 ? lineIds.find((id) => place(id) > here) : lineIds.findLast((id) => place(id) < here);
-  const target = found ?? (direction === 1 ? lineIds[0] : lineIds[lineIds.length - 1]);
+  const next = places.find((at) => direction * (at - here) > 0) ?? places[0];
+  const target = next === undefined ? undefined : found.get(next);
   if (target !== undefined) jumpToFinding(session, target);
 }
 

@@ -32,12 +32,13 @@ export function nodeIn(graph: Pick<Graph, 'nodes'>, lineId: string, caseId: stri
 
 /** Builds the graph, taking over nodes of the one before, so that what has not changed need not be checked again. */
 export function buildGraph(worksheet: Worksheet, before: Graph | undefined, newSlot: () => number): Graph {
-  const items = worksheet.sections.flatMap(itemsOf);
+  const expanded = worksheet.sections.flatMap(itemsOf);
   const holders = new Map<string, Item>();
-  for (const item of items)
+  for (const item of expanded)
     for (const symbol of [item.line.symbol, item.alias])
       if (symbol !== undefined && symbol !== '' && !RESERVED.has(symbol) && !holders.has(symbol))
         holders.set(symbol, item);
+  const items = expanded.map((item) => (callsOthers(item, holders) ? (item.calls?.otherwise ?? item) : item));
   const differing = findDiffering(worksheet, items, holders);
   const nodes = new Map<string, ReadonlyMap<string, Node>>();
   const byId = new Map<string, Item>();
@@ -68,6 +69,13 @@ export function buildGraph(worksheet: Worksheet, before: Graph | undefined, newS
     order,
     hasDuplicates: order.some(({ barred }) => barred?.code === 'duplicate-symbol'),
   };
+}
+
+/** True when a symbol in a generated entry is not that of the line which is meant. */
+function callsOthers({ calls }: Item, holders: ReadonlyMap<string, Item>): boolean {
+  if (calls === undefined) return false;
+  for (const [symbol, id] of calls.idBySymbol) if (holders.get(symbol)?.line.id !== id) return true;
+  return false;
 }
 
 /** The entry of a line in a case, or its own. */

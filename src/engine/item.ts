@@ -64,6 +64,8 @@ export interface Item {
   readonly isGenerated?: boolean;
   /** A further symbol by which only generated entries call it. */
   readonly alias?: string;
+  /** Whom a generated entry calls by symbols of their own, and what stands in its place when a symbol is another's. */
+  readonly calls?: { readonly idBySymbol: ReadonlyMap<string, string>; readonly otherwise: Item };
 }
 
 const expansions = new WeakMap<Section, readonly Item[]>();

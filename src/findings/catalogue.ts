@@ -135,6 +135,16 @@ export const CATALOGUE = {
     'Nothing has this name',
     'An expression may use the symbols of lines, constants and functions of the catalogue.',
     (x) =>
+      given(
+        x['example'],
+        (example) =>
+          `“${f(x, 'name')}” is a chain or a stage and has no figure by itself: write a part of it, such as ${example}.`,
+      ) ||
+      given(
+        x['needs'],
+        (needs) =>
+          `“${f(x, 'name')}” is not given: ${f(x, 'name').split('.')[0] ?? ''} gives it once it is told ${needs}.`,
+      ) ||
       `${f(x, 'what')} “${f(x, 'name')}” is not known here.` + given(x['nearest'], (nearest) => ` Is it “${nearest}”?`),
   ),
   'duplicate-symbol': entry(
@@ -169,7 +179,7 @@ export const CATALOGUE = {
     'error',
     'The line waits for another',
     'A line whose inputs are withheld is withheld too.',
-    (x) => `Waits for ${f(x, 'roots')}, whose value is withheld.`,
+    (x) => `Waits for ${f(x, 'roots')}, which has no value yet.`,
   ),
   'ratios-summed': entry(
     'warning',
@@ -302,8 +312,8 @@ export const CATALOGUE = {
   ),
   'negative-figure': entry(
     'warning',
-    'A noise figure or temperature below its floor',
-    'A noise figure is at least 0 dB and a noise temperature at least 0 K.',
+    'A noise figure, temperature or bandwidth below its floor',
+    'A noise figure is at least 0 dB, a noise temperature at least 0 K and a bandwidth at least 0 Hz.',
     (x) =>
       `The line is a ${f(x, 'kind')} and reads ${f(x, 'now')}; it cannot be below ${f(x, 'floor')}.${instead(x, 'Probably meant')}`,
   ),

@@ -16,7 +16,7 @@ import {
   type Unit,
 } from '../quantity';
 import { broken, type Context } from './context';
-import { nearestName } from './nearest';
+import { lookAround } from './chain-names';
 import { constantPlan } from './plan';
 import type { LiteralTree, SymbolTree } from './tree';
 import type { Checked, DecibelType, LinearType, RateType, SymbolInfo } from './types';
@@ -137,10 +137,10 @@ export function checkSymbol(tree: SymbolTree, context: Context): Checked {
   }
   const info = context.scope.find(tree.name);
   if (info === undefined) {
-    const nearest = nearestName(tree.name, [...context.allNames(), ...CONSTANTS.map(({ name }) => name)]);
+    const around = lookAround(tree.name, [...context.allNames(), ...CONSTANTS.map(({ name }) => name)]);
     return context.stop('unknown-symbol', tree, {
-      facts: { what: 'The symbol', name: tree.name, ...(nearest === undefined ? {} : { nearest }) },
-      repairs: nearest === undefined ? [] : [context.rewrite(tree, nearest)],
+      facts: { what: 'The symbol', name: tree.name, ...around },
+      repairs: around.nearest === undefined ? [] : [context.rewrite(tree, around.nearest)],
     });
   }
   if (info === 'withheld') {

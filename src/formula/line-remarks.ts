@@ -152,6 +152,12 @@ function sayBelowFloor({ unit, kind, plan, tree, checked, context }: LineFacts):
       applies: { plan, test: (value) => value < floor },
     });
   }
+  if (unit.form === 'linear' && kind?.kind === 'bandwidth' && kind.origin !== 'unit' && kind.origin !== 'expression')
+    context.say('negative-figure', tree, {
+      facts: { kind: 'bandwidth', floor: '0 Hz' },
+      repairs: positive,
+      applies: { plan, test: isNegative },
+    });
   const isNamedLoss = kind?.kind === 'loss' && kind.origin !== 'expression' && isRatio;
   if (isNamedLoss && checked?.type.form !== 'broken')
     context.say('negative-loss', tree, {

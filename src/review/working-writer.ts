@@ -10,6 +10,7 @@ import {
   type Token,
 } from '../formula';
 import { linearFigure, writeFigure, writeSignificant, type Unit, type WrittenFigure } from '../quantity';
+import { isCurveSection } from '../worksheet';
 
 import { linearPieces } from './linear-terms';
 import { powerSumOf, sharesOf } from './power-sums';
@@ -178,8 +179,13 @@ export class WorkingWriter {
       label: line.label,
       ...(value.type === 'figure'
         ? { text: value.text, unit: value.unit }
-        : { text: state === 'value' ? '' : STATE_WORDS[state], unit: '' }),
+        : { text: state === 'value' ? '' : this.isCurve(line.id) ? 'a curve' : STATE_WORDS[state], unit: '' }),
     };
+  }
+
+  /** True for a curve, which is called and has no figure by itself. */
+  private isCurve(lineId: string): boolean {
+    return this.evaluation.worksheet.sections.some((section) => section.id === lineId && isCurveSection(section));
   }
 
   /** The figure of an expression that is no line by itself. */

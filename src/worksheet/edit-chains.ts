@@ -13,7 +13,7 @@ import {
   type StageField,
 } from './chain';
 import type { Change } from './changes';
-import { isChainSection, type AcceptedFinding, type Worksheet } from './document';
+import { isChainSection, type AcceptedFinding, type Tolerance, type Worksheet } from './document';
 import type { Edit, Focus } from './edit';
 import { chainChanges, rewriting } from './edit-symbols';
 import { STAGE_KEYS, withKey } from './keys';
@@ -166,6 +166,26 @@ export function answerStageFinding(
   const answers = reason === undefined ? others : [...others, { code, entry, reason }];
   const verb = reason === undefined ? 'Take back an accepted finding' : 'Accept a finding';
   return stagesEdit(`${verb} on ${stageName(stage)}`, chain, withStage(chain, withAnswers(stage, field, answers)));
+}
+
+/** Says how far a stage's value may be off; undefined takes the tolerance away. */
+export function setStageTolerance(
+  worksheet: Worksheet,
+  sectionId: string,
+  stageId: string,
+  field: StageField,
+  tolerance: Tolerance | undefined,
+): Edit {
+  const chain = chainOf(worksheet, sectionId);
+  const stage = stageAt(chain, stageId);
+  const all = new Map(Object.entries(stage.tolerance ?? {}));
+  const isSame = all.get(field) === tolerance;
+  if (tolerance === undefined) all.delete(field);
+  else all.set(field, tolerance);
+  const after = isSame
+    ? stage
+    : withKey(stage, 'tolerance', all.size === 0 ? undefined : Object.fromEntries(all), STAGE_KEYS);
+  return stagesEdit(`Change a tolerance of ${stageName(stage)}`, chain, withStage(chain, after));
 }
 
 /** Sets a stage's label, source or note. */

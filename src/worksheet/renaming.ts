@@ -11,12 +11,16 @@ import { symbolWords } from './symbols';
 
 /** What renames symbols in one text. */
 function renamer(renamed: ReadonlyMap<string, string>): (text: string) => string {
+  // By the first word, since a text is split into words: a stage is renamed as rx.lna.
+  const byWord = new Map<string, { from: string; to: string }[]>();
+  for (const [from, to] of renamed) {
+    const word = from.split('.')[0] ?? from;
+    byWord.set(word, [...(byWord.get(word) ?? []), { from, to }]);
+  }
   return (text) => {
     let result = text;
-    for (const word of symbolWords(text)) {
-      const to = renamed.get(word);
-      if (to !== undefined) result = renameSymbol(result, word, to);
-    }
+    for (const word of symbolWords(text))
+      for (const { from, to } of byWord.get(word) ?? []) result = renameSymbol(result, from, to);
     return result;
   };
 }

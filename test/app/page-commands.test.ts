@@ -2,11 +2,13 @@
 import { describe, expect, it } from 'vitest';
 
 import { goToFinding, takePastedTable } from '../../src/app/page-commands';
+import { itemRows, rowOfItem } from '../../src/app/item-rows';
 import { Session } from '../../src/app/session.svelte';
 import { Settings } from '../../src/app/settings.svelte';
 import { fail } from '../../src/base';
 import { linesFromPreview, previewTable, writeWorksheetFile } from '../../src/exchange';
 import { allLines } from '../../src/worksheet';
+import { chainSheet } from './chain-sheet';
 import { sheet } from './support';
 
 async function session(...lines: Parameters<typeof sheet>[0]): Promise<Session> {
@@ -37,6 +39,27 @@ describe('going to findings', () => {
     made.selection.put(from);
     goToFinding(made, direction);
     expect(wanted(made)).toBe(to);
+  });
+
+  it('goes through the findings of a chain, of its stages and of lines behind it, and round', async () => {
+    const made = new Session(new Settings(), fail({ code: 'unavailable', sentence: '', detail: '' }));
+    const stage = { label: '', gain: '-3 dB', noiseFigure: '1 dB' };
+    const stages = ['a', 'b', 'c'].map((symbol) => ({ ...stage, id: symbol, symbol }));
+    await made.opening.importText(writeWorksheetFile(chainSheet({ stages, noise: '30 K', signal: 'nowhere' })));
+    const told: string[] = [];
+    for (let i = 0; i < 7; i++) {
+      made.focusRequest = null;
+      goToFinding(made, 1);
+      const id = wanted(made) as string;
+      const at = made.evaluation.originOf(id);
+      told.push(at?.stageId ?? (at === undefined ? id : 'chain'));
+      // What the grid does: the cursor goes to the row that tells of it.
+      const section = made.worksheet.sections.find((one) => one.id === at?.sectionId);
+      const row = section && rowOfItem(itemRows(made.evaluation, section), made.evaluation, id);
+      made.selection.put(row?.line.id ?? id);
+    }
+    expect(told.slice(0, 4)).toEqual(['a', 'b', 'c', 'chain']);
+    expect(told.slice(4)).toContain('a');
   });
 
   it('says so when there is none', async () => {

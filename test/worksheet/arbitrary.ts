@@ -328,6 +328,7 @@ export function editOf(worksheet: Worksheet, draw: EditDraw): Edit | undefined {
       () => w.setStageValue(worksheet, id, oneStage.id, field, typed),
       () => w.setStageValue(worksheet, id, oneStage.id, field, typed, caseId),
       () => w.setStageText(worksheet, id, oneStage.id, 'source', typed),
+      () => w.setStageTolerance(worksheet, id, oneStage.id, field, c % 3 === 0 ? undefined : { below: typed }),
       () => w.setStageSymbol(worksheet, id, oneStage.id, typed),
       () => w.setChainInput(worksheet, id, pick(w.CHAIN_INPUTS, c) ?? 'noise', typed),
       () => w.setInterceptAddition(worksheet, id, c % 2 === 0 ? 'power' : 'coherent'),

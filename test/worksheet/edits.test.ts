@@ -191,6 +191,28 @@ describe('symbols', () => {
     };
     expect(lineAfter(w.setSymbol(using, 'r', 'front'), 'u', using)?.entry).toBe('front.nf + front');
   });
+
+  it('may be parts: uses of a stage follow its name, in lines, pools and other stages', () => {
+    const stage = { id: 'a', symbol: 'lna', label: '', gain: '10 dB' };
+    const using: Worksheet = {
+      ...sheet,
+      sections: [
+        { id: 'l', kind: 'lines', title: '', lines: [line('u', 'U', 'rx.lna.out.snr - rx.lnas.gain + lna')] },
+        { id: 'p', kind: 'pool', symbol: 'N', title: '', lines: [line('v', 'V', 'rx.lna.out.noise')] },
+        {
+          id: 'c',
+          kind: 'chain',
+          symbol: 'rx',
+          title: '',
+          stages: [stage, { id: 'b', symbol: 'pad', label: '', gain: '-rx.lna.gain' }],
+        },
+      ],
+    };
+    const edit = w.setStageSymbol(using, 'c', 'a', 'amp');
+    expect(lineAfter(edit, 'u', using)?.entry).toBe('rx.amp.out.snr - rx.lnas.gain + lna');
+    expect(lineAfter(edit, 'v', using)?.entry).toBe('rx.amp.out.noise');
+    expect(after(edit, using).sections[2]).toMatchObject({ stages: [{ symbol: 'amp' }, { gain: '-rx.amp.gain' }] });
+  });
 });
 
 describe('lines', () => {

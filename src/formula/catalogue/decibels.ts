@@ -3,6 +3,10 @@ import {
   fieldSum,
   isDimensionless,
   meanPower,
+  POWER,
+  POWER_DENSITY,
+  TEMPERATURE,
+  type Dimension,
   meaningOf,
   powerDifference,
   powerSum,
@@ -250,8 +254,17 @@ function sortInPool(operand: Checked): string {
   if (meaning !== undefined && meaning.w === 1 && meaning.u === -1) return `${SIGNAL_RATIO}${suffix}`;
   if (meaning !== undefined && meaning.w === -1 && meaning.u === 1) return `${IMPAIRMENT_RATIO}${suffix}`;
   if (isRatio && (kind === 'noise figure' || kind === 'loss')) return `a ${kind}`;
-  return isRatio ? PLAIN_RATIO : of;
+  return isRatio
+    ? PLAIN_RATIO
+    : (SORT_WORDS.find(([one]) => sameDimension(one, dimension))?.[1] ?? `of the dimension of ${of}`);
 }
+
+/** What systems people call what a pool may hold. */
+const SORT_WORDS: readonly (readonly [Dimension, string])[] = [
+  [POWER, 'a level of power'],
+  [POWER_DENSITY, 'a power density'],
+  [TEMPERATURE, 'a temperature'],
+];
 
 const SIGNAL_RATIO = 'a signal ratio';
 const IMPAIRMENT_RATIO = 'an impairment ratio';

@@ -42,7 +42,9 @@ export function onGridKey(model: GridModel, event: KeyboardEvent): void {
   event.preventDefault();
   event.stopPropagation();
   if (hasOpened(model)) return;
-  if (model.cursor !== before || action === 'fold') void model.focusCursor();
+  // What a move takes out of the page and puts in again loses the focus, though the cursor is where it was.
+  const mayLoseFocus = action === 'fold' || action === 'move-up' || action === 'move-down';
+  if (model.cursor !== before || mayLoseFocus) void model.focusCursor();
 }
 
 /** True when an action has opened an editor or a menu, which takes the focus by itself. */

@@ -4,6 +4,7 @@
  * Holds: a row's key names the same thing from one list to the next, so that what was measured and where the cursor stood last.
  */
 import type { Evaluation, LineFinding } from '../../engine';
+import { canAnswer } from '../../app/answers';
 import { itemRows, rowOfItem, type ItemRow } from '../../app/item-rows';
 import {
   isLinesSection,
@@ -47,7 +48,14 @@ export type Row =
       readonly findings: readonly LineFinding[];
       readonly unfolded: boolean;
     }
-  | { readonly kind: 'finding'; readonly key: string; readonly line: Line; readonly finding: LineFinding }
+  | {
+      readonly kind: 'finding';
+      readonly key: string;
+      readonly line: Line;
+      readonly finding: LineFinding;
+      /** False: on nothing that could keep an answer, such as a figure that a chain works out. */
+      readonly answerable?: false;
+    }
   | { readonly kind: 'add'; readonly key: string; readonly section: LinesSection }
   | { readonly kind: 'new-section'; readonly key: string };
 
@@ -92,7 +100,10 @@ export function rowsOf({ worksheet, evaluation, findings, collapsed, folding }: 
   const pushFindings = (line: Line, own: readonly LineFinding[], unfolded: boolean): void => {
     if (!unfolded) return;
     own.forEach((finding, i) => {
-      rows.push({ kind: 'finding', key: findingKey(line.id, i), line, finding });
+      const answers = canAnswer(evaluation.worksheet, evaluation, finding.lineId)
+        ? {}
+        : ({ answerable: false } as const);
+      rows.push({ kind: 'finding', key: findingKey(line.id, i), line, finding, ...answers });
     });
   };
   const isUnfolded = (lineId: string, own: readonly LineFinding[]): boolean =>

@@ -16,7 +16,10 @@ import {
 /** Whether pasted points take the place of all that are there, or come behind them. */
 export type PasteWay = 'replace' | 'append';
 
-/** The edit that pastes points: replacing, with the axes as the text names them; appending, in the curve's own units. */
+/**
+ * The edit that pastes points: replacing, with the axes as the text names them; appending, in the curve's own units. Where there
+ * are no points yet both are the same: a curve that has just been made takes labels and units from the first heading.
+ */
 export function pasteEdit(
   worksheet: Worksheet,
   curve: CurveSection,
@@ -24,7 +27,7 @@ export function pasteEdit(
   way: PasteWay,
 ): Result<Edit, string> {
   const count = `${String(pasted.points.length)} ${pasted.points.length === 1 ? 'point' : 'points'}`;
-  if (way === 'append') {
+  if (way === 'append' && curve.points.length > 0) {
     const points = pointsInUnits(pasted, { x: curve.x.unit, y: curve.y.unit });
     if (!points.ok) return points;
     const edit = setPoints(worksheet, curve.id, [...curve.points, ...points.value]);

@@ -87,9 +87,10 @@ export function printDocument(worksheet: Worksheet, source: PrintSource): PrintD
     id: section.id,
     title: section.title,
     ...(!isOtherSection(section) && {
-      lines: [...(isLinesSection(section) ? section.lines : []), ...source.items(section).map(lineOfItem)].map((line) =>
-        printLine(worksheet, line, source, noteNumber),
-      ),
+      lines: [
+        ...(isLinesSection(section) ? section.lines.map(withItsSwitch) : []),
+        ...source.items(section).map(lineOfItem),
+      ].map((line) => printLine(worksheet, line, source, noteNumber)),
     }),
   }));
   const lines = sections.flatMap((section) => section.lines ?? []);
@@ -106,10 +107,17 @@ export function printDocument(worksheet: Worksheet, source: PrintSource): PrintD
   };
 }
 
-/** An item as a line to print: what it is called, and its summary in the place of an entry. */
-function lineOfItem({ line, symbol, label, summary, isOff }: ItemRow): Line {
-  return { ...line, symbol, label: isOff ? `${label} (bypassed)` : label, entry: summary };
+/** An item as a line to print: what it is called and what its figure is of, and its summary in the place of an entry. */
+function lineOfItem({ line, symbol, label, summary, figureOf, isOff }: ItemRow): Line {
+  // On paper the heading of the section may be far away: a total says what it is of.
+  const name = label === 'Total' && line.label !== '' ? `Total: ${line.label}` : label;
+  const called = figureOf === undefined ? name : `${name === '' ? symbol : name}: ${figureOf}`;
+  return { ...line, symbol, label: isOff ? `${called} (bypassed)` : called, entry: summary };
 }
+
+/** A line of a pool that does not count says so. */
+const withItsSwitch = (line: Line): Line =>
+  line.off === true ? { ...line, label: `${line.label} (switched off)`.trim() } : line;
 
 function printLine(
   worksheet: Worksheet,

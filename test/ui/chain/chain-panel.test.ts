@@ -276,6 +276,9 @@ describe('findings', () => {
     await fireEvent.click(within(list).getByRole('button', { name: 'Accept' }));
     await settle();
     expect(chain().stages[0]?.accepted?.['noiseFigure']).toMatchObject([{ entry: '1 dB', reason: 'It is cooled.' }]);
+    // The form has gone, and the focus is on what can be done next.
+    expect(within(list).queryByRole('textbox')).toBeNull();
+    expect(document.activeElement?.textContent?.trim()).toBe('Withdraw');
     expect(cell('s1', 'noiseFigure').getAttribute('aria-invalid')).toBeNull();
   });
 

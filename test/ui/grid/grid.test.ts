@@ -113,6 +113,15 @@ describe('a small worksheet', () => {
     expect(focused().dataset['cell']).toBe('requirement');
   });
 
+  it('keeps the focus on a line that is moved', async () => {
+    const line = focused().closest('[data-row]')?.getAttribute('data-row');
+    expect(line).toMatch(/^line /);
+    for (const key of ['ArrowDown', 'ArrowUp']) {
+      await press(key, { altKey: true });
+      expect(focused().closest('[data-row]')?.getAttribute('data-row')).toBe(line);
+    }
+  });
+
   it('edits with F2, and Escape puts back what stood there', async () => {
     await press('ArrowRight');
     await press('ArrowRight');

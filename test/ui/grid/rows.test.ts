@@ -2,6 +2,7 @@
 import { describe, expect, it } from 'vitest';
 
 import { Evaluation, type LineFinding } from '../../../src/engine';
+import { cellsOf } from '../../../src/ui/grid/columns';
 import { rowsOf, type Row, type RowsInput } from '../../../src/ui/grid/rows';
 import { sheetOf } from '../../app/support';
 
@@ -111,5 +112,17 @@ describe('rows', () => {
         .map((row) => row.key)
         .sort(),
     ).toEqual([...keys].sort());
+  });
+
+  it('of findings on figures that a chain works out say that no answer can be kept', () => {
+    const stages = [{ id: 'a', symbol: 'amp', label: '', gain: '10 dB', inputCompression: '-50 dBm' }] as const;
+    const chain = { id: 'c', kind: 'chain', symbol: 'rx', title: '', signal: '-20 dBm', stages } as const;
+    const chains = { ...worksheet, sections: [chain] };
+    const evaluation = new Evaluation(chains);
+    const findings = evaluation.sheetFindings();
+    expect(findings.map(({ code }) => code)).toEqual(['stage-compressed']);
+    const row = rows({ worksheet: chains, evaluation, findings }).find(({ kind }) => kind === 'finding');
+    expect(row).toMatchObject({ answerable: false });
+    expect(row === undefined ? [] : cellsOf(row, [])).toEqual(['finding']);
   });
 });

@@ -221,6 +221,26 @@ describe('a table pasted', () => {
     expect(curveNow().x).toEqual(CURVE.x);
   });
 
+  it('gives a curve that has just been made its labels and units', async () => {
+    cleanup();
+    session = await stage('curve', {
+      ...CURVE,
+      x: { label: 'x', unit: '' },
+      y: { label: 'y', unit: 'dB' },
+      points: [],
+    });
+    await goTo(0, 0);
+    await paste('Angle (deg)\tGain (dBi)\n0\t32\n10\t31.6\n');
+    expect(curveNow()).toMatchObject({
+      x: { label: 'Angle', unit: 'deg' },
+      y: { label: 'Gain', unit: 'dBi' },
+      points: [
+        [0, 32],
+        [10, 31.6],
+      ],
+    });
+  });
+
   it('is taken while a figure is being typed too', async () => {
     await goTo(0, 0);
     await type('7');

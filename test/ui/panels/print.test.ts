@@ -50,6 +50,22 @@ describe('a chain on paper', () => {
     expect(lines).toContain('rx.gain: ');
   });
 
+  it('says what the figure of a stage is of', () => {
+    expect(printed.sections[0]?.lines?.[0]?.line.label).toBe('Amplifier: level');
+  });
+
+  it('says of a pool which lines are switched off, and of the total what it is of', () => {
+    const lines = [
+      { id: 'a', symbol: 'A', label: 'thermal', entry: '-100 dBm' },
+      { id: 'b', symbol: 'B', label: 'image', entry: '-90 dBm', off: true },
+    ];
+    const pool = { id: 'p', kind: 'pool', symbol: 'N_I', title: 'Noise', lines } as const;
+    const pools = new Evaluation({ ...worksheet, sections: [pool] });
+    const paper = printDocument(pools.worksheet, { ...source, items: (section) => itemRows(pools, section) });
+    const labels = paper.sections[0]?.lines?.map(({ line }) => line.label);
+    expect(labels).toEqual(['thermal', 'image (switched off)', 'Total: Noise']);
+  });
+
   it('has its levels once for cases in which they are alike', () => {
     expect(printed.levels.map(({ caseNames }) => caseNames)).toEqual([['First', 'Second']]);
     expect(printed.levels[0]?.diagram.points.map(({ wanted }) => wanted?.value)).toEqual([-90, -75]);
