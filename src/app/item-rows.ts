@@ -39,11 +39,19 @@ export function itemRows(evaluation: Evaluation, section: Section): readonly Ite
   return isCurveSection(section) ? curveRows(evaluation, section) : [];
 }
 
+/** How a pool's lines add: as powers, signal ratios by their reciprocals, temperatures as they are. */
+export function poolRule(evaluation: Evaluation, sectionId: string): string {
+  const [first] = evaluation.worksheet.cases;
+  const { figure, kind } = evaluation.reading(poolTotalId(sectionId), first?.id ?? '');
+  if (kind?.kind === 'signal ratio') return 'adds by reciprocals';
+  return figure.state === 'value' && figure.unit.form === 'linear' ? 'adds up' : 'adds as power';
+}
+
 function poolRows(evaluation: Evaluation, sectionId: string): ItemRow[] {
   const line = evaluation.line(poolTotalId(sectionId));
   return line === undefined
     ? []
-    : [{ line, symbol: line.symbol, label: 'Total', summary: 'adds as power', isOff: false }];
+    : [{ line, symbol: line.symbol, label: 'Total', summary: poolRule(evaluation, sectionId), isOff: false }];
 }
 
 /** Figures that tell most of a stage, best first, and what they are called in a narrow column. */
