@@ -25,7 +25,7 @@ import {
   type Travel,
   type Worksheet,
 } from '../worksheet';
-import { answerEdit } from './answers';
+import { answerEdit, canAnswer } from './answers';
 import { repairInChain } from './chain-findings';
 import { Announcer } from './announcer.svelte';
 import type { FindingCounts } from './finding-counts';
@@ -37,7 +37,7 @@ import type { Settings } from './settings.svelte';
 import { Sheet } from './sheet.svelte';
 
 /** What the side panel shows. */
-export type Panel = 'working' | 'findings' | 'none';
+export type Panel = 'working' | 'findings' | 'analysis' | 'none';
 
 /** The dialogs of the page; one at a time is open. */
 export type DialogName = 'worksheets' | 'about' | 'functions' | 'keys' | 'paste' | 'accept' | 'import';
@@ -213,6 +213,10 @@ export class Session {
 
   /** Opens the dialog in which a finding is accepted with a reason. */
   askToAccept(finding: LineFinding): void {
+    if (!canAnswer(this.worksheet, this.evaluation, finding.lineId)) {
+      this.announce('This finding is on a figure that is worked out, and goes when the figure changes.');
+      return;
+    }
     this.findingToAccept = finding;
     this.dialog = 'accept';
   }

@@ -11,7 +11,7 @@ export type Theme = 'system' | 'light' | 'dark';
 export type ColumnChoice = 'auto' | 'shown' | 'hidden';
 
 /** Columns that can be shown and hidden. */
-export type OptionalColumn = 'requirement' | 'source' | 'note';
+export type OptionalColumn = 'requirement' | 'tolerance' | 'source' | 'note';
 
 const KEY = 'page';
 const THEMES: readonly Theme[] = ['system', 'light', 'dark'];
@@ -23,6 +23,7 @@ export class Settings {
   #showLinear = $state(false);
   #columns = $state.raw<Readonly<Record<OptionalColumn, ColumnChoice>>>({
     requirement: 'shown',
+    tolerance: 'auto',
     source: 'auto',
     note: 'auto',
   });
@@ -85,7 +86,12 @@ export class Settings {
     if (typeof columns !== 'object' || columns === null) return;
     const choice = (column: OptionalColumn): ColumnChoice =>
       CHOICES.find((one) => one === (columns as Readonly<Record<string, unknown>>)[column]) ?? this.#columns[column];
-    this.#columns = { requirement: choice('requirement'), source: choice('source'), note: choice('note') };
+    this.#columns = {
+      requirement: choice('requirement'),
+      tolerance: choice('tolerance'),
+      source: choice('source'),
+      note: choice('note'),
+    };
   }
 
   #keep(): void {

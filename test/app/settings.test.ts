@@ -29,7 +29,7 @@ describe('settings', () => {
     expect(written[2]).toEqual({
       theme: 'dark',
       showLinear: true,
-      columns: { requirement: 'shown', source: 'auto', note: 'hidden' },
+      columns: { requirement: 'shown', tolerance: 'auto', source: 'auto', note: 'hidden' },
       lastWorksheetId: null,
     });
   });
@@ -40,7 +40,7 @@ describe('settings', () => {
       memory({ theme: 'light', showLinear: true, lastWorksheetId: 'x', columns: { note: 'shown' } }).store,
     );
     expect([settings.theme, settings.showLinear, settings.lastWorksheetId]).toEqual(['light', true, 'x']);
-    expect(settings.columns).toEqual({ requirement: 'shown', source: 'auto', note: 'shown' });
+    expect(settings.columns).toEqual({ requirement: 'shown', tolerance: 'auto', source: 'auto', note: 'shown' });
   });
 
   it.each([
@@ -54,7 +54,7 @@ describe('settings', () => {
     const settings = new Settings();
     await settings.readFrom(memory(kept).store);
     expect([settings.theme, settings.showLinear, settings.lastWorksheetId]).toEqual(['system', false, null]);
-    expect(settings.columns).toEqual({ requirement: 'shown', source: 'auto', note: 'auto' });
+    expect(settings.columns).toEqual({ requirement: 'shown', tolerance: 'auto', source: 'auto', note: 'auto' });
   });
 
   it('hold without a store that answers', async () => {

@@ -54,11 +54,17 @@ const OTHERS = new Set([
   '+0.3/-0.8 dB triangular',
   'fav 0.5 dB adv 1 dB',
   '±2 %',
+  '±1 dB 2σ',
+  '±1.5 dB normal 3σ',
+  '±0.5 dB group supply',
   // Bounds of an option, and what names a stream of random numbers.
   '--between A B',
   'line <id>',
   'group <name>',
   'exact: false',
+  // A fault of a run of trials, and the policy that names the workers' address.
+  'worker-died',
+  'levelwright-worker',
   // What the grammar refuses by itself, and what the scanner writes for it.
   '.5',
   '20 MHz',

@@ -1,9 +1,10 @@
 /**
  * What the cells of lines hold as text, and the edits that typing there makes.
- * Holds: an entry is kept as typed, also when it cannot be read; only symbols and requirements may be refused, with a sentence.
+ * Holds: an entry is kept as typed, also when it cannot be read; only symbols, requirements and tolerances may be refused, with a sentence.
  */
 import { fail, ok, type Result } from '../../base';
 import { readRequirement, writeRequirement } from '../../app/requirement-text';
+import { editedTolerance, writeTolerance } from '../../app/tolerance-text';
 import {
   entryIn,
   insertLine,
@@ -62,6 +63,7 @@ export function textIn(worksheet: Worksheet, row: Row, cell: CellName): string {
   const { line } = row;
   if (holdsEntry(cell)) return entryIn(line, caseTyped(worksheet, cell));
   if (cell === 'requirement') return writeRequirement(line.requirement);
+  if (cell === 'tolerance') return writeTolerance(line.tolerance);
   return plainText(line, cell);
 }
 
@@ -80,6 +82,10 @@ export function refusal(worksheet: Worksheet, row: Row, cell: CellName, text: st
   }
   if (cell === 'requirement' && readRequirement(text) === null)
     return 'A requirement is a comparison and a bound, for example ≥ 3 dB or ≤ -100 dBm.';
+  if (cell === 'tolerance' && row.kind === 'line') {
+    const read = editedTolerance(row.line.tolerance, text);
+    return read.ok ? undefined : read.fault;
+  }
   return undefined;
 }
 
@@ -114,6 +120,10 @@ function lineEdit(worksheet: Worksheet, line: Line, cell: CellName, text: string
       return setLineField(worksheet, line.id, cell, text.trim());
     case 'requirement':
       return setLineField(worksheet, line.id, 'requirement', readRequirement(text) ?? undefined);
+    case 'tolerance': {
+      const read = editedTolerance(line.tolerance, text);
+      return setLineField(worksheet, line.id, 'tolerance', read.ok ? read.value : line.tolerance);
+    }
     default:
       return { label: 'Nothing', changes: [] };
   }

@@ -22,7 +22,17 @@ export function caseOfColumn(column: string): string | undefined {
 }
 
 /** Least widths in CSS px; text columns share what is left. */
-const ROOMY = { margin: 66, symbol: 92, label: 146, entry: 176, value: 126, requirement: 136, source: 130, note: 130 };
+const ROOMY = {
+  margin: 66,
+  symbol: 92,
+  label: 146,
+  entry: 176,
+  value: 126,
+  requirement: 136,
+  tolerance: 136,
+  source: 130,
+  note: 130,
+};
 
 /** The same where there are so many cases that the account would have to be scrolled sideways. */
 const TIGHT = { ...ROOMY, label: 114, entry: 140 };
@@ -31,6 +41,9 @@ type Widths = typeof ROOMY;
 
 /** Below this width of the whole page, a line is set in two rows. */
 export const NARROW_WIDTH = 700;
+
+/** Columns that can be left out, from left to right. */
+const OPTIONAL: readonly OptionalColumn[] = ['requirement', 'tolerance', 'source', 'note'];
 
 /** What the columns depend on. */
 export interface ColumnsInput {
@@ -48,13 +61,14 @@ export function columnsOf({ worksheet, choices, width, narrow, caseId }: Columns
   if (narrow) return ['margin', 'symbol', 'label', caseColumn(caseId), 'entry', 'requirement'];
   const fixed: Column[] = ['margin', 'symbol', 'label', 'entry', ...worksheet.cases.map((one) => caseColumn(one.id))];
   let room = width - totalOf(fixed, ROOMY);
-  const optional: OptionalColumn[] = ['requirement', 'source', 'note'];
-  const shown = optional.filter((column) => {
+  // Room goes first to what most budgets have; the tolerance stands beside the requirement, if at all.
+  const inNeed: OptionalColumn[] = ['requirement', 'source', 'note', 'tolerance'];
+  const shown = inNeed.filter((column) => {
     if (choices[column] === 'hidden') return false;
     room -= ROOMY[column];
     return choices[column] === 'shown' || room >= 60;
   });
-  return [...fixed, ...shown];
+  return [...fixed, ...OPTIONAL.filter((column) => shown.includes(column))];
 }
 
 function widthOf(column: Column, widths: Widths): number {
@@ -102,7 +116,11 @@ export function cellsOf(row: Row, columns: readonly Column[]): readonly CellName
       return ['symbol', 'label', 'entry'];
     case 'finding': {
       const repairs = row.finding.repairs.map((_, i) => `repair ${i}` as const);
-      return ['finding', ...repairs, ...(row.finding.severity === 'error' ? [] : (['accept'] as const))];
+      return [
+        'finding',
+        ...repairs,
+        ...(row.finding.severity === 'error' || row.answerable === false ? [] : (['accept'] as const)),
+      ];
     }
   }
 }
@@ -133,6 +151,7 @@ const NAMES: Readonly<Partial<Record<CellName, string>>> = {
   label: 'Label',
   entry: 'Entry',
   requirement: 'Requirement',
+  tolerance: 'Tolerance',
   source: 'Source',
   note: 'Note',
   title: 'Section',

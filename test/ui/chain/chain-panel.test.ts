@@ -196,6 +196,23 @@ describe('the line-up', () => {
   });
 });
 
+it('keeps the tolerance of the value that has the cursor', async () => {
+  await show();
+  const [first] = chain().stages;
+  if (first === undefined) throw new Error('there is a stage');
+  cell(first.id, 'symbol').focus();
+  await settle();
+  expect(screen.queryByRole('textbox', { name: /^Tolerance/ })).toBeNull();
+  await press('ArrowRight');
+  await press('ArrowRight');
+  screen.getByRole('textbox', { name: `Tolerance of the gain of ${first.symbol}` }).focus();
+  type('+0.2/-0.4 dB');
+  await press('Enter');
+  expect(chain().stages[0]?.tolerance).toEqual({ gain: { above: '0.2 dB', below: '0.4 dB' } });
+  session.undo();
+  expect(chain().stages[0]?.tolerance).toBeUndefined();
+});
+
 it('keeps the source of the stage that has the cursor', async () => {
   await show();
   const [first] = chain().stages;
@@ -278,7 +295,7 @@ describe('findings', () => {
     expect(chain().stages[0]?.accepted?.['noiseFigure']).toMatchObject([{ entry: '1 dB', reason: 'It is cooled.' }]);
     // The form has gone, and the focus is on what can be done next.
     expect(within(list).queryByRole('textbox')).toBeNull();
-    expect(document.activeElement?.textContent?.trim()).toBe('Withdraw');
+    expect(document.activeElement?.textContent.trim()).toBe('Withdraw');
     expect(cell('s1', 'noiseFigure').getAttribute('aria-invalid')).toBeNull();
   });
 

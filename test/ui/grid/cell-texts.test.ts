@@ -81,6 +81,11 @@ describe('typing', () => {
     expect(lineAfter('requirement', ' ').requirement).toBeUndefined();
   });
 
+  it('a tolerance or nothing', () => {
+    expect(lineAfter('tolerance', '+0.3/-0.8 dB').tolerance).toEqual({ above: '0.3 dB', below: '0.8 dB' });
+    expect(lineAfter('tolerance', ' ').tolerance).toBeUndefined();
+  });
+
   it('in the place for a line makes one', () => {
     const [section] = typed(rowOf('add'), 'label', ' Feeder ').sections;
     expect(section?.kind === 'lines' && 'lines' in section && section.lines.map((one) => one.label)).toEqual([
@@ -102,6 +107,7 @@ describe('refusals', () => {
     ['symbol', '2x', /begins with a letter/],
     ['symbol', 'k_B', /constant/],
     ['requirement', '>=', /for example/],
+    ['tolerance', '±', /for example/],
   ] as const)('%s: %s', (cell, text, sentence) => {
     expect(refusal(worksheet, line, cell, text)).toMatch(sentence);
     expect(editOf(worksheet, line, cell, text)).toMatchObject({ ok: false });
@@ -113,6 +119,7 @@ describe('refusals', () => {
     ['symbol', 'λ_2'],
     ['entry', '((('],
     ['requirement', ''],
+    ['tolerance', ''],
   ] as const)('none for %s: “%s”', (cell, text) => {
     expect(refusal(worksheet, line, cell, text)).toBeUndefined();
   });

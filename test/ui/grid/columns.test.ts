@@ -19,7 +19,7 @@ import { sheet } from '../../app/support';
 const worksheet = sheet([['P', 'Power', '14 dBm']]);
 const input: ColumnsInput = {
   worksheet,
-  choices: { requirement: 'shown', source: 'auto', note: 'auto' },
+  choices: { requirement: 'shown', tolerance: 'auto', source: 'auto', note: 'auto' },
   width: 930,
   narrow: false,
   caseId: 'storm',
@@ -29,8 +29,13 @@ const base = ['margin', 'symbol', 'label', 'entry', 'case calm', 'case storm'];
 describe('columns', () => {
   it.each([
     [{}, [...base, 'requirement']],
-    [{ width: 1500 }, [...base, 'requirement', 'source', 'note']],
-    [{ choices: { requirement: 'hidden', source: 'shown', note: 'hidden' } }, [...base, 'source']],
+    [{ width: 1300 }, [...base, 'requirement', 'source', 'note']],
+    [{ width: 1500 }, [...base, 'requirement', 'tolerance', 'source', 'note']],
+    [{ choices: { requirement: 'hidden', tolerance: 'hidden', source: 'shown', note: 'hidden' } }, [...base, 'source']],
+    [
+      { choices: { requirement: 'hidden', tolerance: 'shown', source: 'hidden', note: 'hidden' } },
+      [...base, 'tolerance'],
+    ],
     [{ narrow: true, width: 390 }, ['margin', 'symbol', 'label', 'case storm', 'entry', 'requirement']],
   ] as const)('%o', (more, columns) => {
     expect(columnsOf({ ...input, ...more })).toEqual(columns);
