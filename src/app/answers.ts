@@ -2,6 +2,7 @@
 import type { Evaluation } from '../engine';
 import {
   acceptFinding,
+  answerChainFinding,
   answerStageFinding,
   entryIn,
   findLine,
@@ -29,19 +30,18 @@ export function answerEdit(worksheet: Worksheet, evaluation: Evaluation, lineId:
   }
   const { sectionId, stageId, field } = evaluation.originOf(lineId) ?? {};
   const line = evaluation.line(lineId);
-  if (sectionId === undefined || stageId === undefined || field === undefined || line === undefined)
+  if (sectionId === undefined || line === undefined || !canAnswer(worksheet, evaluation, lineId))
     return { label: 'Nothing', changes: [] };
   const entry = entryIn(line, caseId);
-  return answerStageFinding(
-    worksheet,
-    sectionId,
-    stageId,
-    field,
-    reason === undefined ? { code, entry } : { code, entry, reason },
-  );
+  const kept = reason === undefined ? { code, entry } : { code, entry, reason };
+  return stageId === undefined || field === undefined
+    ? answerChainFinding(worksheet, sectionId, kept)
+    : answerStageFinding(worksheet, sectionId, stageId, field, kept);
 }
 
-/** True when an answer to the finding can be kept. */
+/** True when an answer to the finding can be kept: on a line, on a value of a stage, on what a chain's figures say. */
 export function canAnswer(worksheet: Worksheet, evaluation: Evaluation, lineId: string): boolean {
-  return findLine(worksheet, lineId) !== undefined || evaluation.originOf(lineId)?.field !== undefined;
+  if (findLine(worksheet, lineId) !== undefined) return true;
+  const node = evaluation.node(lineId, worksheet.cases[0]?.id ?? '');
+  return node?.item.origin?.field !== undefined || node?.item.derived?.isCheck === true;
 }

@@ -4,7 +4,7 @@
  */
 import type { Plan, Plane } from '../formula';
 import type { QuantityKind, Side } from '../quantity';
-import type { ChainInput, ChainSection, Line, Stage, StageField } from '../worksheet';
+import { basisOf, type ChainInput, type ChainSection, type Line, type Stage, type StageField } from '../worksheet';
 import { STAGE_PARTS } from './chain-parts';
 import { itemId, type Criterion, type Derived, type Item } from './item';
 
@@ -16,7 +16,6 @@ export interface About {
   readonly quantity?: QuantityKind;
   readonly side?: Side;
   readonly stage?: Stage;
-  readonly criterion?: Criterion;
   /** The place at which it holds. */
   readonly plane?: Plane;
   readonly formula?: string;
@@ -121,7 +120,7 @@ export class ChainBuilder {
 
   /** A finding on figures of the chain; its item is no figure of the account. */
   check(
-    about: { readonly stage: Stage; readonly field: StageField } | undefined,
+    about: { readonly stage: Stage; readonly field?: StageField } | undefined,
     inputs: readonly (Ref | undefined)[],
     compute: Compute,
     criterion: Criterion,
@@ -132,11 +131,12 @@ export class ChainBuilder {
     const base = this.line(
       '',
       stage === undefined ? this.name : nameOf(stage),
-      field === undefined ? '' : (stage?.[field]?.trim() ?? ''),
+      // An answer to the finding holds while this text is what it was.
+      field === undefined ? basisOf(this.chain, stage) : (stage?.[field]?.trim() ?? ''),
       '1',
       itemId('check', stage?.id ?? '', field ?? '', criterion.code),
     );
-    const accepted = field === undefined ? undefined : stage?.accepted?.[field];
+    const accepted = field === undefined ? this.chain.accepted : stage?.accepted?.[field];
     this.items.push({
       line: accepted === undefined ? base : { ...base, accepted },
       origin: {
@@ -174,7 +174,7 @@ export class ChainBuilder {
     label: string,
     unit: string,
     inputs: readonly (Ref | undefined)[],
-    { quantity, side, stage, criterion, plane, formula }: About,
+    { quantity, side, stage, plane, formula }: About,
     plan: (plans: readonly Plan[]) => Plan,
   ): Ref | undefined {
     const given = inputs.filter((input) => input !== undefined);
@@ -193,7 +193,6 @@ export class ChainBuilder {
       origin: { sectionId: this.chain.id, ...(stage === undefined ? {} : { stageId: stage.id }) },
       derived: {
         ...derivedOf(unit, given, { ...(quantity && { quantity }), ...(side && { side }) }, plan),
-        ...(criterion === undefined ? {} : { criterion }),
         ...(plane === undefined ? {} : { plane }),
         ...(formula === undefined ? {} : { formula }),
       },

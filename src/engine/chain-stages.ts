@@ -282,26 +282,24 @@ function addHeadroom(builder: ChainBuilder, { stage, compression }: Own, ahead: 
   const interferer = ahead.interfererBehind ?? ahead.interferer;
   const entering = [signal, interferer].filter((level) => level !== undefined);
   if (entering.length === 0) return;
-  builder.derive(
+  const headroom = builder.derive(
     'headroom',
     'headroom to compression',
     'dB',
     [compression, ...entering],
     (limit = NaN, ...levels) => limit - powerSum(levels),
-    {
-      stage,
-      criterion: {
-        code: 'stage-compressed',
-        facts: { stage: nameOf(stage) },
-        test: (headroom) => headroom < 0,
-        late: (figures) => ({
-          limit: decibels(figures[0]),
-          level: decibels(powerSum(figures.slice(1, -1))),
-          excess: decibels(-(figures[figures.length - 1] ?? NaN)),
-        }),
-      },
-    },
+    { stage },
   );
+  builder.check({ stage }, [compression, ...entering, headroom], (...figures) => figures.at(-1) ?? NaN, {
+    code: 'stage-compressed',
+    facts: { stage: nameOf(stage) },
+    test: (left) => left < 0,
+    late: (figures) => ({
+      limit: decibels(figures[0]),
+      level: decibels(powerSum(figures.slice(1, -2))),
+      excess: decibels(-(figures.at(-1) ?? NaN)),
+    }),
+  });
 }
 
 /** Each stage's share of the chain's noise and of its third-order distortion. */

@@ -154,7 +154,7 @@ export class Node {
 
 /** Nobody types a pool's generated entry, which may be as long as the pool. */
 const readItem = (item: Item, entry: string): ReadEntry =>
-  readEntry(entry, item.isGenerated === true ? Infinity : undefined);
+  item.derived !== undefined ? { form: 'empty' } : readEntry(entry, item.isGenerated === true ? Infinity : undefined);
 
 const UNCHECKED: LineResult = {
   isFitted: false,

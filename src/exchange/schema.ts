@@ -114,6 +114,7 @@ const chain = v.looseObject({
   ...symbol,
   ...v.entriesFromList(CHAIN_INPUTS, optionalText),
   intercept: v.exactOptional(v.picklist(INTERCEPT_ADDITIONS, listed(INTERCEPT_ADDITIONS))),
+  accepted: v.exactOptional(accepted),
   stages: list(stage),
 });
 

@@ -44,7 +44,13 @@ function sectionContent(section: Section): object {
   if (isOtherSection(section)) return section.content;
   const ordered = inOrder(section, sectionKeys(section));
   if (isLinesSection(section)) return { ...ordered, lines: section.lines.map(lineContent) };
-  return isChainSection(section) ? { ...ordered, stages: section.stages.map(stageContent) } : ordered;
+  if (!isChainSection(section)) return ordered;
+  const { accepted } = section;
+  return {
+    ...ordered,
+    ...(accepted && { accepted: accepted.map((one) => inOrder(one, ACCEPTED_KEYS)) }),
+    stages: section.stages.map(stageContent),
+  };
 }
 
 function stageContent(stage: Stage): object {

@@ -62,6 +62,8 @@ export interface ChainSection {
   /** The level of a single interferer at the input, and of each of two that make third-order products. */
   readonly interferer?: string;
   readonly intercept?: InterceptAddition;
+  /** Answers to findings on no single value; `entry` is what the finding rested on, as `basisOf` tells. */
+  readonly accepted?: readonly AcceptedFinding[];
   readonly stages: readonly Stage[];
 }
 
@@ -84,4 +86,12 @@ export function saysAnything(stage: Stage, field: StageField): boolean {
   return (
     stage.byCase !== undefined && Object.values(stage.byCase).some((values) => (values[field] ?? '').trim() !== '')
   );
+}
+
+/** What a finding on a stage, or without one on the whole chain, rests on, as a text that changes when any of it does. */
+export function basisOf(chain: ChainSection, stage?: Stage): string {
+  const ofStage = (one: Stage): string =>
+    JSON.stringify([one.id, one.off === true, STAGE_FIELDS.map((field) => one[field] ?? ''), one.byCase ?? {}]);
+  const inputs = CHAIN_INPUTS.map((input) => chain[input] ?? '');
+  return JSON.stringify(inputs) + (stage === undefined ? chain.stages.map(ofStage).join('') : ofStage(stage));
 }

@@ -188,6 +188,24 @@ export function setStageTolerance(
   return stagesEdit(`Change a tolerance of ${stageName(stage)}`, chain, withStage(chain, after));
 }
 
+/** Answers a finding on the chain, or on a stage as a whole, with a reason; or takes the answer back. */
+export function answerChainFinding(
+  worksheet: Worksheet,
+  sectionId: string,
+  answer: Pick<AcceptedFinding, 'code' | 'entry'> & { readonly reason?: string },
+): Edit {
+  const chain = chainOf(worksheet, sectionId);
+  const { code, entry, reason } = answer;
+  const others = (chain.accepted ?? []).filter((one) => one.code !== code || one.entry !== entry);
+  const accepted = reason === undefined ? others : [...others, { code, entry, reason }];
+  if (reason === undefined && others.length === (chain.accepted?.length ?? 0)) return edit('Nothing', chain, []);
+  return edit(
+    `${reason === undefined ? 'Take back an accepted finding' : 'Accept a finding'} on ${chain.symbol}`,
+    chain,
+    [{ kind: 'set-section', sectionId, field: 'accepted', value: accepted.length === 0 ? undefined : accepted }],
+  );
+}
+
 /** Sets a stage's label, source or note. */
 export function setStageText(
   worksheet: Worksheet,

@@ -10,7 +10,7 @@ export const WORKSHEET_KEYS = ['id', 'title', 'summary', 'cases', 'sections', 'r
 export const CASE_KEYS = ['id', 'name'] as const;
 const SECTION_KEYS = ['id', 'kind', 'title', 'lines'] as const;
 const POOL_KEYS = ['id', 'kind', 'symbol', 'title', 'unit', 'requirement', 'lines'] as const;
-const CHAIN_KEYS = ['id', 'kind', 'symbol', 'title', ...CHAIN_INPUTS, 'intercept', 'stages'] as const;
+const CHAIN_KEYS = ['id', 'kind', 'symbol', 'title', ...CHAIN_INPUTS, 'intercept', 'accepted', 'stages'] as const;
 const CURVE_KEYS = ['id', 'kind', 'symbol', 'title', 'x', 'y', 'interpolation', 'logarithmic', 'points'] as const;
 export const STAGE_KEYS = [
   'id',
