@@ -60,7 +60,7 @@ export class Session {
   readonly announcer = new Announcer();
   readonly settings: Settings;
   readonly keeping: Keeping;
-  readonly library: Library;
+  readonly worksheets: Library;
   readonly opening: Opening;
 
   panel = $state<Panel>('working');
@@ -86,7 +86,7 @@ export class Session {
   constructor(settings: Settings, opened: Result<Store, PlainFault>) {
     this.settings = settings;
     this.keeping = new Keeping(opened);
-    this.library = new Library(this.keeping.store);
+    this.worksheets = new Library(this.keeping.store);
     this.opening = new Opening({
       keeping: this.keeping,
       settings,

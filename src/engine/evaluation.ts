@@ -4,25 +4,22 @@
  * finding for finding. It is pure: no page, no clock, no storage.
  */
 import { present } from '../base';
-import { checkLine, type Checked, type Scope, type SymbolInfo } from '../formula';
+import type { Checked, Scope } from '../formula';
 import type { Change, Line, Worksheet } from '../worksheet';
-import { buildGraph, entryOf, inputsOf, nodeIn, type Graph } from './graph';
+import { buildGraph, entryOf, nodeIn, type Graph } from './graph';
 import { describeRemark, remarksOf } from './describe';
-import { neighboursOf, reachOf, restsUpon } from './neighbours';
+import { neighboursOf, reachOf } from './neighbours';
 import { itemsOf, type Item, type ItemPlace } from './item';
 import { Node } from './node';
 import type { Pass } from './pass';
-import { Figuring, settled } from './recompute';
+import { previewAt, tryEntry, type Preview } from './preview';
+import { Figuring } from './recompute';
+import { scopeOf } from './scope';
+import { insertByRank, sameSymbols, standing, touchDerived } from './staleness';
 import { gatherFindings } from './gather';
 import type { Figure, LineFinding, Reading } from './reading';
 import { readingOf, figureOfNode } from './state';
 import type { Finding } from '../findings';
-
-/** An entry tried out in a line's place without being committed. */
-export interface Preview {
-  readonly reading: Reading;
-  readonly findings: readonly Finding[];
-}
 
 export class Evaluation {
   private current: Worksheet;
@@ -168,21 +165,7 @@ export class Evaluation {
   }
 
   private scopeOf(caseId: string | null): Scope {
-    const { graph } = this;
-    const infoOf = ({ line }: Item): SymbolInfo | undefined => nodeIn(graph, line.id, caseId)?.info();
-    return {
-      find: (symbol) => {
-        const item = graph.holders.get(symbol);
-        return item === undefined ? undefined : (infoOf(item) ?? 'withheld');
-      },
-      *all() {
-        for (const item of graph.holders.values()) {
-          const info = item.origin === undefined ? infoOf(item) : undefined;
-          if (info !== undefined) yield info;
-        }
-      },
-      names: () => graph.holders.keys(),
-    };
+    return scopeOf(this.graph, caseId);
   }
 
   /** Recomputes everything; for tests and measurements. Returns how many nodes were computed. */
@@ -263,7 +246,8 @@ export class Evaluation {
   private findingsIn(lineId: string, caseId: string): readonly Finding[] {
     const node = nodeIn(this.graph, lineId, caseId);
     if (node === undefined) return [];
-    const tryOut = (entry: string, unit?: string): Reading => this.tryOut(node, caseId, entry, unit).reading;
+    const tryOut = (entry: string, unit?: string): Reading =>
+      tryEntry(this.graph, this.figuring, node, caseId, entry, unit).reading;
     return remarksOf(node, this.figuring).map((remark) =>
       describeRemark(remark, node, this.figuring, tryOut, this.scopeOf(node.caseId)),
     );
@@ -273,7 +257,7 @@ export class Evaluation {
   preview(lineId: string, caseId: string, entry: string): Preview {
     const node = nodeIn(this.graph, lineId, caseId);
     if (node === undefined) return { reading: { figure: { state: 'empty' } }, findings: [] };
-    return this.previewAt(node, caseId, entry);
+    return previewAt(this.graph, this.figuring, node, caseId, entry);
   }
 
   /** An entry in a case as a line that is not there yet would give it: no line rests on it, so it closes no loop. */
@@ -281,41 +265,7 @@ export class Evaluation {
     const node = new Node(-1, { line: { id: '', symbol: '', label: '', entry } }, null, entry);
     // After all others: nothing is searched for a way back to it.
     node.rank = Infinity;
-    return this.previewAt(node, caseId, entry);
-  }
-
-  private previewAt(node: Node, caseId: string, entry: string): Preview {
-    const tried = this.tryOut(node, caseId, entry);
-    const tryOut = (other: string, unit?: string): Reading => this.tryOut(node, caseId, other, unit).reading;
-    return {
-      reading: tried.reading,
-      findings: remarksOf(tried.node, this.figuring, tried.value).map((remark) =>
-        describeRemark(remark, tried.node, this.figuring, tryOut, this.scopeOf(node.caseId), tried.value),
-      ),
-    };
-  }
-
-  /** Evaluates another entry (or unit) in a node's place. It cannot see itself, so a loop of one is found here too. */
-  private tryOut(
-    node: Node,
-    caseId: string,
-    entry: string,
-    unit?: string,
-  ): { reading: Reading; node: Node; value: number } {
-    const scope = this.scopeOf(caseId);
-    const line: Line = {
-      ...node.line,
-      ...(node.caseId === null ? { entry } : {}),
-      ...(unit === undefined ? {} : { unit }),
-    };
-    const trial = node.trial(line, entry, caseId);
-    trial.inputs = inputsOf(this.graph, trial);
-    const usesItself = trial.inputs.includes(node) || trial.inputs.some((input) => restsUpon(input, node));
-    trial.barred = usesItself ? { code: 'loop' } : node.barred?.code === 'loop' ? undefined : node.barred;
-    trial.result = checkLine(trial.spec(), scope, trial.read);
-    const value =
-      trial.barred === undefined ? settled(trial.compile(this.figuring)(), trial.result.unit?.form === 'decibel') : NaN;
-    return { reading: readingOf(trial, line, this.figuring, value), node: trial, value };
+    return previewAt(this.graph, this.figuring, node, caseId, entry);
   }
 
   /** Lines that a line uses directly, in any case. */
@@ -372,36 +322,4 @@ export class Evaluation {
       .filter(({ line, origin, curve }) => origin === undefined || (line.symbol !== '' && curve === undefined))
       .map(({ line }) => line);
   }
-}
-
-/** What decides whether derived figures above a node are missing or wait: it can change while no figure does. */
-const standing = ({ result, barred }: Node): string =>
-  barred !== undefined || result.isInError ? 'at fault' : result.isEmpty ? 'empty' : 'there';
-
-/** Adds the derived items that rest on a node, through derived items alone. */
-function touchDerived(node: Node, touched: Set<string>): void {
-  const seen = new Set<Node>();
-  const open = [node];
-  for (let next = open.pop(); next !== undefined; next = open.pop())
-    for (const user of next.users) {
-      if (!user.isDerived || seen.has(user)) continue;
-      seen.add(user);
-      touched.add(user.lineId);
-      open.push(user);
-    }
-}
-
-const sameSymbols = (a: readonly string[], b: readonly string[]): boolean =>
-  a.length === b.length && a.every((symbol, index) => symbol === b[index]);
-
-/** Keeps a worklist in rank order, from `from` on. */
-function insertByRank(open: Node[], node: Node, from: number): void {
-  let low = from;
-  let high = open.length;
-  while (low < high) {
-    const middle = (low + high) >> 1;
-    if ((open[middle] as Node).rank <= node.rank) low = middle + 1;
-    else high = middle;
-  }
-  open.splice(low, 0, node);
 }

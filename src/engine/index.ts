@@ -4,7 +4,8 @@
  */
 export * from './reading';
 export * from './pass';
-export { Evaluation, type Preview } from './evaluation';
+export { Evaluation } from './evaluation';
+export type { Preview } from './preview';
 export type { Node } from './node';
 export type { Item, ItemPlace } from './item';
 export { itemId, itemsOf, stageItemId } from './item';
