@@ -5,6 +5,7 @@
  * are wide is left out and told in words.
  */
 import type { Spectrum } from '../../jobs';
+import type { AxesLayout } from '../plots/axes';
 import { boxesMeet, textWidth, type Box } from '../plots/boxes';
 import { niceTicks, writeTick, type Ticks } from '../plots/ticks';
 
@@ -46,14 +47,7 @@ export interface PlacedMark extends HistogramMark {
   readonly box: Box;
 }
 
-export interface HistogramLayout {
-  readonly width: number;
-  readonly height: number;
-  readonly plot: Box;
-  readonly xTicks: readonly { readonly x: number; readonly text: string }[];
-  readonly yTicks: readonly { readonly y: number; readonly text: string }[];
-  readonly xTitle: { readonly x: number; readonly y: number; readonly text: string };
-  readonly yTitle: { readonly x: number; readonly y: number; readonly text: string };
+export interface HistogramLayout extends AxesLayout {
   readonly bars: readonly Bar[];
   readonly curve: readonly { readonly x: number; readonly y: number }[];
   readonly marks: readonly PlacedMark[];

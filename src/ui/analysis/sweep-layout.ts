@@ -5,6 +5,7 @@
  */
 import type { SweepView, SweptCurve } from '../../app/analysis-sweep';
 import { figureWords, nameOf } from '../../app/analysis-names';
+import type { AxesLayout } from '../plots/axes';
 import { boxAround, Room, shortened, spreadApart, textWidth, type Box } from '../plots/boxes';
 import { writeFigureAt } from '../plots/curve-layout';
 import { logarithmicTicks, niceTicks, writeTick, type Ticks } from '../plots/ticks';
@@ -20,14 +21,7 @@ const STROKE_PX = 6;
 /** Strokes by which curves are told apart without colour. */
 const DASHES = ['', '7 4', '2 3', '10 3 2 3', '1 5', '14 4'] as const;
 
-export interface SweepLayout {
-  readonly width: number;
-  readonly height: number;
-  readonly plot: Box;
-  readonly xTicks: readonly { readonly x: number; readonly text: string }[];
-  readonly yTicks: readonly { readonly y: number; readonly text: string }[];
-  readonly xTitle: { readonly x: number; readonly y: number; readonly text: string };
-  readonly yTitle: { readonly x: number; readonly y: number; readonly text: string };
+export interface SweepLayout extends AxesLayout {
   readonly curves: readonly {
     readonly caseId: string;
     readonly path: string;

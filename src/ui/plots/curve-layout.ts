@@ -6,6 +6,7 @@
 import { makeCurve, writeSignificant, type Curve } from '../../quantity';
 import type { CurveUse } from '../../review';
 import type { CurveSection } from '../../worksheet';
+import type { AxesLayout } from './axes';
 import { boxAround, Room, shortened, textWidth, type Box } from './boxes';
 import { logarithmicTicks, niceTicks, writeTick, type Ticks } from './ticks';
 
@@ -29,14 +30,7 @@ export interface CurveUseLayout {
   readonly description: string;
 }
 
-export interface CurveLayout {
-  readonly width: number;
-  readonly height: number;
-  readonly plot: Box;
-  readonly xTicks: readonly { readonly x: number; readonly text: string }[];
-  readonly yTicks: readonly { readonly y: number; readonly text: string }[];
-  readonly xTitle: { readonly x: number; readonly y: number; readonly text: string };
-  readonly yTitle: { readonly x: number; readonly y: number; readonly text: string };
+export interface CurveLayout extends AxesLayout {
   readonly line: readonly { readonly x: number; readonly y: number }[];
   readonly points: readonly { readonly x: number; readonly y: number }[];
   readonly uses: readonly CurveUseLayout[];
